@@ -1,0 +1,5 @@
+/** Standing, limits, decisions, allocations and notices. */
+@NullMarked
+package org.merewarden.advice;
+
+import org.jspecify.annotations.NullMarked;
