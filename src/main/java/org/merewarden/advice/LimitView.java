@@ -1,0 +1,39 @@
+package org.merewarden.advice;
+
+import java.time.Instant;
+import java.time.LocalDate;
+import org.jspecify.annotations.Nullable;
+
+/**
+ * An issued limit. {@code amountTonnes} is total removals; null unless the kind is catch.
+ *
+ * @param id also the number of its notice
+ * @param kind catch, effort or measures only
+ * @param amount in {@code unit}: t for a catch limit, net-nights or the like for effort
+ * @param setAsidesTonnes subsistence, angling, research and others together
+ * @param toBeLoggedTonnes (removals − set-asides) × expected reported fraction; null unless the kind is catch
+ */
+public record LimitView(
+        long id,
+        long stockId,
+        int season,
+        String kind,
+        @Nullable Double amount,
+        String unit,
+        double setAsidesTonnes,
+        double reportedFraction,
+        @Nullable Double toBeLoggedTonnes,
+        LocalDate validFrom,
+        LocalDate validTo,
+        @Nullable String measures,
+        @Nullable String legalBasis,
+        @Nullable String objection,
+        String reason,
+        Instant issuedAt,
+        String issuedBy) {
+
+    /** Total removals allowed, t; null unless the kind is catch. */
+    public @Nullable Double amountTonnes() {
+        return kind.equals("catch") ? amount : null;
+    }
+}

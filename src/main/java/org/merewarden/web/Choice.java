@@ -1,0 +1,4 @@
+package org.merewarden.web;
+
+/** One option of a choice field. */
+public record Choice(String value, String label) {}
