@@ -1,0 +1,127 @@
+package org.merewarden.core.inference;
+
+import java.util.Arrays;
+
+/**
+ * Residuals of the observation-error model at (ln r, ln K).
+ *
+ * <pre>
+ *   B(first) = β K;   B(t+1) from {@link AnnualStep}
+ *   ln B(t, τ) = (1 − τ) ln B⁺(t) + τ ln B(t+1)
+ *   e_i = ln I_i − ln q_j − ln B(t_i, τ_i),   ln q_j = mean of ln I_i − ln B(t_i, τ_i) over series j
+ * </pre>
+ *
+ * <table>
+ * <caption>Symbols</caption>
+ * <tr><td>β</td><td>biomass at the start of the first season as a fraction of K, fixed</td></tr>
+ * <tr><td>τ</td><td>time of the season, 0 start … 1 end: biomass in between is the geometric interpolation</td></tr>
+ * <tr><td>I, q</td><td>index and its catchability (1 for absolute biomass), profiled out</td></tr>
+ * </table>
+ *
+ * <p>Source: Polacheck, Hilborn &amp; Punt 1993, Can. J. Fish. Aquat. Sci. 50: 2597–2607 (τ = 0). Edge case: where the
+ * removals exceed the biomass, the biomass is held above zero by a smooth floor at 0.1 % of K, and one more residual,
+ * the last, grows with what was lacking; it is 0 at any admissible fit. Confined to one thread; the residuals are
+ * computed without allocation.
+ */
+final class ObservationErrorModel implements LeastSquares.Residuals {
+    private static final double FLOOR = 0.001;
+    private static final double LACK_WEIGHT = 30;
+
+    private final SeasonSeries seasons;
+    private final IndexData data;
+    private final double startFraction;
+    private final double shape;
+    private final double[] logValue;
+    private final double[] biomass;
+    private final double[] afterEvents;
+    private final double[] logQ;
+    private final int[] perSeries;
+    private double lack;
+
+    ObservationErrorModel(SeasonSeries seasons, IndexData data, double startFraction, double shape) {
+        this.seasons = seasons;
+        this.data = data;
+        this.startFraction = startFraction;
+        this.shape = shape;
+        logValue = data.logValue().clone();
+        biomass = new double[seasons.seasons() + 1];
+        afterEvents = new double[seasons.seasons()];
+        logQ = new double[data.seriesNames().size()];
+        perSeries = new int[logQ.length];
+        for (int series : data.series()) {
+            if (series >= 0) {
+                perSeries[series]++;
+            }
+        }
+    }
+
+    @Override
+    public int count() {
+        return data.count() + 1;
+    }
+
+    @Override
+    public void at(double[] parameters, double[] residuals) {
+        run(Math.exp(parameters[0]), Math.exp(parameters[1]));
+        Arrays.fill(logQ, 0);
+        for (int i = 0; i < logValue.length; i++) {
+            int t = data.season()[i];
+            double tau = data.timeOfYear()[i];
+            double logB = (1 - tau) * Math.log(afterEvents[t]) + (tau == 0 ? 0 : tau * Math.log(biomass[t + 1]));
+            residuals[i] = logValue[i] - logB;
+            int series = data.series()[i];
+            if (series >= 0) {
+                logQ[series] += residuals[i] / perSeries[series];
+            }
+        }
+        for (int i = 0; i < logValue.length; i++) {
+            int series = data.series()[i];
+            residuals[i] -= series >= 0 ? logQ[series] : 0;
+        }
+        residuals[logValue.length] = LACK_WEIGHT * lack;
+    }
+
+    private void run(double r, double capacity) {
+        double floor = FLOOR * capacity;
+        lack = 0;
+        biomass[0] = startFraction * capacity;
+        for (int t = 0; t < afterEvents.length; t++) {
+            afterEvents[t] = AnnualStep.afterEvents(biomass[t], seasons.stocked()[t], seasons.killed()[t]);
+            double next = AnnualStep.next(afterEvents[t], seasons.removals()[t], r, capacity, shape);
+            if (next < floor) {
+                lack += (floor - next) / capacity;
+                next = floor / (2 - next / floor);
+            }
+            biomass[t + 1] = next;
+        }
+    }
+
+    /** Whether the removals could be taken on the last path that was run. */
+    boolean admissible() {
+        return lack == 0;
+    }
+
+    /** Replaces the logarithms of the observations, for a refit to resampled data. */
+    void observe(int i, double newLogValue) {
+        logValue[i] = newLogValue;
+    }
+
+    /** ln q of a series on the last path that was run. */
+    double logQ(int series) {
+        return logQ[series];
+    }
+
+    /** Biomass at the seasons' starts of the last path, T + 1 of them, t. */
+    double[] biomass() {
+        return biomass.clone();
+    }
+
+    /** F by season of the last path, 1/yr. */
+    double[] fishing() {
+        double[] f = new double[afterEvents.length];
+        for (int t = 0; t < f.length; t++) {
+            f[t] = AnnualStep.fishing(seasons.removals()[t], afterEvents[t], biomass[t + 1]);
+        }
+        return f;
+    }
+}

@@ -1,0 +1,103 @@
+package org.merewarden.core.prior;
+
+import java.util.List;
+import java.util.Locale;
+import org.jspecify.annotations.Nullable;
+import org.merewarden.core.evidence.CatchRecord;
+import org.merewarden.core.evidence.Evidence;
+
+/**
+ * Prior of MSY without a statement of the office.
+ *
+ * <pre>
+ *   with limnology:   MSY = Y · s,   log-sd² = log-sd(Y)² + log-sd(s)²
+ *   with catches:     MSY = the 90 % quantile of the seasons' removals, log-sd 0.8
+ *   with neither:     MSY = 5 kg/ha · A · s, log-sd 1.5
+ * </pre>
+ *
+ * <table>
+ * <caption>Symbols</caption>
+ * <tr><td>Y</td><td>yield of the lake, all species, t/yr: {@link LakeYield}, several formulas combined by widening</td></tr>
+ * <tr><td>s</td><td>this stock's share: as stated (log-sd 0.3), else 1/number of stocks (log-sd 0.7)</td></tr>
+ * <tr><td>A</td><td>area, ha</td></tr>
+ * </table>
+ *
+ * <p>Every constant here is our judgement. The quantile is of order: the k-th largest of N with k = ⌈N/10⌉.
+ */
+final class MsyPrior {
+    private static final double STATED_SHARE_LOG_SD = 0.3;
+    private static final double EQUAL_SHARE_LOG_SD = 0.7;
+    private static final double CATCHES_LOG_SD = 0.8;
+    private static final double NOTHING_LOG_SD = 1.5;
+    private static final double NOTHING_KG_PER_HECTARE = 5;
+    private static final double LEAST_TONNES = 1e-9;
+    private static final double MOST_TONNES = 1e12;
+
+    private MsyPrior() {}
+
+    static Prior of(Evidence evidence) {
+        List<Estimate> lake = LakeYield.predictTonnes(evidence.habitat());
+        if (!lake.isEmpty()) {
+            return fromLake(Estimate.combined(lake), evidence);
+        }
+        double large = largeCatch(evidence);
+        if (large > 0) {
+            return prior(
+                    large,
+                    CATCHES_LOG_SD,
+                    "the larger recorded catches",
+                    "Nothing is known of the lake's water: a wide prior around the larger catches.",
+                    "our judgement; catches tell what was taken, not what can be");
+        }
+        double guess = NOTHING_KG_PER_HECTARE * evidence.habitat().areaHectares() / 1000 * share(evidence);
+        return prior(
+                guess,
+                NOTHING_LOG_SD,
+                "5 kg/ha over the lake's area",
+                "Neither the lake's water nor any catch is known: little more than a guess.",
+                "our judgement");
+    }
+
+    private static Prior fromLake(Estimate lake, Evidence evidence) {
+        boolean stated = isStated(evidence.traits().shareOfLakeYield());
+        double shareLogSd = stated || evidence.habitat().stocksInLake() == 1 ? STATED_SHARE_LOG_SD : EQUAL_SHARE_LOG_SD;
+        String reason = String.format(
+                Locale.ROOT,
+                "The lake's yield of all species (%.3g t) times this stock's share (%.2g, %s).",
+                lake.value(),
+                share(evidence),
+                stated ? "as stated" : "equal shares, for want of a stated one");
+        return prior(
+                lake.value() * share(evidence),
+                Math.hypot(lake.logSd(), shareLogSd),
+                lake.source(),
+                reason,
+                lake.validity() + "; prediction error our judgement");
+    }
+
+    private static double share(Evidence evidence) {
+        Double stated = evidence.traits().shareOfLakeYield();
+        return stated != null && isStated(stated)
+                ? stated
+                : 1.0 / evidence.habitat().stocksInLake();
+    }
+
+    private static boolean isStated(@Nullable Double share) {
+        return share != null && share > 0 && share <= 1;
+    }
+
+    private static double largeCatch(Evidence evidence) {
+        double[] removals = evidence.catches().stream()
+                .mapToInt(CatchRecord::year)
+                .distinct()
+                .mapToDouble(year -> evidence.removals(year).orElse(0))
+                .sorted()
+                .toArray();
+        return removals.length == 0 ? 0 : removals[removals.length - (removals.length + 9) / 10];
+    }
+
+    private static Prior prior(double tonnes, double logSd, String source, String reason, String validity) {
+        double median = Math.max(LEAST_TONNES, Math.min(MOST_TONNES, tonnes));
+        return new Prior("msy_t", median, logSd, source, reason, validity);
+    }
+}
