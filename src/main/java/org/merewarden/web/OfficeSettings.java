@@ -18,7 +18,7 @@ public class OfficeSettings {
     /** yes or no: whether an approver may issue a limit that they proposed themselves. */
     public static final String OWN_PROPOSALS = "own_proposals";
 
-    private static final Map<String, String> DEFAULTS =
+    static final Map<String, String> DEFAULTS =
             Map.of(OFFICE_NAME, "Inland Fisheries Office", TIME_ZONE, "UTC", FIRST_MONTH, "1", OWN_PROPOSALS, "no");
 
     private final JdbcClient jdbc;

@@ -3,6 +3,9 @@ package org.merewarden.web;
 import java.time.Clock;
 import java.time.LocalDate;
 import java.time.Month;
+import java.time.ZoneId;
+import java.util.Map;
+import java.util.Objects;
 import org.springframework.stereotype.Service;
 
 /** The fishing calendar: a season lasts twelve months and is named by the year in which it starts. */
@@ -23,6 +26,16 @@ public class Seasons {
 
     public int current() {
         return of(today());
+    }
+
+    /** The current season by settings already read. */
+    int current(Map<String, String> all) {
+        LocalDate today = LocalDate.now(clock.withZone(ZoneId.of(setting(all, OfficeSettings.TIME_ZONE))));
+        return of(today, Month.of(Integer.parseInt(setting(all, OfficeSettings.FIRST_MONTH))));
+    }
+
+    private static String setting(Map<String, String> all, String name) {
+        return Objects.requireNonNull(all.get(name), name);
     }
 
     public int of(LocalDate date) {
