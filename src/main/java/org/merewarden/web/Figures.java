@@ -38,6 +38,16 @@ public final class Figures {
         return format.format(rounded);
     }
 
+    /** So many significant digits without trailing zeros, for results that are compared with published ones. */
+    public static String digits(@Nullable Double value, int digits) {
+        return value == null || !Double.isFinite(value)
+                ? UNKNOWN
+                : new java.math.BigDecimal(value)
+                        .round(new java.math.MathContext(digits))
+                        .stripTrailingZeros()
+                        .toPlainString();
+    }
+
     /** Tonnes with their unit: "12.4 t". */
     public static String tonnes(@Nullable Double tonnes) {
         return withUnit(tonnes, "t");

@@ -1,0 +1,67 @@
+package org.merewarden.assessment;
+
+import org.merewarden.activity.ActivityLog;
+import org.merewarden.core.evidence.Evidence;
+import org.merewarden.core.inference.Assessor;
+import org.merewarden.core.inference.Posterior;
+import org.merewarden.records.EvidenceReader;
+import org.merewarden.waterbody.Register;
+import org.merewarden.web.Seasons;
+import org.springframework.context.ApplicationEventPublisher;
+import org.springframework.stereotype.Service;
+import org.springframework.transaction.support.TransactionTemplate;
+
+/** Makes one assessment: reads one evidence version, runs the method outside any transaction, stores the result once. */
+@Service
+class AssessmentMaker {
+    private final EvidenceReader reader;
+    private final Register register;
+    private final Assessor assessor;
+    private final AssessmentStore store;
+    private final Seasons seasons;
+    private final ActivityLog activity;
+    private final ApplicationEventPublisher events;
+    private final TransactionTemplate transaction;
+
+    AssessmentMaker(
+            EvidenceReader reader,
+            Register register,
+            Assessor assessor,
+            AssessmentStore store,
+            Seasons seasons,
+            ActivityLog activity,
+            ApplicationEventPublisher events,
+            TransactionTemplate transaction) {
+        this.reader = reader;
+        this.register = register;
+        this.assessor = assessor;
+        this.store = store;
+        this.seasons = seasons;
+        this.activity = activity;
+        this.events = events;
+        this.transaction = transaction;
+    }
+
+    /** Assesses the stock, unless the job has done so before it was interrupted. */
+    void assess(long stockId, long jobId, String by) {
+        if (store.madeBy(jobId, stockId)) {
+            return;
+        }
+        Evidence evidence = reader.evidence(stockId);
+        Posterior posterior = assessor.assess(evidence, seasons.current() - 1, seed(evidence));
+        transaction.executeWithoutResult(status -> {
+            long id = store.add(stockId, jobId, by, evidence, posterior);
+            activity.record(
+                    "assessed",
+                    register.stock(stockId).orElseThrow().title(),
+                    null,
+                    posterior.method() + ", " + (posterior.verdict().settled() ? "settled" : "not settled"));
+            events.publishEvent(new AssessmentStored(stockId, id));
+        });
+    }
+
+    /** The first 15 hexadecimal digits of the content hash: the same evidence gives the same draws. */
+    static long seed(Evidence evidence) {
+        return Long.parseLong(evidence.contentHash().substring(0, 15), 16);
+    }
+}

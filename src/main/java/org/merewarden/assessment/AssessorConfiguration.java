@@ -1,0 +1,15 @@
+package org.merewarden.assessment;
+
+import org.merewarden.core.inference.Assessor;
+import org.merewarden.core.inference.FirstAssessor;
+import org.springframework.context.annotation.Bean;
+import org.springframework.context.annotation.Configuration;
+
+/** The method in use. */
+@Configuration
+class AssessorConfiguration {
+    @Bean
+    Assessor assessor() {
+        return new FirstAssessor();
+    }
+}
