@@ -22,7 +22,9 @@ create table catch_limit (
     created_at timestamp with time zone not null,
     created_by varchar(60) not null,
     check (valid_from <= valid_to),
-    check (kind = 'measures only' or amount is not null)
+    check (kind = 'measures only' or amount is not null),
+    check (kind <> 'catch' or set_aside_subsistence_t + set_aside_angling_t + set_aside_research_t + set_aside_other_t
+        <= amount)
 );
 create index catch_limit_season on catch_limit (season_year, stock_id);
 

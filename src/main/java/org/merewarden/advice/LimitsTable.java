@@ -1,0 +1,280 @@
+package org.merewarden.advice;
+
+import static org.merewarden.intake.Column.code;
+import static org.merewarden.intake.Column.date;
+import static org.merewarden.intake.Column.number;
+import static org.merewarden.intake.Column.text;
+import static org.merewarden.intake.Column.year;
+
+import java.time.LocalDate;
+import java.time.OffsetDateTime;
+import java.time.ZoneOffset;
+import java.util.Comparator;
+import java.util.HashMap;
+import java.util.List;
+import java.util.Map;
+import java.util.Objects;
+import java.util.Optional;
+import java.util.function.Function;
+import java.util.stream.Collectors;
+import org.jspecify.annotations.Nullable;
+import org.merewarden.core.evidence.CatchRecord;
+import org.merewarden.intake.Batch;
+import org.merewarden.intake.Fate;
+import org.merewarden.intake.Problem;
+import org.merewarden.intake.Provenance;
+import org.merewarden.intake.TableDefinition;
+import org.merewarden.intake.TableHandler;
+import org.merewarden.intake.TableRow;
+import org.merewarden.records.EvidenceReader;
+import org.merewarden.waterbody.Register;
+import org.merewarden.waterbody.StockView;
+import org.merewarden.web.Seasons;
+import org.springframework.jdbc.core.simple.JdbcClient;
+import org.springframework.stereotype.Component;
+
+/**
+ * Limits entered from earlier papers. A decision on record is never edited: a row that says something else of a limit
+ * issued on the same day is refused.
+ */
+@Component
+class LimitsTable implements TableHandler {
+    private static final TableDefinition DEFINITION = new TableDefinition(
+            "limits",
+            "Limits issued on paper",
+            120,
+            List.of(
+                    code("water_body", "code of the water body").asKey(),
+                    code("species", "FAO three-letter code").asKey(),
+                    code("population", "only where a water holds two stocks of one species"),
+                    year("season", "season for which the limit holds").asKey(),
+                    date("issued_on", "day of the decision").asKey(),
+                    text("kind", "what is limited").orElse("catch").oneOf("catch", "effort", "measures only"),
+                    number("amount", "total removals in t, or effort in its unit")
+                            .between(0, 1e7),
+                    text("unit", "t for a catch limit"),
+                    number("set_aside_t", "kept for subsistence, angling, research and others, t")
+                            .between(0, 1e7),
+                    date("valid_from", "first day; empty: the season's first"),
+                    date("valid_to", "last day; empty: the season's last"),
+                    text("measures", "sizes, mesh, closed times, as text"),
+                    text("legal_basis", "law or ordinance"),
+                    text("reason", "why this limit")));
+
+    private final JdbcClient jdbc;
+    private final Register register;
+    private final EvidenceReader evidence;
+    private final LimitWriter writer;
+    private final StandingKeeper standings;
+    private final Seasons seasons;
+
+    LimitsTable(
+            JdbcClient jdbc,
+            Register register,
+            EvidenceReader evidence,
+            LimitWriter writer,
+            StandingKeeper standings,
+            Seasons seasons) {
+        this.jdbc = jdbc;
+        this.register = register;
+        this.evidence = evidence;
+        this.writer = writer;
+        this.standings = standings;
+        this.seasons = seasons;
+    }
+
+    /** A limit on record: when it was issued and what it says. */
+    private record Stored(LocalDate issuedOn, String reason, NewLimit limit) {}
+
+    @Override
+    public TableDefinition definition() {
+        return DEFINITION;
+    }
+
+    @Override
+    public List<Fate> examine(List<TableRow> rows, Batch batch) {
+        Map<String, StockView> stocks = stocks();
+        Map<String, Stored> stored = stored();
+        return rows.stream().map(row -> fate(row, stocks, stored, batch)).toList();
+    }
+
+    private Fate fate(TableRow row, Map<String, StockView> stocks, Map<String, Stored> stored, Batch batch) {
+        StockView stock = stocks.get(stockKey(row));
+        if (stock == null
+                && !batch.brings(
+                        "stocks", row.need("water_body"), row.need("species"), row.textOrEmpty("population"))) {
+            return Fate.refused(new Problem(
+                    "species",
+                    row.need("species"),
+                    "no stock " + row.need("species") + " is registered in " + row.need("water_body")
+                            + "; register it or import stocks first"));
+        }
+        Optional<Problem> problem = problem(row);
+        if (problem.isPresent()) {
+            return Fate.refused(problem.get());
+        }
+        Stored earlier = stock == null ? null : stored.get(key(stock.id(), row));
+        if (earlier == null) {
+            return Fate.NEW;
+        }
+        boolean same = sameContent(earlier, row);
+        return same
+                ? Fate.SAME
+                : Fate.refused(new Problem(
+                        "issued_on",
+                        Objects.toString(row.date("issued_on")),
+                        "a limit issued on this day is on record with other content; a decision is never edited: issue"
+                                + " a revision"));
+    }
+
+    private Optional<Problem> problem(TableRow row) {
+        String kind = row.need("kind");
+        Double amount = row.number("amount");
+        Double setAside = row.number("set_aside_t");
+        LocalDate from = from(row);
+        LocalDate to = to(row);
+        if (amount == null && !kind.equals("measures only")) {
+            return Optional.of(new Problem("amount", "", "a limit of kind " + kind + " needs an amount"));
+        }
+        String unit = row.text("unit");
+        if (kind.equals("catch") && unit != null && !unit.equals("t")) {
+            return Optional.of(new Problem("unit", unit, "a catch limit is in t"));
+        }
+        if (kind.equals("effort") && unit == null) {
+            return Optional.of(new Problem("unit", "", "an effort limit needs its unit, e.g. net-nights"));
+        }
+        if (kind.equals("catch") && amount != null && setAside != null && setAside > amount) {
+            return Optional.of(
+                    new Problem("set_aside_t", setAside.toString(), "set-asides are at most the limit, " + amount));
+        }
+        if (from.isAfter(to)) {
+            return Optional.of(new Problem("valid_to", to.toString(), "the last day is not before the first, " + from));
+        }
+        return Optional.empty();
+    }
+
+    private LocalDate from(TableRow row) {
+        LocalDate given = row.date("valid_from");
+        return given != null ? given : seasons.start(season(row));
+    }
+
+    private LocalDate to(TableRow row) {
+        LocalDate given = row.date("valid_to");
+        return given != null ? given : seasons.end(season(row));
+    }
+
+    private static int season(TableRow row) {
+        return Objects.requireNonNull(row.integer("season"));
+    }
+
+    private boolean sameContent(Stored earlier, TableRow row) {
+        NewLimit told = limit(earlier.limit().stockId(), row, earlier.limit().reportedFraction());
+        NewLimit known = earlier.limit();
+        return told.kind().equals(known.kind())
+                && Objects.equals(told.amount(), known.amount())
+                && told.unit().equals(known.unit())
+                && told.setAsidesTonnes() == known.setAsidesTonnes()
+                && told.validFrom().equals(known.validFrom())
+                && told.validTo().equals(known.validTo())
+                && Objects.equals(told.measures(), known.measures())
+                && Objects.equals(told.legalBasis(), known.legalBasis())
+                && reason(row).equals(earlier.reason());
+    }
+
+    @Override
+    public void store(List<TableRow> rows, Provenance provenance) {
+        Map<String, StockView> stocks = stocks();
+        Map<Long, Double> reported = new HashMap<>();
+        rows.stream()
+                .sorted(Comparator.comparing(row -> Objects.requireNonNull(row.date("issued_on"))))
+                .forEach(row -> {
+                    long stock =
+                            Objects.requireNonNull(stocks.get(stockKey(row))).id();
+                    store(row, stock, reported.computeIfAbsent(stock, this::reportedFraction), provenance);
+                });
+        reported.keySet().forEach(standings::refresh);
+    }
+
+    private void store(TableRow row, long stock, double reported, Provenance provenance) {
+        NewLimit limit = limit(stock, row, reported);
+        long id = writer.add(limit, provenance.by());
+        LocalDate issuedOn = Objects.requireNonNull(row.date("issued_on"));
+        writer.decide(
+                id,
+                LimitWriter.ISSUED,
+                provenance.by(),
+                issuedOn.atStartOfDay(ZoneOffset.UTC).toInstant(),
+                reason(row));
+        writer.putInForce(id, limit, provenance.by());
+    }
+
+    private NewLimit limit(long stock, TableRow row, double reportedFraction) {
+        String unit = row.text("unit");
+        return new NewLimit(
+                stock,
+                season(row),
+                row.need("kind"),
+                row.number("amount"),
+                unit == null ? "t" : unit,
+                0,
+                0,
+                0,
+                Objects.requireNonNullElse(row.number("set_aside_t"), 0.0),
+                reportedFraction,
+                from(row),
+                to(row),
+                row.text("measures"),
+                row.text("legal_basis"),
+                null,
+                null,
+                "entered");
+    }
+
+    private static String reason(TableRow row) {
+        return Objects.requireNonNullElse(row.text("reason"), "entered from earlier papers");
+    }
+
+    /** The commercial sector's reported fraction in its latest season on record; 1 where none is. */
+    private double reportedFraction(long stockId) {
+        return evidence.evidence(stockId).catches().stream()
+                .filter(c -> c.sector().equals("commercial"))
+                .max(Comparator.comparingInt(CatchRecord::year))
+                .map(CatchRecord::reportedFraction)
+                .orElse(1.0);
+    }
+
+    private Map<String, StockView> stocks() {
+        return register.stocks().stream().collect(Collectors.toMap(StockView::key, Function.identity()));
+    }
+
+    private static String stockKey(TableRow row) {
+        String population = row.textOrEmpty("population");
+        return row.need("water_body") + ":" + row.need("species") + (population.isEmpty() ? "" : "." + population);
+    }
+
+    private Map<String, Stored> stored() {
+        return jdbc
+                .sql("""
+                        select l.*, d.effective_at, d.reason as decided_reason from catch_limit l
+                        join limit_decision d on d.limit_id = l.id and d.act = 'ISSUED'
+                        where l.origin = 'entered'""")
+                .query((row, n) -> new Stored(
+                        row.getObject("effective_at", OffsetDateTime.class)
+                                .atZoneSameInstant(ZoneOffset.UTC)
+                                .toLocalDate(),
+                        row.getString("decided_reason"),
+                        LimitHistory.limit(row, n)))
+                .list()
+                .stream()
+                .collect(Collectors.toMap(
+                        s -> key(s.limit().stockId(), s.limit().season(), s.issuedOn()), Function.identity()));
+    }
+
+    private static String key(long stock, TableRow row) {
+        return key(stock, season(row), row.date("issued_on"));
+    }
+
+    private static String key(long stock, int season, @Nullable LocalDate issuedOn) {
+        return stock + "|" + season + "|" + issuedOn;
+    }
+}

@@ -1,0 +1,123 @@
+package org.merewarden.advice;
+
+import java.util.List;
+import java.util.Optional;
+import org.jspecify.annotations.Nullable;
+import org.merewarden.assessment.AssessmentView;
+import org.merewarden.assessment.Assessments;
+import org.merewarden.waterbody.Register;
+import org.merewarden.waterbody.StockView;
+import org.merewarden.web.Figures;
+import org.merewarden.web.OfficeSettings;
+import org.springframework.jdbc.core.simple.JdbcClient;
+import org.springframework.stereotype.Controller;
+import org.springframework.ui.Model;
+import org.springframework.web.bind.annotation.GetMapping;
+import org.springframework.web.bind.annotation.PathVariable;
+
+/** A limit on one printable page: draft until it is issued. */
+@Controller
+class NoticeController {
+    private final Register register;
+    private final Decisions decisions;
+    private final LimitHistory history;
+    private final Assessments assessments;
+    private final OfficeSettings settings;
+    private final JdbcClient jdbc;
+
+    NoticeController(
+            Register register,
+            Decisions decisions,
+            LimitHistory history,
+            Assessments assessments,
+            OfficeSettings settings,
+            JdbcClient jdbc) {
+        this.register = register;
+        this.decisions = decisions;
+        this.history = history;
+        this.assessments = assessments;
+        this.settings = settings;
+        this.jdbc = jdbc;
+    }
+
+    record Part(String cooperative, String share, String amount) {}
+
+    record Act(String act, String at, String by, String reason) {}
+
+    record Notice(
+            long number,
+            String office,
+            String stock,
+            String stockPath,
+            String season,
+            String kind,
+            String amount,
+            List<String[]> setAsides,
+            String toBeLogged,
+            String validity,
+            @Nullable String measures,
+            @Nullable String legalBasis,
+            @Nullable String objection,
+            @Nullable String strength,
+            String state,
+            List<Part> parts,
+            List<Act> acts) {}
+
+    @GetMapping("/notices/{id}")
+    String show(@PathVariable long id, Model model) {
+        model.addAttribute("notice", notice(id));
+        return "advice/notice";
+    }
+
+    private Notice notice(long id) {
+        NewLimit limit = decisions.find(id);
+        StockView stock = register.stock(limit.stockId()).orElseThrow();
+        List<LimitHistory.Decision> acts = history.ofLimit(id);
+        Optional<AssessmentView> assessment = assessments.latest(stock.id());
+        return new Notice(
+                id,
+                settings.get(OfficeSettings.OFFICE_NAME),
+                stock.title(),
+                stock.path(),
+                AdviceView.season(limit.season()),
+                limit.kind().replace(' ', '-'),
+                limit.amount() == null ? "" : Figures.withUnit(limit.amount(), limit.unit()),
+                setAsides(limit),
+                AdviceView.toBeLogged(limit),
+                Figures.date(limit.validFrom()) + " – " + Figures.date(limit.validTo()),
+                limit.measures(),
+                limit.legalBasis(),
+                limit.objection(),
+                assessment.map(AssessmentView::strength).orElse(null),
+                state(acts),
+                parts(id),
+                acts.stream()
+                        .map(d -> new Act(d.act(), Figures.dateTime(d.decidedAt()), d.decidedBy(), d.reason()))
+                        .toList());
+    }
+
+    /** The latest act; a notice is a draft until it is issued. */
+    private static String state(List<LimitHistory.Decision> acts) {
+        return acts.get(acts.size() - 1).act();
+    }
+
+    private static List<String[]> setAsides(NewLimit limit) {
+        return List.of(
+                new String[] {"subsistence", Figures.tonnes(limit.subsistenceTonnes())},
+                new String[] {"angling", Figures.tonnes(limit.anglingTonnes())},
+                new String[] {"research", Figures.tonnes(limit.researchTonnes())},
+                new String[] {"other", Figures.tonnes(limit.otherTonnes())});
+    }
+
+    private List<Part> parts(long id) {
+        return jdbc.sql("""
+                        select c.name, a.share_percent, a.amount_kg from allocation a
+                        join cooperative c on c.id = a.cooperative_id where a.limit_id = ? order by c.name""")
+                .param(id)
+                .query((row, n) -> new Part(
+                        row.getString(1),
+                        Figures.sig(row.getDouble(2)) + " %",
+                        Figures.withUnit((double) row.getLong(3), "kg")))
+                .list();
+    }
+}

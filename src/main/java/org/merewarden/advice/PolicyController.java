@@ -1,0 +1,26 @@
+package org.merewarden.advice;
+
+import org.merewarden.core.policy.Policy;
+import org.merewarden.web.Figures;
+import org.springframework.stereotype.Controller;
+import org.springframework.ui.Model;
+import org.springframework.web.bind.annotation.GetMapping;
+
+/** The rule that is in use, in words. */
+@Controller
+class PolicyController {
+    record Rule(String limitFraction, String watch, String strained, String critical) {}
+
+    @GetMapping("/policy")
+    String show(Model model) {
+        Policy policy = Policy.DEFAULT;
+        model.addAttribute(
+                "rule",
+                new Rule(
+                        Figures.percent(policy.limitFraction()),
+                        Figures.percent(policy.watchFrom()),
+                        Figures.percent(policy.strainedFrom()),
+                        Figures.percent(policy.criticalFrom())));
+        return "advice/policy";
+    }
+}
