@@ -1,0 +1,4 @@
+package org.merewarden.violations.right;
+
+/** What the module shows. */
+public class Shown {}

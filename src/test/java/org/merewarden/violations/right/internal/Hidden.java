@@ -1,0 +1,4 @@
+package org.merewarden.violations.right.internal;
+
+/** Not for other modules. */
+public class Hidden {}
