@@ -91,7 +91,7 @@ class ImportRulesTest {
                 .that()
                 .resideInAPackage(ROOT + room + "..")
                 .should()
-                .dependOnClassesThat(resideInAnyPackage(ROOT + "..").and(not(resideInAnyPackage(packages))));
+                .dependOnClassesThat(resideInAnyPackage("org.merewarden..").and(not(resideInAnyPackage(packages))));
     }
 
     @Test
