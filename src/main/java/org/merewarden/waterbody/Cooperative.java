@@ -1,0 +1,28 @@
+package org.merewarden.waterbody;
+
+import jakarta.persistence.Embedded;
+import jakarta.persistence.Entity;
+import jakarta.persistence.GeneratedValue;
+import jakarta.persistence.GenerationType;
+import jakarta.persistence.Id;
+import jakarta.persistence.Table;
+import jakarta.persistence.Version;
+import jakarta.validation.Valid;
+import org.jspecify.annotations.Nullable;
+
+/** A cooperative. */
+@Entity
+@Table(name = "cooperative")
+class Cooperative {
+    @Id
+    @GeneratedValue(strategy = GenerationType.IDENTITY)
+    @Nullable
+    Long id;
+
+    @Version
+    int version;
+
+    @Embedded
+    @Valid
+    CooperativeDetails details = new CooperativeDetails();
+}
