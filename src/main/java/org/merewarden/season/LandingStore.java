@@ -30,11 +30,11 @@ class LandingStore {
               presentation, conversion_factor, live_weight_kg, number_of_fish, fate, place, note, flags, import_id,
               recorded_at, recorded_by)
             values (?, ?, ?, ?, ?, ?, ?, ?, ?, ?, ?, ?, ?, ?, ?, ?, ?, ?, ?, ?, ?, ?, ?, ?, ?, ?, ?, ?, ?)""";
-    static final String SELECT = """
-            select l.*, w.code as lake, c.code as cooperative, n.id as corrected_by
+    static final String FROM = """
             from landing l join water_body w on w.id = l.water_body_id
               left join cooperative c on c.id = l.cooperative_id
               left join landing n on n.corrects_id = l.id\s""";
+    static final String SELECT = "select l.*, w.code as lake, c.code as cooperative, n.id as corrected_by " + FROM;
 
     private final JdbcClient jdbc;
     private final JdbcTemplate template;
