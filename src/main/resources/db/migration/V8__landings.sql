@@ -5,6 +5,8 @@ create table landing (
     entry_key varchar(100) not null unique,
     entry_kind varchar(12) not null check (entry_kind in ('landing', 'correction', 'withdrawal')),
     corrects_id bigint unique references landing,
+    -- the first entry of this row's history; null on the first itself
+    root_id bigint references landing,
     reason varchar(2000),
     landed_on date not null,
     season_year int not null check (season_year between 1800 and 2200),
@@ -33,10 +35,12 @@ create table landing (
     recorded_at timestamp with time zone not null,
     recorded_by varchar(60) not null,
     check ((entry_kind = 'landing') = (corrects_id is null)),
+    check ((corrects_id is null) = (root_id is null)),
     check (entry_kind = 'landing' or reason is not null)
 );
 create index landing_stock_season on landing (stock_id, season_year);
 create index landing_season on landing (season_year, landed_on);
+create index landing_root on landing (root_id);
 create index landing_cooperative on landing (cooperative_id, season_year);
 
 -- "our records are complete up to …", stated; the latest statement counts

@@ -1,0 +1,186 @@
+package org.merewarden.season;
+
+import static org.merewarden.intake.Column.code;
+import static org.merewarden.intake.Column.date;
+import static org.merewarden.intake.Column.integer;
+import static org.merewarden.intake.Column.number;
+import static org.merewarden.intake.Column.text;
+
+import java.util.ArrayList;
+import java.util.List;
+import java.util.Map;
+import java.util.Objects;
+import java.util.stream.Collectors;
+import org.jspecify.annotations.Nullable;
+import org.merewarden.advice.Limits;
+import org.merewarden.intake.Batch;
+import org.merewarden.intake.Fate;
+import org.merewarden.intake.Problem;
+import org.merewarden.intake.Provenance;
+import org.merewarden.intake.TableDefinition;
+import org.merewarden.intake.TableHandler;
+import org.merewarden.intake.TableRow;
+import org.merewarden.season.LandingStore.Act;
+import org.merewarden.season.LandingStore.Origin;
+import org.merewarden.waterbody.Register;
+import org.merewarden.web.Seasons;
+import org.springframework.stereotype.Component;
+
+/** Landings from files. The same rules as the form's; a key that stands for other content is refused, never replaced. */
+@Component
+class LandingsTable implements TableHandler {
+    static final TableDefinition DEFINITION = new TableDefinition("landings", "Landings, line by line", 130, columns());
+
+    private final LandingStore store;
+    private final Register register;
+    private final Limits limits;
+    private final Seasons seasons;
+
+    LandingsTable(LandingStore store, Register register, Limits limits, Seasons seasons) {
+        this.store = store;
+        this.register = register;
+        this.limits = limits;
+        this.seasons = seasons;
+    }
+
+    private static List<org.merewarden.intake.Column> columns() {
+        double any = Double.POSITIVE_INFINITY;
+        return List.of(
+                code("key", "The sender's own name for the line; sending it again changes nothing")
+                        .asKey(),
+                date("date", "Day of the landing").mandatory(),
+                text("slip", "Number of the landing slip"),
+                code("water_body", "Code of the water body").mandatory(),
+                code("species", "FAO three-letter code, or mixed").mandatory(),
+                code("population", "Only where a water holds two stocks of one species"),
+                code("cooperative", "Code of the cooperative"),
+                text("sector", "Who fished")
+                        .oneOf(
+                                "commercial",
+                                "subsistence",
+                                "angling",
+                                "other party",
+                                "unlawful",
+                                "research",
+                                "discards")
+                        .orElse("commercial"),
+                text("gear", "Gear used"),
+                number("nets", "Number of nets, traps or hooks").between(0, EntryRules.MAX_EFFORT),
+                number("nights", "Nights they stood").between(0, EntryRules.MAX_EFFORT),
+                number("weight_kg", "Weight as landed, kg").mandatory().between(0, EntryRules.MAX_WEIGHT_KG),
+                text("presentation", "How it was landed: whole, gutted …").orElse("whole"),
+                integer("number", "Number of fish").between(0, any),
+                text("fate", "What became of it")
+                        .oneOf("kept", "discarded", "released", "seized")
+                        .orElse("kept"),
+                text("place", "Landing place; no person's name"),
+                text("note", "Remark; no person's name"));
+    }
+
+    @Override
+    public TableDefinition definition() {
+        return DEFINITION;
+    }
+
+    @Override
+    public List<Fate> examine(List<TableRow> rows, Batch batch) {
+        EntryRules rules = rules();
+        Map<String, LandingRow> stored = store
+                .byKeys(rows.stream().map(row -> row.need("key")).toList())
+                .stream()
+                .collect(Collectors.toMap(row -> row.entry().key(), row -> row));
+        List<Fate> fates = new ArrayList<>(rows.size());
+        for (TableRow row : rows) {
+            fates.add(fate(row, rules, stored, batch));
+        }
+        return fates;
+    }
+
+    private static Fate fate(TableRow row, EntryRules rules, Map<String, LandingRow> stored, Batch batch) {
+        List<Problem> problems = lengthProblems(row);
+        if (!problems.isEmpty()) {
+            return Fate.refused(problems.toArray(Problem[]::new));
+        }
+        Entry entry = entry(row);
+        LandingRow before = stored.get(entry.key());
+        if (before != null) {
+            return before.entry().equals(entry) ? Fate.SAME : Fate.refused(taken(before));
+        }
+        rules.problems(entry).stream()
+                .filter(problem -> !broughtAlong(problem, entry, batch))
+                .forEach(problems::add);
+        return problems.isEmpty() ? Fate.NEW : Fate.refused(problems.toArray(Problem[]::new));
+    }
+
+    /** Whether the same import brings what the register does not hold yet. */
+    private static boolean broughtAlong(Problem problem, Entry entry, Batch batch) {
+        return switch (problem.column()) {
+            case "water_body" -> batch.brings("water-bodies", entry.lake());
+            case "cooperative" -> batch.brings("cooperatives", Objects.requireNonNullElse(entry.cooperative(), ""));
+            default -> false;
+        };
+    }
+
+    private static Problem taken(LandingRow before) {
+        return new Problem(
+                "key",
+                before.entry().key(),
+                "stands for another landing already (" + before.entry().text()
+                        + "); a correction is a new entry: correct it in the log, or send a new key");
+    }
+
+    private static final Map<String, Integer> LENGTHS = Map.of(
+            "key", 100, "slip", 60, "population", 40, "gear", 60, "presentation", 60, "place", 200, "note", 2000);
+
+    private static List<Problem> lengthProblems(TableRow row) {
+        List<Problem> problems = new ArrayList<>();
+        LENGTHS.forEach((column, length) -> {
+            String value = row.textOrEmpty(column);
+            if (value.length() > length) {
+                problems.add(new Problem(column, value.substring(0, 40) + "…", "at most " + length + " characters"));
+            }
+        });
+        if (row.need("key").startsWith(LandingLog.OWN_KEYS)) {
+            problems.add(new Problem("key", row.need("key"), "may not begin with " + LandingLog.OWN_KEYS));
+        }
+        return problems;
+    }
+
+    @Override
+    public void store(List<TableRow> rows, Provenance provenance) {
+        EntryRules rules = rules();
+        List<Checked> checked =
+                rows.stream().map(row -> rules.check(entry(row))).toList();
+        store.insert(checked, Act.LANDING, new Origin(provenance.importId(), provenance.at(), provenance.by()));
+    }
+
+    private EntryRules rules() {
+        return new EntryRules(register, seasons, new References.Loaded(register, limits, store));
+    }
+
+    private static Entry entry(TableRow row) {
+        String species = row.need("species");
+        return new Entry(
+                row.need("key"),
+                Objects.requireNonNull(row.date("date")),
+                row.text("slip"),
+                row.need("water_body"),
+                species.equalsIgnoreCase(Entry.MIXED) ? Entry.MIXED : species.toUpperCase(java.util.Locale.ROOT),
+                row.textOrEmpty("population"),
+                row.text("cooperative"),
+                orElse(row.text("sector"), "commercial"),
+                row.text("gear"),
+                row.number("nets"),
+                row.number("nights"),
+                Objects.requireNonNull(row.number("weight_kg")),
+                orElse(row.text("presentation"), "whole"),
+                row.integer("number"),
+                orElse(row.text("fate"), "kept"),
+                row.text("place"),
+                row.text("note"));
+    }
+
+    private static String orElse(@Nullable String text, String fallback) {
+        return text == null ? fallback : text;
+    }
+}
