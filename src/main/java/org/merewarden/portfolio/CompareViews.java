@@ -49,8 +49,7 @@ class CompareViews {
                 .map(StockCurve::entry)
                 .filter(e -> e.margin() != null)
                 .min(Column.MARGIN.order(false))
-                .map(e -> texts.get(
-                        "compare.answer", curves.size(), e.stock().title(), Figures.percent(e.margin())))
+                .map(e -> texts.get("compare.answer", curves.size(), e.stock().title(), Figures.percent(e.margin())))
                 .orElseGet(() -> texts.get("compare.count", curves.size()));
     }
 
@@ -97,7 +96,10 @@ class CompareViews {
                 e.stock().title(),
                 Figures.interval(a.msyTonnes(), a.msyLowTonnes(), a.msyHighTonnes()),
                 Figures.tonnes(c.law().capacityTonnes()),
-                texts.get("compare.fold", Figures.tonnes(c.fold().x()), Figures.tonnes(c.fold().y())),
+                texts.get(
+                        "compare.fold",
+                        Figures.tonnes(c.fold().x()),
+                        Figures.tonnes(c.fold().y())),
                 Figures.interval(now.mid(), now.low80(), now.high80()),
                 rows.limit(e.limit()),
                 e.closed() ? texts.get("closed") : Figures.percent(e.margin()),

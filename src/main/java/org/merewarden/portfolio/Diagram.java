@@ -74,8 +74,18 @@ record Diagram(String xLabel, String yLabel, double xMax, double yMax, List<Seri
         for (int i = 0; i < curves.size(); i++) {
             plain.add(series(curves.get(i), axes, i, i == focus));
         }
-        double xMax = ROOM * plain.stream().flatMap(Series::extent).mapToDouble(Point::x).max().orElse(1);
-        double yMax = ROOM * plain.stream().flatMap(Series::extent).mapToDouble(Point::y).max().orElse(1);
+        double xMax = ROOM
+                * plain.stream()
+                        .flatMap(Series::extent)
+                        .mapToDouble(Point::x)
+                        .max()
+                        .orElse(1);
+        double yMax = ROOM
+                * plain.stream()
+                        .flatMap(Series::extent)
+                        .mapToDouble(Point::y)
+                        .max()
+                        .orElse(1);
         if (focus >= 0) {
             Series s = plain.get(focus);
             List<Arrow> arrows = arrows(curves.get(focus), axes, xMax, yMax);
@@ -107,8 +117,19 @@ record Diagram(String xLabel, String yLabel, double xMax, double yMax, List<Seri
 
     private static Series withArrows(Series s, List<Arrow> arrows) {
         return new Series(
-                s.name(), s.style(), true, s.stable(), s.unstable(), s.fold(), s.now(), s.half(), s.most(), s.cloud(),
-                s.band(), s.limit(), arrows);
+                s.name(),
+                s.style(),
+                true,
+                s.stable(),
+                s.unstable(),
+                s.fold(),
+                s.now(),
+                s.half(),
+                s.most(),
+                s.cloud(),
+                s.band(),
+                s.limit(),
+                arrows);
     }
 
     /** Which way biomass drifts, on a grid over the diagram: up between the branches, down outside. */

@@ -43,8 +43,7 @@ class DiagramTexts {
     }
 
     private String title(Diagram diagram) {
-        List<String> names =
-                diagram.stocks().stream().map(Diagram.Series::name).toList();
+        List<String> names = diagram.stocks().stream().map(Diagram.Series::name).toList();
         return texts.get("diagram.title", String.join(", ", names));
     }
 }

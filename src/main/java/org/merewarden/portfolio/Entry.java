@@ -42,30 +42,36 @@ record Entry(
     }
 
     /** (MSY − removals)/MSY; null for a closed stock, whose margin says nothing. */
-    @Nullable Double margin() {
+    @Nullable
+    Double margin() {
         return standing == null || closed() ? null : standing.margin();
     }
 
-    @Nullable Double msyTonnes() {
+    @Nullable
+    Double msyTonnes() {
         return assessment == null ? null : assessment.msyTonnes();
     }
 
     /** MSY per hectare of the register's area, kg/ha a year. */
-    @Nullable Double msyKgPerHectare() {
+    @Nullable
+    Double msyKgPerHectare() {
         Double msy = msyTonnes();
         return msy == null ? null : 1000 * msy / stock.areaHectares();
     }
 
-    @Nullable Double biomassOverBmsy() {
+    @Nullable
+    Double biomassOverBmsy() {
         return assessment == null ? null : assessment.bOverBmsy();
     }
 
-    @Nullable Double limitTonnes() {
+    @Nullable
+    Double limitTonnes() {
         return limit == null ? null : limit.amountTonnes();
     }
 
     /** Live weight recorded in the season, t; null where there is neither a log nor a limit. */
-    @Nullable Double takenTonnes() {
+    @Nullable
+    Double takenTonnes() {
         if (uptake == null) {
             return limit == null ? null : 0.0;
         }
@@ -73,7 +79,8 @@ record Entry(
     }
 
     /** Taken as a share of the amount to be logged; null without such an amount. */
-    @Nullable Double takenShare() {
+    @Nullable
+    Double takenShare() {
         Double taken = takenTonnes();
         Double allowed = limit == null ? null : limit.toBeLoggedTonnes();
         return taken == null || allowed == null || allowed == 0 ? null : taken / allowed;

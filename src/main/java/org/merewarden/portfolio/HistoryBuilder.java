@@ -113,8 +113,8 @@ class HistoryBuilder {
 
     private static List<Spread> columns(double[][] states, int count) {
         return IntStream.range(0, count)
-                .mapToObj(t -> Spread.of(
-                        Stream.of(states).mapToDouble(draw -> draw[t]).toArray()))
+                .mapToObj(t ->
+                        Spread.of(Stream.of(states).mapToDouble(draw -> draw[t]).toArray()))
                 .toList();
     }
 

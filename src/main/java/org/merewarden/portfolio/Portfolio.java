@@ -43,8 +43,7 @@ class Portfolio {
 
     /** All registered stocks, by lake name, then species. */
     List<Entry> entries(int season) {
-        Map<Long, List<RightView>> rights =
-                register.rights().stream().collect(groupingBy(RightView::stockId));
+        Map<Long, List<RightView>> rights = register.rights().stream().collect(groupingBy(RightView::stockId));
         Map<Long, AssessmentView> latest = byStock(assessments.latest(), AssessmentView::stockId);
         Map<Long, StandingView> standing = byStock(standings.all(), StandingView::stockId);
         Map<Long, LimitView> inForce = byStock(limits.inForce(season), LimitView::stockId);

@@ -51,15 +51,15 @@ record PortfolioQuery(
                 && asks(species, e.stock().species())
                 && asks(standing, e.standingCode())
                 && asks(evidence, e.assessment() == null ? null : e.assessment().strength())
-                && (!given(cooperative)
-                        || e.rights().stream().anyMatch(r -> asks(cooperative, r.cooperativeCode())));
+                && (!given(cooperative) || e.rights().stream().anyMatch(r -> asks(cooperative, r.cooperativeCode())));
     }
 
     private boolean wordsIn(Entry e) {
         if (q == null || q.isBlank()) {
             return true;
         }
-        String text = (e.stock().title() + " " + e.stock().key() + " " + e.stock().district()).toLowerCase(Locale.ROOT);
+        String text =
+                (e.stock().title() + " " + e.stock().key() + " " + e.stock().district()).toLowerCase(Locale.ROOT);
         return Stream.of(q.toLowerCase(Locale.ROOT).trim().split("\\s+")).allMatch(text::contains);
     }
 

@@ -71,7 +71,8 @@ class PortfolioViews {
         lede.add(texts.get("lede.allowed", Figures.tonnes(sum(shown, Entry::limitTonnes))));
         List<UptakeView> logs =
                 shown.stream().map(Entry::uptake).filter(Objects::nonNull).toList();
-        String taken = Figures.tonnes(logs.stream().mapToDouble(UptakeView::takenKg).sum() / 1000);
+        String taken =
+                Figures.tonnes(logs.stream().mapToDouble(UptakeView::takenKg).sum() / 1000);
         LocalDate upTo = logs.stream()
                 .map(UptakeView::recordedUpTo)
                 .filter(Objects::nonNull)

@@ -86,7 +86,9 @@ record StockCurve(
 
     private static SurplusProduction law(Posterior posterior, int draw) {
         return SurplusProduction.fromReferencePoints(
-                posterior.msyTonnes()[draw], posterior.fmsyPerYear()[draw], posterior.shape()[draw]);
+                posterior.msyTonnes()[draw],
+                posterior.fmsyPerYear()[draw],
+                posterior.shape()[draw]);
     }
 
     /** Up the lower edge, down the upper one; biomasses at which most draws hold no catch end at the axis. */
@@ -97,9 +99,8 @@ record StockCurve(
         Point[] outline = new Point[2 * (BAND_STEPS + 1)];
         for (int i = 0; i <= BAND_STEPS; i++) {
             double biomass = capacity * i / BAND_STEPS;
-            double[] held = laws.stream()
-                    .mapToDouble(l -> Math.max(0, l.rate(biomass)))
-                    .toArray();
+            double[] held =
+                    laws.stream().mapToDouble(l -> Math.max(0, l.rate(biomass))).toArray();
             double[] ends = Quantiles.of(held, new double[] {0.1, 0.9});
             outline[i] = new Point(ends[0], biomass);
             outline[outline.length - 1 - i] = new Point(ends[1], biomass);

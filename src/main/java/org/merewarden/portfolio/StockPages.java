@@ -130,7 +130,9 @@ class StockPages {
         }
         links.add(link("landings", "/season/" + season + "/landings"));
         links.add(link(
-                "enter", "/landings/new?lake=" + e.stock().lake() + "&species=" + e.stock().speciesKey()));
+                "enter",
+                "/landings/new?lake=" + e.stock().lake() + "&species="
+                        + e.stock().speciesKey()));
         links.add(link("water", "/water-bodies/" + e.stock().lake()));
         links.add(link("compare", "/portfolio/compare?stock=" + e.stock().key()));
         return links;

@@ -31,7 +31,8 @@ class StockWords {
             lede.add(texts.get("stock.unsettled", String.join(" ", a.verdict())));
         }
         boolean little = e.standing() != null && e.standing().mainlyLittleKnown();
-        lede.add(texts.get(little ? "stock.stands-little" : "stock.stands", e.stock().title(), rows.standing(e)));
+        lede.add(texts.get(
+                little ? "stock.stands-little" : "stock.stands", e.stock().title(), rows.standing(e)));
         if (a != null && a.biomassTonnes() != null && a.bOverBmsy() != null) {
             lede.add(texts.get(
                     a.bOverBmsy() < 1 ? "stock.biomass-under" : "stock.biomass-above",
@@ -149,11 +150,15 @@ class StockWords {
                 rows.strength(a.strength()),
                 (int) evidence.catches().stream().map(c -> c.year()).distinct().count(),
                 evidence.surveys().size(),
-                (int) evidence.surveys().stream().map(s -> s.series()).distinct().count(),
+                (int) evidence.surveys().stream()
+                        .map(s -> s.series())
+                        .distinct()
+                        .count(),
                 (int) evidence.effort().stream().map(x -> x.year()).distinct().count(),
                 evidence.events().size()));
         sentences.addAll(a.verdict());
-        sentences.add(texts.get("basis.method", a.method(), Integer.toString(a.number()), Figures.dateTime(a.madeAt())));
+        sentences.add(
+                texts.get("basis.method", a.method(), Integer.toString(a.number()), Figures.dateTime(a.madeAt())));
         return sentences;
     }
 
