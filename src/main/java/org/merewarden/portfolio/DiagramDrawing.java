@@ -1,0 +1,49 @@
+package org.merewarden.portfolio;
+
+import java.util.stream.IntStream;
+
+/** An equilibrium diagram as SVG, for pages without script and for paper. */
+final class DiagramDrawing {
+    /** Along a branch every so many points carry the stock's marker. */
+    private static final int MARKER_EVERY = 9;
+
+    private DiagramDrawing() {}
+
+    static String large(Diagram diagram, String title) {
+        return draw(diagram, title, 680, 460);
+    }
+
+    static String small(Diagram diagram, String title) {
+        return draw(diagram, title, 300, 230);
+    }
+
+    private static String draw(Diagram diagram, String title, double width, double height) {
+        Plot plot = new Plot(width, height, 0, diagram.xMax(), diagram.yMax());
+        diagram.stocks().forEach(s -> draw(plot, s, diagram.stocks().size() > 1, diagram.xMax()));
+        return plot.svg(title, diagram.xLabel(), diagram.yLabel(), false);
+    }
+
+    private static void draw(Plot plot, Diagram.Series s, boolean several, double xMax) {
+        String line = "line" + s.style() % 8 + (s.style() < 8 ? "" : " thick");
+        if (!s.band().isEmpty()) {
+            plot.area(s.band(), "band " + line);
+        }
+        s.arrows().forEach(a -> plot.arrow(new Point(a.x(), a.y()), a.up()));
+        s.cloud().forEach(p -> plot.dot(p, 1.5, true, "cloud " + line));
+        plot.line(s.stable(), "stable " + line).line(s.unstable(), "unstable " + line, "6 4");
+        if (several) {
+            IntStream.range(0, s.stable().size())
+                    .filter(i -> i % MARKER_EVERY == MARKER_EVERY / 2)
+                    .forEach(i -> plot.marker(s.stable().get(i), s.style(), line));
+        }
+        plot.line(s.most().outline(), "range " + line).line(s.half().outline(), "range half " + line);
+        plot.dot(s.fold(), 5, false, "fold " + line).dot(s.now(), 4, true, "now " + line);
+        if (s.limit() != null) {
+            plot.tick(s.limit(), "limit " + line);
+        }
+        if (several) {
+            Point at = s.stable().get(s.stable().size() * 2 / 3);
+            plot.label(at, s.name(), at.x() < xMax / 2 ? "start" : "end");
+        }
+    }
+}

@@ -1,0 +1,88 @@
+package org.merewarden.portfolio;
+
+import java.util.List;
+import java.util.Locale;
+import org.jspecify.annotations.Nullable;
+import org.merewarden.advice.LimitView;
+import org.merewarden.advice.StandingView;
+import org.merewarden.assessment.AssessmentView;
+import org.merewarden.season.UptakeView;
+import org.merewarden.waterbody.RightView;
+import org.merewarden.waterbody.StockView;
+
+/**
+ * What the office knows of one stock in one season, side by side.
+ *
+ * @param assessment the latest; null where none is stored
+ * @param standing null where no assessment has draws
+ * @param limit the limit in force
+ * @param uptake null where the season's log has nothing on the stock
+ */
+record Entry(
+        StockView stock,
+        List<RightView> rights,
+        @Nullable AssessmentView assessment,
+        @Nullable StandingView standing,
+        @Nullable LimitView limit,
+        @Nullable UptakeView uptake) {
+    static final String UNASSESSED = "unassessed";
+
+    /** secure, watch, strained, critical or unassessed. */
+    String standingCode() {
+        return standing == null ? UNASSESSED : standing.standing().toLowerCase(Locale.ROOT);
+    }
+
+    /** Nothing may be taken, or nothing was allowed last season and nothing is decided since. */
+    boolean closed() {
+        if (limit != null) {
+            Double amount = limit.amountTonnes();
+            return amount != null && amount == 0;
+        }
+        return assessment != null && assessment.closedLastSeason();
+    }
+
+    /** (MSY − removals)/MSY; null for a closed stock, whose margin says nothing. */
+    @Nullable
+    Double margin() {
+        return standing == null || closed() ? null : standing.margin();
+    }
+
+    @Nullable
+    Double msyTonnes() {
+        return assessment == null ? null : assessment.msyTonnes();
+    }
+
+    /** MSY per hectare of the register's area, kg/ha a year. */
+    @Nullable
+    Double msyKgPerHectare() {
+        Double msy = msyTonnes();
+        return msy == null ? null : 1000 * msy / stock.areaHectares();
+    }
+
+    @Nullable
+    Double biomassOverBmsy() {
+        return assessment == null ? null : assessment.bOverBmsy();
+    }
+
+    @Nullable
+    Double limitTonnes() {
+        return limit == null ? null : limit.amountTonnes();
+    }
+
+    /** Live weight recorded in the season, t; null where there is neither a log nor a limit. */
+    @Nullable
+    Double takenTonnes() {
+        if (uptake == null) {
+            return limit == null ? null : 0.0;
+        }
+        return uptake.takenKg() / 1000;
+    }
+
+    /** Taken as a share of the amount to be logged; null without such an amount. */
+    @Nullable
+    Double takenShare() {
+        Double taken = takenTonnes();
+        Double allowed = limit == null ? null : limit.toBeLoggedTonnes();
+        return taken == null || allowed == null || allowed == 0 ? null : taken / allowed;
+    }
+}

@@ -1,0 +1,21 @@
+package org.merewarden.portfolio;
+
+import org.springframework.stereotype.Controller;
+import org.springframework.ui.Model;
+import org.springframework.web.bind.annotation.GetMapping;
+import org.springframework.web.bind.annotation.PathVariable;
+
+@Controller
+class StockController {
+    private final StockPages pages;
+
+    StockController(StockPages pages) {
+        this.pages = pages;
+    }
+
+    @GetMapping("/stocks/{lake}/{species}")
+    String page(@PathVariable String lake, @PathVariable String species, Model model) {
+        model.addAttribute("view", pages.page(lake, species));
+        return "portfolio/stock";
+    }
+}

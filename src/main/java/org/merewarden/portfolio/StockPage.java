@@ -1,0 +1,43 @@
+package org.merewarden.portfolio;
+
+import java.util.List;
+import org.jspecify.annotations.Nullable;
+
+/**
+ * One stock's page in finished strings.
+ *
+ * @param lede the answer; begins with the failure where the assessment is not settled
+ * @param equilibrium null where no assessment has draws, or the stock lives from stocking alone
+ * @param biomass null without an assessed season, as is fishing
+ * @param words fold, tipping biomass, return time
+ * @param basis what the assessment rests on; empty without one
+ */
+record StockPage(
+        String title,
+        String standingCode,
+        String standing,
+        List<String> lede,
+        @Nullable String missing,
+        @Nullable String assessAddress,
+        @Nullable Figure equilibrium,
+        List<Term> words,
+        @Nullable Figure biomass,
+        @Nullable Figure fishing,
+        List<HistoryRow> history,
+        List<Term> season,
+        String takenBar,
+        List<String> basis,
+        List<Term> estimates,
+        List<Term> regressions,
+        List<Link> assessments,
+        List<Link> links) {
+
+    /** The drawing as SVG, and its data for the script. */
+    record Figure(String id, String drawing, String json) {}
+
+    record Term(String name, String text) {}
+
+    record Link(String label, String address) {}
+
+    record HistoryRow(String season, String biomass, String fishing, String removals, String surveys) {}
+}

@@ -1,0 +1,168 @@
+package org.merewarden.portfolio;
+
+import java.util.ArrayList;
+import java.util.List;
+import org.jspecify.annotations.Nullable;
+import org.merewarden.advice.LimitView;
+import org.merewarden.advice.StandingView;
+import org.merewarden.assessment.AssessmentView;
+import org.merewarden.core.evidence.Evidence;
+import org.merewarden.season.UptakeView;
+import org.merewarden.web.Figures;
+import org.springframework.stereotype.Component;
+
+/** What is said of one stock: the answer, the words of its diagram, its season, what it rests on. */
+@Component
+class StockWords {
+    static final String STOCKED_ONLY = "stocked only";
+
+    private final Texts texts;
+    private final RowBuilder rows;
+
+    StockWords(Texts texts, RowBuilder rows) {
+        this.texts = texts;
+        this.rows = rows;
+    }
+
+    List<String> lede(Entry e, int season) {
+        List<String> lede = new ArrayList<>();
+        AssessmentView a = e.assessment();
+        if (a != null && !a.settled()) {
+            lede.add(texts.get("stock.unsettled", String.join(" ", a.verdict())));
+        }
+        boolean little = e.standing() != null && e.standing().mainlyLittleKnown();
+        lede.add(texts.get(
+                little ? "stock.stands-little" : "stock.stands", e.stock().title(), rows.standing(e)));
+        if (a != null && a.biomassTonnes() != null && a.bOverBmsy() != null) {
+            lede.add(texts.get(
+                    a.bOverBmsy() < 1 ? "stock.biomass-under" : "stock.biomass-above",
+                    Figures.tonnes(a.biomassTonnes()),
+                    Figures.sig(a.biomassLowTonnes()),
+                    Figures.tonnes(a.biomassHighTonnes())));
+        }
+        lede.add(limit(e, season));
+        lede.addAll(courses(e));
+        return lede;
+    }
+
+    private String limit(Entry e, int season) {
+        String year = Integer.toString(season);
+        LimitView limit = e.limit();
+        if (limit == null) {
+            return texts.get("stock.limit.none", year);
+        }
+        if (limit.amount() == null) {
+            return texts.get("stock.limit.measures", year);
+        }
+        boolean nothing = limit.amountTonnes() != null && limit.amountTonnes() == 0;
+        return nothing ? texts.get("stock.limit.zero", year) : texts.get("stock.limit", rows.limit(limit), year);
+    }
+
+    private List<String> courses(Entry e) {
+        StandingView s = e.standing();
+        if (e.stock().recruitment().equals(STOCKED_ONLY)) {
+            return List.of(texts.get("stock.stocked-only"));
+        }
+        if (s == null || s.removalsTonnes() == 0) {
+            return List.of();
+        }
+        return List.of(texts.get(
+                s.removalsBasis().equals("limit") ? "stock.course.limit" : "stock.course.last",
+                Figures.tonnes(s.removalsTonnes()),
+                Figures.chances(s.collapseProbability())));
+    }
+
+    /** Fold, tipping biomass and return time, each with what it means here. */
+    List<StockPage.Term> diagram(StockCurve curve) {
+        AssessmentView a = curve.assessment();
+        StandingView s = curve.entry().standing();
+        List<StockPage.Term> terms = new ArrayList<>();
+        terms.add(term(
+                "fold",
+                texts.get(
+                        "word.fold",
+                        Figures.tonnes(a.msyTonnes()),
+                        Figures.sig(a.msyLowTonnes()),
+                        Figures.tonnes(a.msyHighTonnes()),
+                        Figures.tonnes(curve.fold().y()))));
+        if (s != null) {
+            terms.add(term("tipping", tipping(s)));
+            Double years = s.returnTimeYears();
+            terms.add(term(
+                    "return",
+                    years == null ? texts.get("word.return.none") : texts.get("word.return", Figures.sig(years))));
+        }
+        return terms;
+    }
+
+    private String tipping(StandingView s) {
+        if (s.tippingBiomassTonnes() != null && s.removalsTonnes() > 0) {
+            return texts.get(
+                    "word.tipping", Figures.tonnes(s.removalsTonnes()), Figures.tonnes(s.tippingBiomassTonnes()));
+        }
+        return texts.get(s.removalsTonnes() == 0 ? "word.tipping.zero" : "word.tipping.beyond");
+    }
+
+    List<StockPage.Term> season(Entry e) {
+        List<StockPage.Term> terms = new ArrayList<>();
+        LimitView limit = e.limit();
+        Double taken = e.takenTonnes();
+        if (limit != null) {
+            terms.add(term("limit", rows.limit(limit)));
+            Double allowed = limit.toBeLoggedTonnes();
+            if (allowed != null) {
+                terms.add(term("set-asides", Figures.tonnes(limit.setAsidesTonnes())));
+                terms.add(term("to-be-logged", Figures.tonnes(allowed)));
+            }
+        }
+        terms.add(term("taken", taken == null ? texts.get("season.nothing") : Figures.tonnes(taken)));
+        Double allowed = limit == null ? null : limit.toBeLoggedTonnes();
+        if (allowed != null && taken != null) {
+            terms.add(term("left", left(allowed - taken)));
+        }
+        addRecords(terms, e.uptake());
+        return terms;
+    }
+
+    private String left(double tonnes) {
+        return tonnes < 0
+                ? texts.get("season.over", Figures.tonnes(-tonnes))
+                : texts.get("season.left", Figures.tonnes(tonnes));
+    }
+
+    private void addRecords(List<StockPage.Term> terms, @Nullable UptakeView uptake) {
+        if (uptake == null) {
+            return;
+        }
+        if (uptake.recordedUpTo() != null) {
+            terms.add(term("recorded", Figures.date(uptake.recordedUpTo())));
+        }
+        if (!uptake.silentCooperatives().isEmpty()) {
+            terms.add(term("silent", String.join(", ", uptake.silentCooperatives())));
+        }
+    }
+
+    /** Strength and why, the verdict, the method. */
+    List<String> basis(AssessmentView a, Evidence evidence) {
+        List<String> sentences = new ArrayList<>();
+        sentences.add(texts.get(
+                "basis.strength",
+                rows.strength(a.strength()),
+                (int) evidence.catches().stream().map(c -> c.year()).distinct().count(),
+                evidence.surveys().size(),
+                (int) evidence.surveys().stream()
+                        .map(s -> s.series())
+                        .distinct()
+                        .count(),
+                (int) evidence.effort().stream().map(x -> x.year()).distinct().count(),
+                evidence.events().size()));
+        sentences.addAll(a.verdict());
+        sentences.add(
+                texts.get("basis.method", a.method(), Integer.toString(a.number()), Figures.dateTime(a.madeAt())));
+        return sentences;
+    }
+
+    private StockPage.Term term(String key, String text) {
+        return new StockPage.Term(texts.get("term." + key), text);
+    }
+}

@@ -1,0 +1,38 @@
+// Draws a history (median with band, a level, bars, surveys) from the page's data in place of the server's drawing.
+import { colour, dataOf, takeOver } from "./equilibrium.js";
+
+const SHAPES = ["circle", "rect", "triangle", "rectRot", "cross", "crossRot", "star"];
+
+function datasets(h, canvas) {
+  const water = colour(canvas, 0);
+  const ink = colour(canvas, 1);
+  const line = (label, data, more) => ({ type: "line", label, data, borderColor: water, borderWidth: 2, pointRadius: 0, ...more });
+  return [
+    line(h.words.mid, h.mid),
+    line(`${h.words.band}, 10 %`, h.low, { borderWidth: 0.75 }),
+    line(`${h.words.band}, 90 %`, h.high, { borderWidth: 0.75, fill: "-1", backgroundColor: /^#[0-9a-f]{6}$/i.test(water) ? water + "33" : "transparent" }),
+    line(h.words.level, [{ x: h.from, y: h.level }, { x: h.to, y: h.level }], { borderColor: ink, borderDash: [6, 4], borderWidth: 1.5 }),
+    ...h.points.map((s, i) => line(s.name, s.points, { showLine: false, borderColor: ink, backgroundColor: "transparent", pointStyle: SHAPES[i % SHAPES.length], pointRadius: 5, borderWidth: 1.5 })),
+    ...(h.bars.length === 0 ? [] : [{ type: "bar", label: h.words.bars, data: h.bars, backgroundColor: ink, barThickness: 8 }]),
+  ];
+}
+
+function drawHistory(canvas) {
+  if (!takeOver(canvas)) return;
+  const h = dataOf(canvas);
+  new window.Chart(canvas, {
+    type: "line",
+    data: { datasets: datasets(h, canvas) },
+    options: {
+      animation: false,
+      aspectRatio: 2.2,
+      scales: {
+        x: { type: "linear", offset: false, min: h.from, max: h.to, title: { display: true, text: h.xLabel }, ticks: { stepSize: 1, maxTicksLimit: 12, callback: v => (Number.isInteger(v) ? String(v) : "") } },
+        y: { min: 0, max: h.yMax, title: { display: true, text: h.yLabel } },
+      },
+      plugins: { legend: { labels: { usePointStyle: true, color: colour(canvas, 1) } } },
+    },
+  });
+}
+
+document.querySelectorAll("canvas.history").forEach(drawHistory);
