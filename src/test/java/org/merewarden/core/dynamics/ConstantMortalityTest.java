@@ -134,6 +134,8 @@ class ConstantMortalityTest {
         ConstantMortality flow = new ConstantMortality(law, 0.1);
         assertThatThrownBy(() -> flow.after(-1, 1)).hasMessageContaining("B0 = -1.0");
         assertThatThrownBy(() -> flow.after(1, Double.NaN)).hasMessageContaining("years = NaN");
+        assertThatThrownBy(() -> flow.removals(1, -1)).hasMessageContaining("years = -1.0");
+        assertThatThrownBy(() -> flow.extinctionTime(-1)).hasMessageContaining("B0 = -1.0");
         assertThatThrownBy(() -> flow.removals(Double.NaN, 1)).hasMessageContaining("B0 = NaN");
     }
 }

@@ -33,7 +33,7 @@ class ConstantRemovalsTest {
     /** Near the fold the time is about π/(r√−Δ), and rounding H/(rK) moves Δ by 1e-16: its condition, in percent. */
     private static double nearFold(double rk, double removals) {
         double delta = 0.25 - removals / rk;
-        return (delta < 0 ? Math.max(1e-9, 1e-15 / -delta) : 1e-9) * PERCENT;
+        return (delta < 0 ? Math.max(1e-9, 1e-16 / -delta) : 1e-9) * PERCENT;
     }
 
     /** Computed values of the reference; it prints eight decimals. */
@@ -135,6 +135,7 @@ class ConstantRemovalsTest {
                 .isInstanceOf(IllegalArgumentException.class)
                 .hasMessage("n = 1 is violated: n = 2.0");
         assertThatThrownBy(() -> new ConstantRemovals(law, -5)).hasMessage("0 <= H < infinity is violated: H = -5.0");
+        assertThatThrownBy(() -> new ConstantRemovals(law, 5).after(1, -1)).hasMessageContaining("years = -1.0");
         assertThatThrownBy(() -> new ConstantRemovals(law, 5).after(-1, 1)).hasMessageContaining("B0 = -1.0");
     }
 }

@@ -152,6 +152,46 @@ class EquilibriumCurveTest {
         assertThat(curve.tippingBiomass(1)).isEmpty();
     }
 
+    @Test
+    void atAFoldTheOtherBranchIsStillThereAndOrderIsByBiomass() {
+        EquilibriumCurve curve = EquilibriumCurve.trace(new SurplusProduction(1, 10, 1), new SaturatingRemoval());
+        List<Equilibrium> found = curve.equilibria(curve.folds().get(1).harvest());
+        assertThat(found).extracting(Equilibrium::stable).containsExactly(true, false);
+        assertThat(found.get(0).biomassTonnes()).isLessThan(1.138);
+        assertThat(found.get(1).biomassTonnes()).isCloseTo(4.7812837960, within(5e-10));
+    }
+
+    /** Growth with two humps, the lower one higher: the fold harvest belongs to the upper one, found here by a scan. */
+    @Test
+    void theFoldHarvestIsThatOfTheUpperBranch() {
+        GrowthLaw humps = new GrowthLaw() {
+            @Override
+            public double rate(double b) {
+                return b * (10 - b) * (10 - b) * (1.1 - Math.cos(2 * Math.PI * b / 5));
+            }
+
+            @Override
+            public double slope(double b) {
+                double wave = 1.1 - Math.cos(2 * Math.PI * b / 5);
+                return (10 - b) * (10 - 3 * b) * wave
+                        + b * (10 - b) * (10 - b) * 2 * Math.PI / 5 * Math.sin(2 * Math.PI * b / 5);
+            }
+
+            @Override
+            public double capacity() {
+                return 10;
+            }
+        };
+        double upper = 0;
+        for (double b = 5; b < 10; b += 1e-5) {
+            upper = Math.max(upper, humps.rate(b));
+        }
+        EquilibriumCurve curve = EquilibriumCurve.trace(humps, CONSTANT_CATCH);
+        assertThat(curve.folds()).extracting(Fold::maximum).containsExactly(true, false, true);
+        assertThat(curve.folds().get(0).harvest()).isGreaterThan(1.5 * upper);
+        assertThat(curve.foldHarvest()).hasValueCloseTo(upper, withinPercentage(1e-7));
+    }
+
     /** Dennis: u*(B) = r (1 − b) b/(b + d) is largest at b = √(d² + d) − d. */
     @ParameterizedTest
     @ValueSource(doubles = {1e-6, 1e-3, 0.1, 0.5})
@@ -192,7 +232,7 @@ class EquilibriumCurveTest {
         });
     }
 
-    /** A rule that doubles its bite above 600 t: u* jumps in slope from rising to falling at the kink. */
+    /** A rule that bites harder above 400 t: u* turns there from rising to falling with a corner. */
     @Test
     void aKinkCanBeAFold() {
         HarvestRule rule = new HarvestRule() {
