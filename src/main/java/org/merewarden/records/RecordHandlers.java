@@ -1,0 +1,47 @@
+package org.merewarden.records;
+
+import org.merewarden.waterbody.Register;
+import org.springframework.context.annotation.Bean;
+import org.springframework.context.annotation.Configuration;
+
+/** One handler for each table of evidence. */
+@Configuration
+class RecordHandlers {
+    private final RecordStore store;
+    private final Register register;
+
+    RecordHandlers(RecordStore store, Register register) {
+        this.store = store;
+        this.register = register;
+    }
+
+    @Bean
+    RecordHandler catchHandler() {
+        return new RecordHandler(RecordTables.CATCHES, RecordRules.NONE, store, register);
+    }
+
+    @Bean
+    RecordHandler effortHandler() {
+        return new RecordHandler(RecordTables.EFFORT, RecordRules.NONE, store, register);
+    }
+
+    @Bean
+    RecordHandler surveyHandler() {
+        return new RecordHandler(RecordTables.SURVEYS, RecordRules::survey, store, register);
+    }
+
+    @Bean
+    RecordHandler eventHandler() {
+        return new RecordHandler(RecordTables.EVENTS, RecordRules::event, store, register);
+    }
+
+    @Bean
+    RecordHandler areaHandler() {
+        return new RecordHandler(RecordTables.AREAS, RecordRules.NONE, store, register);
+    }
+
+    @Bean
+    RecordHandler priorHandler() {
+        return new RecordHandler(RecordTables.PRIORS, RecordRules.NONE, store, register);
+    }
+}
