@@ -101,20 +101,21 @@ public final class Figures {
 
     /**
      * A fraction that people can picture: between a tenth and nine tenths the smallest denominator up to ten that comes
-     * within two points, else one (or all but one) of so many.
+     * within two points and within a tenth of the rarer side, else one (or all but one) of so many.
      */
     private static int[] fraction(double p) {
         if (p < 0.1 || p > 0.9) {
             int of = round(1 / Math.min(p, 1 - p));
             return new int[] {p < 0.5 ? 1 : of - 1, of};
         }
+        double near = Math.min(0.02, 0.1 * Math.min(p, 1 - p));
         int[] best = {1, 2};
         for (int of = 2; of <= 10; of++) {
             int part = (int) Math.max(1, Math.min(of - 1, Math.rint(p * of)));
             if (error(p, part, of) < error(p, best[0], best[1]) - 1e-12) {
                 best = new int[] {part, of};
             }
-            if (error(p, best[0], best[1]) <= 0.02) {
+            if (error(p, best[0], best[1]) <= near) {
                 return best;
             }
         }

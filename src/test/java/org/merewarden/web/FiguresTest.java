@@ -1,0 +1,115 @@
+package org.merewarden.web;
+
+import static org.assertj.core.api.Assertions.assertThat;
+
+import java.time.Instant;
+import java.time.LocalDate;
+import java.util.Locale;
+import java.util.TimeZone;
+import org.junit.jupiter.api.AfterEach;
+import org.junit.jupiter.api.BeforeEach;
+import org.junit.jupiter.api.Test;
+import org.junit.jupiter.params.ParameterizedTest;
+import org.junit.jupiter.params.provider.CsvSource;
+import org.springframework.context.i18n.LocaleContextHolder;
+
+/** Expected texts are written by hand from the manners of the product: three digits, intervals, frequencies. */
+class FiguresTest {
+    @BeforeEach
+    void reader() {
+        LocaleContextHolder.setLocale(Locale.UK);
+    }
+
+    @AfterEach
+    void nobody() {
+        LocaleContextHolder.resetLocaleContext();
+    }
+
+    @ParameterizedTest
+    @CsvSource({
+        "12.44, 12.4",
+        "12.0, 12",
+        "0.045678, 0.0457",
+        "'1234.4', '1,230'",
+        "'98765432', '98,800,000'",
+        "0, 0",
+        "-3.14159, -3.14",
+        "999.6, '1,000'",
+        "0.00000123, 0.00000123"
+    })
+    void threeSignificantDigits(double value, String text) {
+        assertThat(Figures.sig(value)).isEqualTo(text);
+    }
+
+    @Test
+    void separatorsFollowTheReader() {
+        LocaleContextHolder.setLocale(Locale.GERMANY);
+        assertThat(Figures.sig(12.44)).isEqualTo("12,4");
+        assertThat(Figures.sig(1234.4)).isEqualTo("1.230");
+    }
+
+    @Test
+    void theUnknownIsADash() {
+        assertThat(Figures.sig(null)).isEqualTo("—");
+        assertThat(Figures.sig(Double.NaN)).isEqualTo("—");
+        assertThat(Figures.tonnes(null)).isEqualTo("—");
+        assertThat(Figures.percent(Double.NaN)).isEqualTo("—");
+        assertThat(Figures.chances(null)).isEqualTo("—");
+        assertThat(Figures.date(null)).isEqualTo("—");
+        assertThat(Figures.dateTime(null)).isEqualTo("—");
+    }
+
+    @Test
+    void tonnesStayWithTheirUnitOnOneLine() {
+        assertThat(Figures.tonnes(12.44)).isEqualTo("12.4\u00a0t");
+    }
+
+    @Test
+    void intervals() {
+        assertThat(Figures.interval(12.4, 8.1, 19.0)).isEqualTo("12.4 (8.1–19)");
+        assertThat(Figures.interval(12.4, null, 19.0)).isEqualTo("12.4");
+        assertThat(Figures.interval(null, 1.0, 2.0)).isEqualTo("—");
+    }
+
+    @ParameterizedTest
+    @CsvSource({"0.8, 80%", "0, 0%", "1, 100%", "0.001, <1%", "0.999, >99%", "-0.123, -12%", "0.005, 0%", "1.2, 120%"})
+    void percent(double share, String text) {
+        assertThat(Figures.percent(share)).isEqualTo(text);
+    }
+
+    @ParameterizedTest
+    @CsvSource({
+        "0.1667, about 1 of 6 cases",
+        "0.11, about 1 of 9 cases",
+        "0.5, about 1 of 2 cases",
+        "0.6, about 3 of 5 cases",
+        "0.83, about 5 of 6 cases",
+        "0.04, about 1 of 25 cases",
+        "0.0123, about 1 of 81 cases",
+        "0.97, about 32 of 33 cases",
+        "0.0005, 'fewer than 1 of 1,000 cases'",
+        "0.9999, 'more than 999 of 1,000 cases'",
+        "0, none of the cases",
+        "1, all cases"
+    })
+    void chancesAsFrequencies(double probability, String text) {
+        assertThat(Figures.chances(probability)).isEqualTo(text);
+    }
+
+    /** Between a tenth and nine tenths the picture is never more than three points off; the law holds for every per mille. */
+    @Test
+    void chancesAreCloseToTheProbability() {
+        for (int i = 100; i <= 900; i++) {
+            String[] words = Figures.chances(i / 1000.0).split(" ");
+            double said = Double.parseDouble(words[1]) / Double.parseDouble(words[3]);
+            assertThat(said).as(String.join(" ", words)).isBetween(i / 1000.0 - 0.03, i / 1000.0 + 0.03);
+        }
+    }
+
+    @Test
+    void datesAndMomentsInTheReadersWordsAndTheOfficesTime() {
+        LocaleContextHolder.setTimeZone(TimeZone.getTimeZone("America/Winnipeg"));
+        assertThat(Figures.date(LocalDate.of(2026, 9, 3))).isEqualTo("3 Sept 2026");
+        assertThat(Figures.dateTime(Instant.parse("2026-09-03T03:05:00Z"))).isEqualTo("2 Sept 2026, 22:05");
+    }
+}
