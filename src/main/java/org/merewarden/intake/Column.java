@@ -11,7 +11,7 @@ import org.jspecify.annotations.Nullable;
  * @param required may not be empty (a key column with a default may)
  * @param defaultValue text that stands for an empty cell; null: empty means unknown
  * @param min smallest number allowed, −∞ without a bound
- * @param max greatest number allowed, +∞ without a bound
+ * @param max greatest number allowed, +∞ without a bound; for TEXT and CODE the most characters
  * @param choices allowed words; empty: any
  * @param description one sentence for the template and the Table Schema
  */
@@ -36,13 +36,14 @@ public record Column(
         DATE
     }
 
+    /** Up to 500 characters unless {@link #atMost} says otherwise. */
     public static Column text(String name, String description) {
-        return of(name, Kind.TEXT, description);
+        return of(name, Kind.TEXT, description).atMost(500);
     }
 
-    /** A code: trimmed, without spaces; case is kept. */
+    /** A code of up to 60 characters: trimmed, without spaces; case is kept. */
     public static Column code(String name, String description) {
-        return of(name, Kind.CODE, description);
+        return of(name, Kind.CODE, description).atMost(60);
     }
 
     public static Column number(String name, String description) {
@@ -90,6 +91,11 @@ public record Column(
 
     public Column between(double least, double greatest) {
         return new Column(name, kind, key, required, defaultValue, least, greatest, choices, description);
+    }
+
+    /** The most characters of a text or code: what the store's column holds. */
+    public Column atMost(int characters) {
+        return between(0, characters);
     }
 
     public Column oneOf(String... words) {

@@ -1,6 +1,8 @@
 package org.merewarden.intake;
 
 import java.util.List;
+import java.util.Set;
+import java.util.stream.Collectors;
 
 /**
  * One table of the import formats.
@@ -13,5 +15,21 @@ import java.util.List;
 public record TableDefinition(String name, String title, int order, List<Column> columns) {
     public TableDefinition {
         columns = List.copyOf(columns);
+    }
+
+    List<Column> keys() {
+        return columns.stream().filter(Column::key).toList();
+    }
+
+    Set<String> columnNames() {
+        return columns.stream().map(Column::name).collect(Collectors.toUnmodifiableSet());
+    }
+
+    /** The columns that every file of this table has to have. */
+    List<String> requiredNames() {
+        return columns.stream()
+                .filter(c -> c.required() && c.defaultValue() == null)
+                .map(Column::name)
+                .toList();
     }
 }

@@ -1,0 +1,4 @@
+package org.merewarden.intake;
+
+/** A file as it came. */
+record Upload(String fileName, byte[] content) {}
