@@ -1,6 +1,5 @@
 package org.merewarden.advice;
 
-import static org.merewarden.intake.Column.code;
 import static org.merewarden.intake.Column.date;
 import static org.merewarden.intake.Column.number;
 import static org.merewarden.intake.Column.text;
@@ -17,6 +16,7 @@ import java.util.Objects;
 import java.util.Optional;
 import java.util.function.Function;
 import java.util.stream.Collectors;
+import java.util.stream.Stream;
 import org.jspecify.annotations.Nullable;
 import org.merewarden.core.evidence.CatchRecord;
 import org.merewarden.intake.Batch;
@@ -28,7 +28,7 @@ import org.merewarden.intake.TableHandler;
 import org.merewarden.intake.TableRow;
 import org.merewarden.records.EvidenceReader;
 import org.merewarden.waterbody.Register;
-import org.merewarden.waterbody.StockView;
+import org.merewarden.waterbody.StockReferences;
 import org.merewarden.web.Seasons;
 import org.springframework.jdbc.core.simple.JdbcClient;
 import org.springframework.stereotype.Component;
@@ -43,10 +43,7 @@ class LimitsTable implements TableHandler {
             "limits",
             "Limits issued on paper",
             120,
-            List.of(
-                    code("water_body", "code of the water body").asKey(),
-                    code("species", "FAO three-letter code").asKey(),
-                    code("population", "only where a water holds two stocks of one species"),
+            Stream.concat(StockReferences.columns().stream(), Stream.of(
                     year("season", "season for which the limit holds").asKey(),
                     date("issued_on", "day of the decision").asKey(),
                     text("kind", "what is limited").orElse("catch").oneOf("catch", "effort", "measures only"),
@@ -59,7 +56,7 @@ class LimitsTable implements TableHandler {
                     date("valid_to", "last day; empty: the season's last"),
                     text("measures", "sizes, mesh, closed times, as text"),
                     text("legal_basis", "law or ordinance"),
-                    text("reason", "why this limit")));
+                    text("reason", "why this limit"))).toList());
 
     private final JdbcClient jdbc;
     private final Register register;
@@ -93,32 +90,26 @@ class LimitsTable implements TableHandler {
 
     @Override
     public List<Fate> examine(List<TableRow> rows, Batch batch) {
-        Map<String, StockView> stocks = stocks();
+        StockReferences references = StockReferences.of(register);
         Map<String, Stored> stored = stored();
-        return rows.stream().map(row -> fate(row, stocks, stored, batch)).toList();
+        return rows.stream().map(row -> fate(row, references, stored, batch)).toList();
     }
 
-    private Fate fate(TableRow row, Map<String, StockView> stocks, Map<String, Stored> stored, Batch batch) {
-        StockView stock = stocks.get(stockKey(row));
-        if (stock == null
-                && !batch.brings(
-                        "stocks", row.need("water_body"), row.need("species"), row.textOrEmpty("population"))) {
-            return Fate.refused(new Problem(
-                    "species",
-                    row.need("species"),
-                    "no stock " + row.need("species") + " is registered in " + row.need("water_body")
-                            + "; register it or import stocks first"));
+    private Fate fate(TableRow row, StockReferences references, Map<String, Stored> stored, Batch batch) {
+        Problem unknown = references.stockProblem(row, batch);
+        if (unknown != null) {
+            return Fate.refused(unknown);
         }
         Optional<Problem> problem = problem(row);
         if (problem.isPresent()) {
             return Fate.refused(problem.get());
         }
-        Stored earlier = stock == null ? null : stored.get(key(stock.id(), row));
+        Stored earlier =
+                references.stock(row).map(stock -> stored.get(key(stock.id(), row))).orElse(null);
         if (earlier == null) {
             return Fate.NEW;
         }
-        boolean same = sameContent(earlier, row);
-        return same
+        return sameContent(earlier, row)
                 ? Fate.SAME
                 : Fate.refused(new Problem(
                         "issued_on",
@@ -183,13 +174,13 @@ class LimitsTable implements TableHandler {
 
     @Override
     public void store(List<TableRow> rows, Provenance provenance) {
-        Map<String, StockView> stocks = stocks();
+        StockReferences references = StockReferences.of(register);
         Map<Long, Double> reported = new HashMap<>();
         rows.stream()
                 .sorted(Comparator.comparing(row -> Objects.requireNonNull(row.date("issued_on"))))
                 .forEach(row -> {
                     long stock =
-                            Objects.requireNonNull(stocks.get(stockKey(row))).id();
+                            references.stock(row).orElseThrow().id();
                     store(row, stock, reported.computeIfAbsent(stock, this::reportedFraction), provenance);
                 });
         reported.keySet().forEach(standings::refresh);
@@ -241,15 +232,6 @@ class LimitsTable implements TableHandler {
                 .max(Comparator.comparingInt(CatchRecord::year))
                 .map(CatchRecord::reportedFraction)
                 .orElse(1.0);
-    }
-
-    private Map<String, StockView> stocks() {
-        return register.stocks().stream().collect(Collectors.toMap(StockView::key, Function.identity()));
-    }
-
-    private static String stockKey(TableRow row) {
-        String population = row.textOrEmpty("population");
-        return row.need("water_body") + ":" + row.need("species") + (population.isEmpty() ? "" : "." + population);
     }
 
     private Map<String, Stored> stored() {

@@ -67,11 +67,12 @@ class Examiner {
 
     private record Place(int file, int row) {}
 
-    private final class Work {
+    private final class Work implements Batch {
         private final List<ImportedFile> files;
         private final List<@Nullable String> problems;
         private final List<Fate[]> fates;
-        private final Map<String, Set<List<String>>> brought = new HashMap<>();
+        private final Map<String, Set<List<String>>> broughtKeys = new HashMap<>();
+        private final Map<String, List<TableRow>> broughtRows = new HashMap<>();
 
         Work(List<ImportedFile> files) {
             this.files = files;
@@ -91,18 +92,20 @@ class Examiner {
             List<TableRow> rows = new ArrayList<>();
             List<Place> places = new ArrayList<>();
             read(table, rows, places);
-            List<Fate> found = rows.isEmpty() ? List.of() : handler.examine(List.copyOf(rows), this::brings);
+            List<Fate> found = rows.isEmpty() ? List.of() : handler.examine(List.copyOf(rows), this);
             if (found.size() != rows.size()) {
                 throw new IllegalStateException(
                         "the handler of " + table.name() + " gave " + found.size() + " fates for " + rows.size());
             }
             List<TableRow> toStore = new ArrayList<>();
-            Set<List<String>> keys = brought.computeIfAbsent(table.name(), t -> new HashSet<>());
+            Set<List<String>> keys = broughtKeys.computeIfAbsent(table.name(), t -> new HashSet<>());
+            List<TableRow> accepted = broughtRows.computeIfAbsent(table.name(), t -> new ArrayList<>());
             for (int i = 0; i < rows.size(); i++) {
                 Fate fate = shortened(found.get(i));
                 fates.get(places.get(i).file())[places.get(i).row()] = fate;
                 if (fate.kind() != Fate.Kind.REFUSED) {
                     keys.add(key(table, rows.get(i)));
+                    accepted.add(rows.get(i));
                 }
                 if (fate.kind() == Fate.Kind.NEW || fate.kind() == Fate.Kind.CHANGED) {
                     toStore.add(rows.get(i));
@@ -124,8 +127,14 @@ class Examiner {
             return result;
         }
 
-        private boolean brings(String table, String... keys) {
-            return brought.getOrDefault(table, Set.of()).contains(List.of(keys));
+        @Override
+        public boolean brings(String table, String... keys) {
+            return broughtKeys.getOrDefault(table, Set.of()).contains(List.of(keys));
+        }
+
+        @Override
+        public List<TableRow> rows(String table) {
+            return List.copyOf(broughtRows.getOrDefault(table, List.of()));
         }
 
         private void read(TableDefinition table, List<TableRow> rows, List<Place> places) {

@@ -117,8 +117,15 @@ class LandingsTable implements TableHandler {
         return switch (problem.column()) {
             case "water_body" -> batch.brings("water-bodies", entry.lake());
             case "cooperative" -> batch.brings("cooperatives", Objects.requireNonNullElse(entry.cooperative(), ""));
+            case "presentation" -> batch.rows("conversions").stream().anyMatch(row -> converts(row, entry));
             default -> false;
         };
+    }
+
+    private static boolean converts(TableRow conversion, Entry entry) {
+        return conversion.need("species").equalsIgnoreCase(entry.species())
+                && conversion.need("presentation").equalsIgnoreCase(entry.presentation())
+                && !Objects.requireNonNull(conversion.date("valid_from")).isAfter(entry.landedOn());
     }
 
     private static Problem taken(LandingRow before) {
