@@ -64,7 +64,7 @@ class AccountPages {
             RedirectAttributes next,
             HttpServletResponse response) {
         String username = SignInGuard.name(form.getUsername());
-        AccountForm.checkUsername(username, errors);
+        AccountForm.checkUsername(form.getUsername(), errors);
         form.checkWaters(errors);
         Passwords.check(form.getPassword(), "password", errors);
         if (accounts.exists(username)) {
