@@ -55,7 +55,9 @@ public class StatementCount implements BeanPostProcessor {
 
         private static Connection counting(Connection connection) {
             return (Connection) Proxy.newProxyInstance(
-                    Connection.class.getClassLoader(), new Class<?>[] {Connection.class}, (proxy, method, arguments) -> {
+                    Connection.class.getClassLoader(),
+                    new Class<?>[] {Connection.class},
+                    (proxy, method, arguments) -> {
                         if (PREPARES.contains(method.getName())) {
                             PREPARED.get()[0]++;
                         }

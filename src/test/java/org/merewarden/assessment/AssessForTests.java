@@ -15,8 +15,7 @@ public class AssessForTests {
     private final AssessmentStore store;
     private final ApplicationEventPublisher events;
 
-    AssessForTests(
-            EvidenceReader reader, Assessor assessor, AssessmentStore store, ApplicationEventPublisher events) {
+    AssessForTests(EvidenceReader reader, Assessor assessor, AssessmentStore store, ApplicationEventPublisher events) {
         this.reader = reader;
         this.assessor = assessor;
         this.store = store;

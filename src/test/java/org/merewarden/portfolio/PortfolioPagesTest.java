@@ -53,7 +53,7 @@ class PortfolioPagesTest {
     }
 
     private String page(String address) throws Exception {
-        return mvc.perform(get(address).with(user("b").roles("BIOLOGIST")))
+        return mvc.perform(get(java.net.URI.create(address)).with(user("b").roles("BIOLOGIST")))
                 .andExpect(status().isOk())
                 .andReturn()
                 .getResponse()
@@ -79,13 +79,18 @@ class PortfolioPagesTest {
         assertThat(lakes(page("/portfolio?q=portfoliomere&sort=water&dir=desc")))
                 .endsWith("pf-chalk", "pf-basalt", "pf-amber");
         assertThat(lakes(page("/portfolio?q=portfoliomere+amber"))).containsExactly("pf-amber");
-        assertThat(lakes(page("/portfolio?q=portfoliomere&standing=unassessed"))).contains("pf-chalk");
+        assertThat(lakes(page("/portfolio?q=portfoliomere&standing=unassessed")))
+                .contains("pf-chalk");
     }
 
     @Test
     void anUnassessedStockIsSortedLastEitherWay() throws Exception {
-        assertThat(lakes(page("/portfolio?q=portfoliomere+a&sort=msy&dir=asc"))).last().isEqualTo("pf-chalk");
-        assertThat(lakes(page("/portfolio?q=portfoliomere+a&sort=msy&dir=desc"))).last().isEqualTo("pf-chalk");
+        assertThat(lakes(page("/portfolio?q=portfoliomere+a&sort=msy&dir=asc")))
+                .last()
+                .isEqualTo("pf-chalk");
+        assertThat(lakes(page("/portfolio?q=portfoliomere+a&sort=msy&dir=desc")))
+                .last()
+                .isEqualTo("pf-chalk");
     }
 
     @Test
@@ -102,8 +107,9 @@ class PortfolioPagesTest {
                 .isEqualTo(shown);
         mvc.perform(get("/portfolio.xlsx" + query).with(user("b").roles("BIOLOGIST")))
                 .andExpect(status().isOk())
-                .andExpect(content().contentTypeCompatibleWith(
-                        "application/vnd.openxmlformats-officedocument.spreadsheetml.sheet"));
+                .andExpect(content()
+                        .contentTypeCompatibleWith(
+                                "application/vnd.openxmlformats-officedocument.spreadsheetml.sheet"));
     }
 
     @Test
@@ -161,7 +167,8 @@ class PortfolioPagesTest {
             long stock = region.stock(region.lake("pf-many-" + i, "Portfoliomere Zz" + i), "FPE");
             region.limit(stock, 2026, 5);
         }
-        int many = StatementCount.during(() -> assertThat(lakes(page("/portfolio"))).hasSizeGreaterThanOrEqualTo(60));
+        int many = StatementCount.during(
+                () -> assertThat(lakes(page("/portfolio"))).hasSizeGreaterThanOrEqualTo(60));
         assertThat(few).isPositive();
         assertThat(many).isEqualTo(few);
     }
