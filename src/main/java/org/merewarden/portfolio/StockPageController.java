@@ -6,10 +6,10 @@ import org.springframework.web.bind.annotation.GetMapping;
 import org.springframework.web.bind.annotation.PathVariable;
 
 @Controller
-class StockController {
+class StockPageController {
     private final StockPages pages;
 
-    StockController(StockPages pages) {
+    StockPageController(StockPages pages) {
         this.pages = pages;
     }
 
