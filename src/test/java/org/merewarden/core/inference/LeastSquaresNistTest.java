@@ -76,7 +76,12 @@ class LeastSquaresNistTest {
         Dataset set = Dataset.read("Misra1a");
         double[] start = {250, 0.5};
         Fit plain = LeastSquares.fit(
-                set.residuals(CURVES.get("Misra1a")), start, all(2, false), all(2, true), Rung.LEVENBERG_MARQUARDT);
+                set.residuals(CURVES.get("Misra1a")),
+                start,
+                all(2, false),
+                all(2, true),
+                Rung.LEVENBERG_MARQUARDT,
+                LeastSquares.SHARP);
         assertThat(plain.converged()).isFalse();
         assertThat(plain.reason()).isNotEmpty();
         assertThat(plain.standardErrors()).containsOnly(Double.NaN);
@@ -103,7 +108,8 @@ class LeastSquaresNistTest {
                 new double[] {150, 0.001},
                 new double[] {100, 1e-5},
                 new double[] {200, 1e-1},
-                Rung.FURTHER_STARTS);
+                Rung.FURTHER_STARTS,
+                LeastSquares.SHARP);
         assertThat(fit.converged()).as(fit.reason()).isTrue();
         assertThat(fit.atBound()).containsExactly(true, false);
         assertThat(fit.parameters()[0]).isEqualTo(200, offset(1e-2));
