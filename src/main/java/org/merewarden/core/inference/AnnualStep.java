@@ -37,6 +37,16 @@ final class AnnualStep {
         return n == 0 ? -r * biomass * logFraction : -(r / n) * biomass * Math.expm1(n * logFraction);
     }
 
+    /** ∂g/∂ln K = r B (B/K)^n. */
+    static double growthByLogCapacity(double biomass, double r, double capacity, double n) {
+        return r * biomass * (n == 1 ? biomass / capacity : Math.pow(biomass / capacity, n));
+    }
+
+    /** ∂g/∂B = g/B − r (B/K)^n. */
+    static double growthByBiomass(double biomass, double r, double capacity, double n) {
+        return (growth(biomass, r, capacity, n) - growthByLogCapacity(biomass, r, capacity, n)) / biomass;
+    }
+
     /** B⁺: biomass after stocking and fish kill, t. */
     static double afterEvents(double biomass, double stockedTonnes, double killedFraction) {
         return (biomass + stockedTonnes) * (1 - killedFraction);

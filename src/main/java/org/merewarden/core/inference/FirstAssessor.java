@@ -34,6 +34,7 @@ public final class FirstAssessor implements Assessor {
     static final int LEAST_SEASONS = 5;
     private static final double LARGEST_START = 1.5;
     private static final double LARGEST_SHAPE = 4;
+    private static final double LARGEST_PROCESS_SD = 1;
 
     private final PriorOnlyAssessor priorOnly = new PriorOnlyAssessor();
 
@@ -96,7 +97,10 @@ public final class FirstAssessor implements Assessor {
                 .filter(p -> p.logSd() == 0)
                 .map(p -> Math.min(LARGEST_SHAPE, p.median()))
                 .orElse(1.0);
-        return new ObservationErrorFit(seasons, data, fraction, shape).assess(seed, opening);
+        double processSd = Priors.own(evidence, "process_sd")
+                .map(p -> Math.min(LARGEST_PROCESS_SD, p.median()))
+                .orElse(ObservationErrorFit.DEFAULT_PROCESS_SD);
+        return new ObservationErrorFit(seasons, data, fraction, shape, processSd).assess(seed, opening);
     }
 
     private static Posterior stockedOnly(int lastClosedYear) {

@@ -1,6 +1,7 @@
 package org.merewarden.core.inference;
 
 import java.util.Arrays;
+import java.util.random.RandomGenerator;
 
 /**
  * Residuals of the observation-error model at (ln r, ln K).
@@ -25,6 +26,7 @@ import java.util.Arrays;
  */
 final class ObservationErrorModel implements LeastSquares.Residuals {
     private static final double FLOOR = 0.001;
+    private static final int PATHS = 20;
     private static final double LACK_WEIGHT = 30;
 
     private final SeasonSeries seasons;
@@ -35,6 +37,9 @@ final class ObservationErrorModel implements LeastSquares.Residuals {
     private final double[] biomass;
     private final double[] afterEvents;
     private final double[] logQ;
+    private final double[] meanSlope;
+    private final double[][] slope;
+    private final double[] lackSlope = new double[2];
     private final int[] perSeries;
     private double lack;
 
@@ -47,6 +52,8 @@ final class ObservationErrorModel implements LeastSquares.Residuals {
         biomass = new double[seasons.seasons() + 1];
         afterEvents = new double[seasons.seasons()];
         logQ = new double[data.seriesNames().size()];
+        meanSlope = new double[logQ.length];
+        slope = new double[biomass.length][2];
         perSeries = new int[logQ.length];
         for (int series : data.series()) {
             if (series >= 0) {
@@ -81,24 +88,105 @@ final class ObservationErrorModel implements LeastSquares.Residuals {
         residuals[logValue.length] = LACK_WEIGHT * lack;
     }
 
-    private void run(double r, double capacity) {
-        double floor = FLOOR * capacity;
-        lack = 0;
-        biomass[0] = startFraction * capacity;
-        for (int t = 0; t < afterEvents.length; t++) {
-            afterEvents[t] = AnnualStep.afterEvents(biomass[t], seasons.stocked()[t], seasons.killed()[t]);
-            double next = AnnualStep.next(afterEvents[t], seasons.removals()[t], r, capacity, shape);
-            if (next < floor) {
-                lack += (floor - next) / capacity;
-                next = floor / (2 - next / floor);
+    /** Exact derivatives: near a collapse the path bends too sharply for differences. */
+    @Override
+    public boolean jacobian(double[] parameters, double[][] jacobian) {
+        run(Math.exp(parameters[0]), Math.exp(parameters[1]));
+        for (int j = 0; j < 2; j++) {
+            Arrays.fill(meanSlope, 0);
+            for (int i = 0; i < logValue.length; i++) {
+                int t = data.season()[i];
+                double tau = data.timeOfYear()[i];
+                double start = slope[t][j] * (1 - seasons.killed()[t]) / afterEvents[t];
+                jacobian[i][j] = -(1 - tau) * start - tau * slope[t + 1][j] / biomass[t + 1];
+                int series = data.series()[i];
+                if (series >= 0) {
+                    meanSlope[series] += jacobian[i][j] / perSeries[series];
+                }
             }
-            biomass[t + 1] = next;
+            for (int i = 0; i < logValue.length; i++) {
+                int series = data.series()[i];
+                jacobian[i][j] -= series >= 0 ? meanSlope[series] : 0;
+            }
+            jacobian[logValue.length][j] = LACK_WEIGHT * lackSlope[j];
         }
+        return true;
+    }
+
+    /** The path and its derivatives with respect to ln r and ln K. */
+    private void run(double r, double capacity) {
+        lack = 0;
+        lackSlope[0] = 0;
+        lackSlope[1] = 0;
+        biomass[0] = startFraction * capacity;
+        slope[0][0] = 0;
+        slope[0][1] = biomass[0];
+        for (int t = 0; t < afterEvents.length; t++) {
+            double kept = 1 - seasons.killed()[t];
+            double plus = AnnualStep.afterEvents(biomass[t], seasons.stocked()[t], seasons.killed()[t]);
+            double steepness = 1 + AnnualStep.growthByBiomass(plus, r, capacity, shape);
+            afterEvents[t] = plus;
+            biomass[t + 1] = AnnualStep.next(plus, seasons.removals()[t], r, capacity, shape);
+            slope[t + 1][0] = steepness * kept * slope[t][0] + AnnualStep.growth(plus, r, capacity, shape);
+            slope[t + 1][1] = steepness * kept * slope[t][1] + AnnualStep.growthByLogCapacity(plus, r, capacity, shape);
+            if (biomass[t + 1] < FLOOR * capacity) {
+                hold(t + 1, capacity);
+            }
+        }
+    }
+
+    /** Replaces a biomass y below the floor f by f/(2 − y/f), which is positive and joins smoothly. */
+    private void hold(int t, double capacity) {
+        double floor = FLOOR * capacity;
+        double y = biomass[t];
+        double shrink = 1 / (2 - y / floor);
+        lack += (floor - y) / capacity;
+        lackSlope[0] -= slope[t][0] / capacity;
+        lackSlope[1] -= (slope[t][1] - y) / capacity;
+        biomass[t] = floor * shrink;
+        slope[t][0] *= shrink * shrink;
+        slope[t][1] = biomass[t] + shrink * shrink * (slope[t][1] - y);
     }
 
     /** Whether the removals could be taken on the last path that was run. */
     boolean admissible() {
         return lack == 0;
+    }
+
+    /**
+     * Expected ln observations, up to a constant per series, on a path from (ln r, ln K) with natural variation: each
+     * season's end is multiplied by exp(N(0, sd)). A path on which the removals could not be taken is drawn again; after
+     * {@value #PATHS} of them the path without variation serves.
+     */
+    void resample(double[] parameters, double processSd, RandomGenerator random, double[] expected) {
+        double r = Math.exp(parameters[0]);
+        double capacity = Math.exp(parameters[1]);
+        double sd = processSd;
+        for (int path = 0; path <= PATHS; path++) {
+            sd = path == PATHS ? 0 : processSd;
+            if (varied(r, capacity, sd, random)) {
+                break;
+            }
+        }
+        for (int i = 0; i < expected.length; i++) {
+            int t = data.season()[i];
+            double tau = data.timeOfYear()[i];
+            expected[i] = (1 - tau) * Math.log(afterEvents[t]) + tau * Math.log(biomass[t + 1]);
+        }
+    }
+
+    private boolean varied(double r, double capacity, double sd, RandomGenerator random) {
+        biomass[0] = startFraction * capacity;
+        for (int t = 0; t < afterEvents.length; t++) {
+            double plus = AnnualStep.afterEvents(biomass[t], seasons.stocked()[t], seasons.killed()[t]);
+            double next = AnnualStep.next(plus, seasons.removals()[t], r, capacity, shape);
+            afterEvents[t] = plus;
+            biomass[t + 1] = Math.max(next, FLOOR * capacity) * Math.exp(sd * random.nextGaussian());
+            if (sd > 0 && next < FLOOR * capacity) {
+                return false;
+            }
+        }
+        return true;
     }
 
     /** Replaces the logarithms of the observations, for a refit to resampled data. */

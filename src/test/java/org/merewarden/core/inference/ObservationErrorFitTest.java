@@ -5,6 +5,7 @@ import static org.assertj.core.data.Offset.offset;
 import static org.assertj.core.data.Percentage.withPercentage;
 
 import java.util.Map;
+import java.util.SplittableRandom;
 import org.junit.jupiter.api.Test;
 import org.merewarden.core.evidence.Evidence;
 
@@ -35,24 +36,40 @@ class ObservationErrorFitTest {
         assertThat(posterior.verdict().settled())
                 .as(posterior.verdict().toString())
                 .isTrue();
-        assertThat(posterior.strength()).isEqualTo(EvidenceStrength.STRONG);
+        assertThat(posterior.strength()).isIn(EvidenceStrength.STRONG, EvidenceStrength.FAIR);
         assertThat(posterior.seasons()).isEqualTo(23);
         assertThat(posterior.firstYear()).isEqualTo(1967);
     }
 
     /**
-     * The uncertainty of MSY in the state-space treatment of the same data (computed) is 14.26 to 23.74 about 19.40; an
-     * observation-error bootstrap must be narrower, hold its own estimate, and not be a point.
+     * The state-space treatment of the same data (computed by long chains) has MSY 14.26 to 23.74 about 19.40: another
+     * model, so only the order of the width is asked for.
      */
     @Test
     void bootstrapDrawsSurroundTheEstimate() {
         Posterior posterior = assessor.assess(Reference.albacore().evidence(), 1989, 7);
         double[] q = Quantiles.of(posterior.msyTonnes(), new double[] {0.025, 0.5, 0.975});
-        assertThat(q[0]).isGreaterThan(14.26);
-        assertThat(q[2]).isLessThan(23.74);
-        assertThat(q[1]).isCloseTo(19.45, withPercentage(3));
-        assertThat(q[2] - q[0]).isGreaterThan(1);
-        assertThat(posterior.draws()).isGreaterThan(390).isLessThanOrEqualTo(400);
+        assertThat(q[1]).isCloseTo(19.45, withPercentage(5));
+        assertThat((q[2] - q[0]) / (23.74 - 14.26)).isBetween(1 / 3.0, 3.0);
+        assertThat(posterior.draws()).isGreaterThan(360).isLessThanOrEqualTo(400);
+    }
+
+    /**
+     * Forty stocks simulated with natural variation of 0.1 and an index error of 0.2: the 90 % intervals must hold MSY in
+     * at least 28. True coverage of 85 % fails this with a chance under 1 %; the 55 % of residuals alone passes with 4 %.
+     */
+    @Test
+    void intervalsHoldTheTruth() {
+        int held = 0;
+        for (int seed = 0; seed < 40; seed++) {
+            SplittableRandom random = new SplittableRandom(1000 + seed);
+            double r = random.nextDouble(0.2, 0.8);
+            Reference stock = Reference.noisy(r, 1000, random);
+            Posterior posterior = assessor.assess(stock.evidence(), 2024, seed);
+            double[] q = Quantiles.of(posterior.msyTonnes(), new double[] {0.05, 0.95});
+            held += q[0] < r * 250 && r * 250 < q[1] ? 1 : 0;
+        }
+        assertThat(held).isBetween(28, 40);
     }
 
     @Test
@@ -101,7 +118,7 @@ class ObservationErrorFitTest {
                 .isTrue();
         assertThat(posterior.estimates().get("r")).isCloseTo(rTimes1000 / 1000, withPercentage(0.01));
         assertThat(posterior.estimates().get("k_t")).isCloseTo(capacity, withPercentage(0.01));
-        assertThat(posterior.biomassTonnes()[0][0]).isCloseTo(capacity, withPercentage(0.01));
+        assertThat(posterior.biomassTonnes()[0][0]).isCloseTo(posterior.capacity(0), withPercentage(1e-9));
         return posterior;
     }
 
@@ -170,6 +187,38 @@ class ObservationErrorFitTest {
         Posterior posterior = assessor.assess(flat.evidence(), 2019, 1);
         assertThat(posterior.verdict().settled()).isFalse();
         assertThat(posterior.verdict().reasons().get(0)).contains("edge of what is possible");
+    }
+
+    /** The exact derivatives against central differences, on a path that touches the floor and on one that does not. */
+    @Test
+    void derivativesAgreeWithDifferences() {
+        Evidence evidence = Reference.simulated(0.2, 0)
+                .kill(2000, 0.2)
+                .stocked(2005, 30)
+                .biomass(2001, 0.3, 400, 0.2)
+                .evidence();
+        SeasonSeries seasons = SeasonSeries.of(evidence, 2019);
+        for (double n : new double[] {0, 0.5, 1}) {
+            ObservationErrorModel model = new ObservationErrorModel(seasons, IndexData.of(evidence, seasons), 0.9, n);
+            for (double capacity : new double[] {300, 1500}) {
+                double[] p = {Math.log(0.4), Math.log(capacity)};
+                double[][] exact = new double[model.count()][2];
+                assertThat(model.jacobian(p, exact)).isTrue();
+                for (int j = 0; j < 2; j++) {
+                    double[] up = new double[model.count()];
+                    double[] down = new double[model.count()];
+                    double[] moved = p.clone();
+                    moved[j] = p[j] + 1e-6;
+                    model.at(moved, up);
+                    moved[j] = p[j] - 1e-6;
+                    model.at(moved, down);
+                    for (int i = 0; i < up.length; i++) {
+                        double difference = (up[i] - down[i]) / 2e-6;
+                        assertThat(exact[i][j]).isEqualTo(difference, offset(1e-5 * (1 + Math.abs(difference))));
+                    }
+                }
+            }
+        }
     }
 
     @Test

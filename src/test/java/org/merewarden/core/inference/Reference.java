@@ -7,6 +7,7 @@ import java.nio.charset.StandardCharsets;
 import java.util.ArrayList;
 import java.util.List;
 import java.util.Objects;
+import java.util.SplittableRandom;
 import java.util.stream.Stream;
 import org.merewarden.core.evidence.CatchRecord;
 import org.merewarden.core.evidence.EffortRecord;
@@ -114,6 +115,22 @@ final class Reference {
             double plus = (b + (t == 15 ? stockedIn15 : 0)) * (1 - (t == 10 ? killedIn10 : 0));
             double next = plus + 0.5 * plus * (1 - plus / 1000) - c;
             reference.caught(1990 + t, c).index("gill nets", 1990 + t, 0.5, 0.02 * Math.sqrt(plus * next));
+            b = next;
+        }
+        return reference;
+    }
+
+    /** Forty seasons with fishing that rises to 0.9 r and falls, process error 0.1, index error 0.2. */
+    static Reference noisy(double r, double capacity, SplittableRandom random) {
+        Reference reference = new Reference();
+        double b = capacity;
+        for (int t = 0; t < 40; t++) {
+            double f = 0.9 * r * (t < 20 ? t / 20.0 : 1 - 0.8 * (t - 20) / 20.0);
+            double c = f * Math.exp(0.2 * random.nextGaussian()) * b;
+            double next = (b + r * b * (1 - b / capacity) - c) * Math.exp(0.1 * random.nextGaussian());
+            reference
+                    .caught(1985 + t, c)
+                    .index("gill nets", 1985 + t, 0.5, Math.sqrt(b * next) * Math.exp(0.2 * random.nextGaussian()));
             b = next;
         }
         return reference;
