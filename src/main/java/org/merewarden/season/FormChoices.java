@@ -5,7 +5,10 @@ import java.util.LinkedHashMap;
 import java.util.List;
 import java.util.Locale;
 import java.util.Map;
+import java.util.Optional;
 import java.util.stream.Stream;
+import org.merewarden.account.People;
+import org.merewarden.account.Person;
 import org.merewarden.waterbody.Register;
 import org.merewarden.waterbody.StockView;
 import org.merewarden.web.Choice;
@@ -19,12 +22,12 @@ class FormChoices {
     private static final List<String> FATES = List.of("kept", "discarded", "released", "seized");
 
     private final Register register;
-    private final LoggingRights rights;
+    private final People people;
     private final MessageSource messages;
 
-    FormChoices(Register register, LoggingRights rights, MessageSource messages) {
+    FormChoices(Register register, People people, MessageSource messages) {
         this.register = register;
-        this.rights = rights;
+        this.people = people;
         this.messages = messages;
     }
 
@@ -38,9 +41,10 @@ class FormChoices {
 
     /** @param lake code of the chosen water, whose stocks come first; empty where none is chosen yet */
     Choices of(String lake) {
+        Optional<Person> who = people.current();
         return new Choices(
                 register.waterBodies().stream()
-                        .filter(w -> rights.mayLogAt(w.code()))
+                        .filter(w -> who.map(p -> p.mayLogAt(w.code())).orElse(false))
                         .map(w -> new Choice(w.code(), w.name()))
                         .toList(),
                 register.cooperatives().stream()

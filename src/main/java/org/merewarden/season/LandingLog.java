@@ -6,6 +6,7 @@ import java.util.Comparator;
 import java.util.List;
 import java.util.Optional;
 import java.util.stream.IntStream;
+import org.merewarden.account.People;
 import org.merewarden.activity.ActivityLog;
 import org.merewarden.advice.Limits;
 import org.merewarden.intake.Problem;
@@ -32,7 +33,7 @@ class LandingLog {
     private final Register register;
     private final Limits limits;
     private final Seasons seasons;
-    private final LoggingRights rights;
+    private final People people;
     private final ActivityLog activity;
     private final TransactionTemplate transaction;
     private final Clock clock;
@@ -42,7 +43,7 @@ class LandingLog {
             Register register,
             Limits limits,
             Seasons seasons,
-            LoggingRights rights,
+            People people,
             ActivityLog activity,
             TransactionTemplate transaction,
             Clock clock) {
@@ -50,7 +51,7 @@ class LandingLog {
         this.register = register;
         this.limits = limits;
         this.seasons = seasons;
-        this.rights = rights;
+        this.people = people;
         this.activity = activity;
         this.transaction = transaction;
         this.clock = clock;
@@ -129,7 +130,7 @@ class LandingLog {
         EntryRules rules = rules();
         rules.replaces(of);
         List<Problem> problems = problems(rules, entry);
-        if (!rights.mayLogAt(of.entry().lake())) {
+        if (!people.mayLogAt(of.entry().lake())) {
             problems.add(0, notAssigned(of.entry().lake()));
         }
         if (!problems.isEmpty()) {
@@ -154,7 +155,7 @@ class LandingLog {
         if (of.correctedBy() != null || of.withdrawal()) {
             return conflict(of);
         }
-        if (!rights.mayLogAt(of.entry().lake())) {
+        if (!people.mayLogAt(of.entry().lake())) {
             return new Outcome(
                     Result.REFUSED,
                     List.of(),
@@ -204,7 +205,7 @@ class LandingLog {
 
     private List<Problem> problems(EntryRules rules, Entry entry) {
         List<Problem> problems = rules.problems(entry);
-        if (!rights.mayLogAt(entry.lake())) {
+        if (!people.mayLogAt(entry.lake())) {
             problems.add(notAssigned(entry.lake()));
         }
         return problems;
