@@ -64,7 +64,7 @@ const directLabels = {
 export function drawEquilibrium(canvas) {
   if (!takeOver(canvas)) return;
   const data = dataOf(canvas);
-  const axis = (text, max) => ({ type: "linear", min: 0, max, title: { display: true, text }, ticks: { maxTicksLimit: 7 } });
+  const axis = (text, max) => ({ type: "linear", min: 0, max, title: { display: true, text }, ticks: { maxTicksLimit: 7, includeBounds: false } });
   new window.Chart(canvas, {
     type: "scatter",
     data: { datasets: data.stocks.flatMap(s => datasets(s, data.words, colour(canvas, s.style), data.stocks.length > 1)) },

@@ -17,6 +17,14 @@ function datasets(h, canvas) {
   ];
 }
 
+// whole seasons, at most about a dozen
+function seasons(h) {
+  const first = Math.ceil(h.from);
+  const count = Math.floor(h.to) - first + 1;
+  const step = Math.ceil(count / 12);
+  return Array.from({ length: Math.ceil(count / step) }, (_, i) => ({ value: first + i * step }));
+}
+
 function drawHistory(canvas) {
   if (!takeOver(canvas)) return;
   const h = dataOf(canvas);
@@ -27,8 +35,8 @@ function drawHistory(canvas) {
       animation: false,
       aspectRatio: 2.2,
       scales: {
-        x: { type: "linear", offset: false, min: h.from, max: h.to, title: { display: true, text: h.xLabel }, ticks: { stepSize: 1, maxTicksLimit: 12, callback: v => (Number.isInteger(v) ? String(v) : "") } },
-        y: { min: 0, max: h.yMax, title: { display: true, text: h.yLabel } },
+        x: { type: "linear", offset: false, min: h.from, max: h.to, title: { display: true, text: h.xLabel }, afterBuildTicks: axis => { axis.ticks = seasons(h); }, ticks: { callback: v => String(v) } },
+        y: { min: 0, max: h.yMax, title: { display: true, text: h.yLabel }, ticks: { includeBounds: false } },
       },
       plugins: { legend: { labels: { usePointStyle: true, color: colour(canvas, 1) } } },
     },

@@ -6,6 +6,7 @@ import static org.springframework.test.web.servlet.request.MockMvcRequestBuilder
 import static org.springframework.test.web.servlet.result.MockMvcResultMatchers.content;
 import static org.springframework.test.web.servlet.result.MockMvcResultMatchers.status;
 
+import java.net.URI;
 import java.nio.charset.StandardCharsets;
 import java.util.List;
 import java.util.regex.Pattern;
@@ -53,7 +54,7 @@ class PortfolioPagesTest {
     }
 
     private String page(String address) throws Exception {
-        return mvc.perform(get(java.net.URI.create(address)).with(user("b").roles("BIOLOGIST")))
+        return mvc.perform(get(URI.create(address)).with(user("b").roles("BIOLOGIST")))
                 .andExpect(status().isOk())
                 .andReturn()
                 .getResponse()
@@ -78,17 +79,17 @@ class PortfolioPagesTest {
                 .contains("href=\"/portfolio?q=portfoliomere&amp;sort=water&amp;dir=desc\"");
         assertThat(lakes(page("/portfolio?q=portfoliomere&sort=water&dir=desc")))
                 .endsWith("pf-chalk", "pf-basalt", "pf-amber");
-        assertThat(lakes(page("/portfolio?q=portfoliomere+amber"))).containsExactly("pf-amber");
+        assertThat(lakes(page("/portfolio?q=portfoliomere%20amber"))).containsExactly("pf-amber");
         assertThat(lakes(page("/portfolio?q=portfoliomere&standing=unassessed")))
                 .contains("pf-chalk");
     }
 
     @Test
     void anUnassessedStockIsSortedLastEitherWay() throws Exception {
-        assertThat(lakes(page("/portfolio?q=portfoliomere+a&sort=msy&dir=asc")))
+        assertThat(lakes(page("/portfolio?q=portfoliomere%20a&sort=msy&dir=asc")))
                 .last()
                 .isEqualTo("pf-chalk");
-        assertThat(lakes(page("/portfolio?q=portfoliomere+a&sort=msy&dir=desc")))
+        assertThat(lakes(page("/portfolio?q=portfoliomere%20a&sort=msy&dir=desc")))
                 .last()
                 .isEqualTo("pf-chalk");
     }

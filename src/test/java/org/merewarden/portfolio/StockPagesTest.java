@@ -212,7 +212,7 @@ class StockPagesTest {
                 null);
         StockPage page = page(entry, SIX_SEASONS);
         assertThat(page.lede()).contains("600\u00a0net-nights are allowed in 2026.");
-        assertThat(page.lede().get(3)).startsWith("No limit on the catch is in force. If the 18\u00a0t of the last");
+        assertThat(page.lede().get(3)).startsWith("If the 18\u00a0t of the last");
         assertThat(page.takenBar()).isEmpty();
         assertThat(page.season()).extracting(StockPage.Term::name).doesNotContain("Left");
     }
