@@ -43,20 +43,26 @@ class LimitsTable implements TableHandler {
             "limits",
             "Limits issued on paper",
             120,
-            Stream.concat(StockReferences.columns().stream(), Stream.of(
-                    year("season", "season for which the limit holds").asKey(),
-                    date("issued_on", "day of the decision").asKey(),
-                    text("kind", "what is limited").orElse("catch").oneOf("catch", "effort", "measures only"),
-                    number("amount", "total removals in t, or effort in its unit")
-                            .between(0, 1e7),
-                    text("unit", "t for a catch limit"),
-                    number("set_aside_t", "kept for subsistence, angling, research and others, t")
-                            .between(0, 1e7),
-                    date("valid_from", "first day; empty: the season's first"),
-                    date("valid_to", "last day; empty: the season's last"),
-                    text("measures", "sizes, mesh, closed times, as text"),
-                    text("legal_basis", "law or ordinance"),
-                    text("reason", "why this limit"))).toList());
+            Stream.concat(
+                            StockReferences.columns().stream(),
+                            Stream.of(
+                                    year("season", "season for which the limit holds")
+                                            .asKey(),
+                                    date("issued_on", "day of the decision").asKey(),
+                                    text("kind", "what is limited")
+                                            .orElse("catch")
+                                            .oneOf("catch", "effort", "measures only"),
+                                    number("amount", "total removals in t, or effort in its unit")
+                                            .between(0, 1e7),
+                                    text("unit", "t for a catch limit"),
+                                    number("set_aside_t", "kept for subsistence, angling, research and others, t")
+                                            .between(0, 1e7),
+                                    date("valid_from", "first day; empty: the season's first"),
+                                    date("valid_to", "last day; empty: the season's last"),
+                                    text("measures", "sizes, mesh, closed times, as text"),
+                                    text("legal_basis", "law or ordinance"),
+                                    text("reason", "why this limit")))
+                    .toList());
 
     private final JdbcClient jdbc;
     private final Register register;
@@ -104,8 +110,10 @@ class LimitsTable implements TableHandler {
         if (problem.isPresent()) {
             return Fate.refused(problem.get());
         }
-        Stored earlier =
-                references.stock(row).map(stock -> stored.get(key(stock.id(), row))).orElse(null);
+        Stored earlier = references
+                .stock(row)
+                .map(stock -> stored.get(key(stock.id(), row)))
+                .orElse(null);
         if (earlier == null) {
             return Fate.NEW;
         }
@@ -179,8 +187,7 @@ class LimitsTable implements TableHandler {
         rows.stream()
                 .sorted(Comparator.comparing(row -> Objects.requireNonNull(row.date("issued_on"))))
                 .forEach(row -> {
-                    long stock =
-                            references.stock(row).orElseThrow().id();
+                    long stock = references.stock(row).orElseThrow().id();
                     store(row, stock, reported.computeIfAbsent(stock, this::reportedFraction), provenance);
                 });
         reported.keySet().forEach(standings::refresh);

@@ -5,6 +5,7 @@ import java.util.Arrays;
 import java.util.List;
 import java.util.Locale;
 import java.util.Objects;
+import java.util.stream.IntStream;
 import org.jspecify.annotations.Nullable;
 import org.merewarden.core.evidence.CatchRecord;
 import org.merewarden.core.evidence.EventRecord;
@@ -13,14 +14,14 @@ import org.merewarden.core.evidence.Evidence;
 /**
  * Removals and events by season, without gaps, as the difference equation wants them.
  *
- * <p>Seasons run from the first with a recorded catch to the last closed one; without any catch there is none. Rules,
- * each of which leaves a sentence:
+ * <p>Seasons run from the first with a recorded catch to the last closed one; without any catch there is none. Where
+ * catches and closures ended more than {@link #LONGEST_TAIL} seasons before the last closed one, the series ends with
+ * them, and the result speaks of that time. Rules, each of which leaves a sentence:
  *
  * <ul>
  *   <li>a closed season takes the closure's residual catch if it states one, else the recorded catch, else 0;
  *   <li>a missing catch between two known ones is interpolated in a straight line;
- *   <li>a missing catch after the last known one is held at that one; for more than {@link #LONGEST_TAIL} seasons the
- *       assessment does not settle;
+ *   <li>a missing catch after the last known one is held at that one;
  *   <li>a fish kill takes its likely fraction, else the middle of low and high, at the season's start; stocked fish
  *       arrive at the start of the season in which they recruit.
  * </ul>
@@ -64,9 +65,10 @@ record SeasonSeries(
                 .min()
                 .orElse(lastClosedYear + 1);
         List<String> notes = new ArrayList<>();
-        long length = (long) lastClosedYear - first + 1;
+        int last = last(evidence, first, lastClosedYear, notes);
+        long length = (long) last - first + 1;
         if (length > MOST_SEASONS) {
-            String failure = "Catches from " + first + " to " + lastClosedYear + " are more than " + MOST_SEASONS
+            String failure = "Catches from " + first + " to " + last + " are more than " + MOST_SEASONS
                     + " seasons; a year may be mistyped.";
             return new SeasonSeries(first, new double[0], new double[0], new double[0], notes, failure);
         }
@@ -75,17 +77,36 @@ record SeasonSeries(
         for (int t = 0; t < seasons; t++) {
             removals[t] = recorded(evidence, first + t);
         }
-        String failure = fill(removals, first, notes);
+        fill(removals, first, notes);
         double[] stocked = new double[seasons];
         double[] killed = new double[seasons];
         for (EventRecord event : evidence.events()) {
             apply(event, first, stocked, killed, notes);
         }
+        String failure = null;
         if (Arrays.stream(removals).anyMatch(c -> !(c <= LARGEST_REMOVALS))) {
             failure = "A season's estimated removals exceed " + String.format(Locale.ROOT, "%.0e", LARGEST_REMOVALS)
                     + " t; a catch or a reported fraction must be wrong.";
         }
         return new SeasonSeries(first, removals, stocked, killed, notes, failure);
+    }
+
+    /** The last season of the series; leaves a sentence where records ended long before the last closed season. */
+    private static int last(Evidence evidence, int first, int lastClosedYear, List<String> notes) {
+        int known = IntStream.concat(
+                        evidence.catches().stream().mapToInt(CatchRecord::year),
+                        evidence.events().stream()
+                                .filter(e -> e.kind().equals("closure"))
+                                .mapToInt(EventRecord::year))
+                .filter(year -> first <= year && year <= lastClosedYear)
+                .max()
+                .orElse(lastClosedYear);
+        if (lastClosedYear - known <= LONGEST_TAIL) {
+            return lastClosedYear;
+        }
+        notes.add("Catches are recorded up to " + known + " only: all of this speaks of the start of " + (known + 1)
+                + ", not of the present.");
+        return known;
     }
 
     private static double recorded(Evidence evidence, int year) {
@@ -104,8 +125,7 @@ record SeasonSeries(
                 .orElse(Double.isNaN(recorded) ? 0 : recorded);
     }
 
-    /** Fills the gaps; the reason why it must not, or null. */
-    private static @Nullable String fill(double[] removals, int first, List<String> notes) {
+    private static void fill(double[] removals, int first, List<String> notes) {
         List<String> between = new ArrayList<>();
         int known = 0;
         for (int t = 1; t < removals.length; t++) {
@@ -124,15 +144,11 @@ record SeasonSeries(
                     + "; a straight line between the neighbouring seasons stands in.");
         }
         int tail = removals.length - 1 - known;
-        if (tail <= 0) {
-            return null;
+        if (tail > 0) {
+            Arrays.fill(removals, known + 1, removals.length, removals[known]);
+            notes.add("No catch was recorded after " + (first + known) + "; its removals are held for " + tail
+                    + (tail == 1 ? " season." : " seasons."));
         }
-        Arrays.fill(removals, known + 1, removals.length, removals[known]);
-        notes.add("No catch was recorded after " + (first + known) + "; its removals are held for " + tail
-                + (tail == 1 ? " season." : " seasons."));
-        return tail > LONGEST_TAIL
-                ? "No catch was recorded for the last " + tail + " seasons; the present state cannot be followed."
-                : null;
     }
 
     private static void apply(EventRecord event, int first, double[] stocked, double[] killed, List<String> notes) {
