@@ -36,14 +36,14 @@ public record Column(
         DATE
     }
 
-    /** Up to 500 characters unless {@link #atMost} says otherwise. */
+    /** Up to 2,000 characters unless {@link #atMost} says otherwise. */
     public static Column text(String name, String description) {
-        return of(name, Kind.TEXT, description).atMost(500);
+        return of(name, Kind.TEXT, description).atMost(2000);
     }
 
-    /** A code of up to 60 characters: trimmed, without spaces; case is kept. */
+    /** A code of up to 100 characters unless {@link #atMost} says otherwise: trimmed, without spaces; case is kept. */
     public static Column code(String name, String description) {
-        return of(name, Kind.CODE, description).atMost(60);
+        return of(name, Kind.CODE, description).atMost(100);
     }
 
     public static Column number(String name, String description) {

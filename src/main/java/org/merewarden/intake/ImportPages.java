@@ -2,6 +2,7 @@ package org.merewarden.intake;
 
 import java.sql.ResultSet;
 import java.sql.SQLException;
+import java.time.Instant;
 import java.time.OffsetDateTime;
 import java.util.ArrayList;
 import java.util.HashMap;
@@ -9,13 +10,13 @@ import java.util.List;
 import java.util.Locale;
 import java.util.Map;
 import java.util.Objects;
-import java.util.function.Function;
 import org.jspecify.annotations.Nullable;
 import org.merewarden.intake.ImportPage.FileLine;
 import org.merewarden.intake.ImportPage.FilterLink;
 import org.merewarden.intake.ImportPage.Refusal;
 import org.merewarden.intake.ImportPage.RowLine;
 import org.merewarden.intake.ImportPage.Summary;
+import org.merewarden.web.Figures;
 import org.merewarden.web.NotFound;
 import org.springframework.jdbc.core.simple.JdbcClient;
 import org.springframework.stereotype.Component;
@@ -51,7 +52,6 @@ class ImportPages {
                     String sheet = f.getString(3).isEmpty() ? "" : " (" + f.getString(3) + ")";
                     files.merge(f.getLong(1), f.getString(2) + sheet, (a, b) -> a + ", " + b);
                 });
-        Function<OffsetDateTime, String> when = words.times();
         return jdbc
                 .sql("select * from import_batch order by id desc limit :most")
                 .param("most", most)
@@ -61,7 +61,7 @@ class ImportPages {
                 .map(b -> new Summary(
                         "/imports/" + b.id(),
                         Long.toString(b.id()),
-                        when.apply(b.uploadedAt()),
+                        Figures.dateTime(b.uploadedAt()),
                         b.uploadedBy(),
                         Excerpt.of(files.getOrDefault(b.id(), ""), 300),
                         words.of("state." + b.state()),
@@ -73,19 +73,20 @@ class ImportPages {
             long id,
             int version,
             String state,
-            OffsetDateTime uploadedAt,
+            Instant uploadedAt,
             String uploadedBy,
-            @Nullable OffsetDateTime decidedAt,
+            @Nullable Instant decidedAt,
             String decidedBy,
             String note) {
         static Decided of(ResultSet b) throws SQLException {
+            OffsetDateTime decided = b.getObject("decided_at", OffsetDateTime.class);
             return new Decided(
                     b.getLong("id"),
                     b.getInt("version"),
                     b.getString("state"),
-                    b.getObject("uploaded_at", OffsetDateTime.class),
+                    b.getObject("uploaded_at", OffsetDateTime.class).toInstant(),
                     b.getString("uploaded_by"),
-                    b.getObject("decided_at", OffsetDateTime.class),
+                    decided == null ? null : decided.toInstant(),
                     Objects.requireNonNullElse(b.getString("decided_by"), ""),
                     Objects.requireNonNullElse(b.getString("note"), ""));
         }
@@ -141,12 +142,11 @@ class ImportPages {
     }
 
     private String record(Decided batch) {
-        Function<OffsetDateTime, String> when = words.times();
-        String uploaded = words.of("record.uploaded", batch.uploadedBy(), when.apply(batch.uploadedAt()));
+        String uploaded = words.of("record.uploaded", batch.uploadedBy(), Figures.dateTime(batch.uploadedAt()));
         return batch.decidedAt() == null
                 ? uploaded
                 : uploaded + " "
-                        + words.of("record." + batch.state(), batch.decidedBy(), when.apply(batch.decidedAt()));
+                        + words.of("record." + batch.state(), batch.decidedBy(), Figures.dateTime(batch.decidedAt()));
     }
 
     private Map<Long, Map<String, Integer>> counts(long id) {

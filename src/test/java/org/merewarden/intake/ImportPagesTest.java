@@ -50,6 +50,12 @@ class ImportPagesTest {
     @Autowired
     private FolderImport folders;
 
+    @Autowired
+    private Tables tables;
+
+    @Autowired
+    private ImportStore store;
+
     private static MockMultipartFile file(String name, String text) {
         return new MockMultipartFile("files", name, "text/csv", text.getBytes(StandardCharsets.UTF_8));
     }
@@ -273,6 +279,13 @@ class ImportPagesTest {
                                 .asString()
                                 .startsWith("test-gadgets.csv, line 3, column weight_t, “x”: "));
         assertThat(weights("folder")).containsExactly(1.0);
+    }
+
+    @Test
+    void findsNothingToRefuseInTheDemonstrationRegion() throws Exception {
+        long id = importer.upload(FolderFiles.read(tables, "classpath:db-seed/"), "a test");
+        assertThat(RefusedImport.of(store.files(id)).messages()).isEmpty();
+        assertThat(store.files(id)).extracting(ImportedFile::refused).containsOnly(false);
     }
 
     /** Whatever comes, an upload ends as an import on record, and nothing reaches the register by itself. */
