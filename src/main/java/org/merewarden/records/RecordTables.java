@@ -19,10 +19,13 @@ final class RecordTables {
     static final List<String> EVENT_KINDS = List.of("stocking", "fish kill", "closure");
 
     private static final Column YEAR = year("year", "season, named by the year in which it starts");
-    private static final Column SERIES = text("series", "name of the series; a new design is a new series");
+    private static final Column SERIES =
+            text("series", "name of the series; a new design is a new series").between(0, 60);
     private static final Column CV = number("cv", "coefficient of variation").between(0.001, 5);
-    private static final Column SOURCE = text("source", "where the figure comes from");
-    private static final Column WATER = code("water_body", "code of the water body");
+    private static final Column SOURCE =
+            text("source", "where the figure comes from").between(0, 500);
+    private static final Column WATER =
+            code("water_body", "code of the water body").between(0, 60);
 
     static final RecordTable CATCHES = new RecordTable(
             "catches",
@@ -58,7 +61,7 @@ final class RecordTables {
                     field(number("effort", "effort in the series' own unit")
                             .mandatory()
                             .between(0, 1e12)),
-                    field(text("unit", "unit of the effort")),
+                    field(text("unit", "unit of the effort").between(0, 60)),
                     field(SOURCE)));
 
     static final RecordTable SURVEYS = new RecordTable(
@@ -83,8 +86,8 @@ final class RecordTables {
                             "amount"),
                     field(CV),
                     field(number("nets", "units of effort behind the value").between(0.001, 1e7)),
-                    field(text("design", "gear and mesh set")),
-                    field(text("unit", "unit of the value")),
+                    field(text("design", "gear and mesh set").between(0, 200)),
+                    field(text("unit", "unit of the value").between(0, 60)),
                     field(SOURCE)));
 
     static final RecordTable EVENTS = new RecordTable(
@@ -97,11 +100,14 @@ final class RecordTables {
             List.of(
                     field(
                             text("key", "the event's own name; the same key corrects it")
+                                    .between(0, 100)
                                     .asKey(),
                             "event_key"),
                     field(code("species", "FAO three-letter code; empty: all stocks of the water")
+                            .between(0, 3)
                             .orElse("")),
                     field(code("population", "empty unless the water holds two stocks of the species")
+                            .between(0, 40)
                             .orElse("")),
                     field(YEAR.mandatory(), "season_year"),
                     field(date("date", "day on which it happened"), "happened_on"),
@@ -111,7 +117,7 @@ final class RecordTables {
                     field(number("low", "fish kill: least fraction of the biomass lost"), "low_value"),
                     field(number("likely", "fish kill: likely fraction; closure: residual catch in t"), "likely_value"),
                     field(number("high", "fish kill: greatest fraction"), "high_value"),
-                    field(text("stage", "stocking: fry, fingerling, yearling …")),
+                    field(text("stage", "stocking: fry, fingerling, yearling …").between(0, 60)),
                     field(number("number", "stocking: number of fish").between(0, 1e12), "number_stocked"),
                     field(number("mean_weight_g", "stocking: mean weight in g").between(0.001, 1e6)),
                     field(number("survival", "stocking: fraction alive at recruitment")
@@ -154,6 +160,7 @@ final class RecordTables {
                                     "shape",
                                     "catchability")),
                     field(text("series", "for observation_sd and catchability; empty: all")
+                            .between(0, 60)
                             .asKey()
                             .orElse("")),
                     field(number("median", "median in the parameter's unit")
@@ -162,7 +169,7 @@ final class RecordTables {
                     field(number("log_sd", "standard deviation of the logarithm; 0 fixes the parameter")
                             .mandatory()
                             .between(0, 10)),
-                    field(text("reason", "why the office knows this"))));
+                    field(text("reason", "why the office knows this").between(0, 2000))));
 
     private RecordTables() {}
 }

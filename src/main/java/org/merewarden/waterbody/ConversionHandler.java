@@ -25,9 +25,12 @@ class ConversionHandler extends RegisterHandler<WeightConversion> {
             "Factors from landed to live weight",
             50,
             List.of(
-                    code("species", "FAO three-letter code of the species").asKey(),
+                    code("species", "FAO three-letter code of the species")
+                            .between(0, 3)
+                            .asKey(),
                     StockReferences.population(),
                     text("presentation", "how the fish is landed: gutted, fillet, box …")
+                            .between(0, 60)
                             .asKey(),
                     date("valid_from", "first day on which the factor applies").asKey(),
                     number("factor", "live weight / landed weight").mandatory().between(1, 10)));

@@ -24,9 +24,10 @@ class CooperativeHandler extends RegisterHandler<Cooperative> {
             30,
             List.of(
                     code("code", "short name in addresses: lower-case letters, digits, hyphens")
+                            .between(0, 60)
                             .asKey(),
-                    text("name", "name of the cooperative").mandatory(),
-                    text("note", "anything else; no person's name")));
+                    text("name", "name of the cooperative").between(0, 120).mandatory(),
+                    text("note", "anything else; no person's name").between(0, 2000)));
 
     private final Cooperatives cooperatives;
 

@@ -44,7 +44,8 @@ class RightHandler implements TableHandler {
 
     private static List<Column> columns() {
         List<Column> columns = new ArrayList<>();
-        columns.add(code("cooperative", "code of the cooperative").asKey());
+        columns.add(
+                code("cooperative", "code of the cooperative").between(0, 60).asKey());
         columns.addAll(StockReferences.columns());
         columns.add(number(SHARE, "share of the limit in per cent").mandatory().between(0.01, 100));
         return columns;

@@ -20,7 +20,7 @@ import org.springframework.stereotype.Component;
 @Component
 class StockHandler extends RegisterHandler<Stock> {
     private static final List<Column> DETAILS = List.of(
-            text("local_name", "the office's own name of the fish"),
+            text("local_name", "the office's own name of the fish").between(0, 120),
             text("recruitment", "where young fish come from")
                     .oneOf("natural", "mixed", "stocked only")
                     .orElse("natural"),
@@ -33,7 +33,7 @@ class StockHandler extends RegisterHandler<Stock> {
                     .between(0.0001, 1),
             number("price_per_kg", "price at landing per kg").between(0, 1e6),
             number("effort_cost", "cost of a unit of effort").between(0, 1e9),
-            text("note", "anything else; no person's name"));
+            text("note", "anything else; no person's name").between(0, 2000));
 
     private static final TableDefinition DEFINITION = new TableDefinition(
             "stocks",

@@ -33,13 +33,18 @@ public final class StockReferences {
     /** The three key columns that name a stock. */
     public static List<Column> columns() {
         return List.of(
-                Column.code("water_body", "code of the water body").asKey(),
-                Column.code("species", "FAO three-letter code of the species").asKey(),
+                Column.code("water_body", "code of the water body")
+                        .between(0, 60)
+                        .asKey(),
+                Column.code("species", "FAO three-letter code of the species")
+                        .between(0, 3)
+                        .asKey(),
                 population());
     }
 
     public static Column population() {
         return Column.code("population", "empty unless the water holds two stocks of the species")
+                .between(0, 40)
                 .asKey()
                 .orElse("");
     }

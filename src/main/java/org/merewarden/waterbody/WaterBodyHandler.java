@@ -25,9 +25,10 @@ class WaterBodyHandler extends RegisterHandler<WaterBody> {
             10,
             List.of(
                     code("code", "short name in addresses: lower-case letters, digits, hyphens")
+                            .between(0, 60)
                             .asKey(),
-                    text("name", "name of the water").mandatory(),
-                    text("district", "district of the office"),
+                    text("name", "name of the water").between(0, 120).mandatory(),
+                    text("district", "district of the office").between(0, 120),
                     text("kind", "lake, reservoir, lagoon or river")
                             .oneOf("lake", "reservoir", "lagoon", "river")
                             .orElse("lake"),
@@ -42,7 +43,7 @@ class WaterBodyHandler extends RegisterHandler<WaterBody> {
                     number("conductivity_us_cm", "conductivity in µS/cm").between(0.1, 200000),
                     number("mean_air_temperature_c", "mean annual air temperature in °C")
                             .between(-30, 40),
-                    text("note", "anything else; no person's name")));
+                    text("note", "anything else; no person's name").between(0, 2000)));
 
     private final WaterBodies waterBodies;
 
