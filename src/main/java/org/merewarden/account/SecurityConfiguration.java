@@ -74,6 +74,7 @@ class SecurityConfiguration {
                         "/imports/**",
                         "/water-bodies/**",
                         "/cooperatives/**",
+                        "/species-weights",
                         "/stocks/**",
                         "/assessments/**",
                         "/shares")

@@ -78,6 +78,7 @@ class RightsDesk {
                 return;
             }
             rights.delete(right);
+            rights.flush();
         } else {
             right.cooperativeId = cooperative.id();
             right.stockId = stock.id();
