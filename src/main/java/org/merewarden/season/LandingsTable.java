@@ -49,10 +49,11 @@ class LandingsTable implements TableHandler {
                 code("key", "The sender's own name for the line; sending it again changes nothing")
                         .asKey(),
                 date("date", "Day of the landing").mandatory(),
-                text("slip", "Number of the landing slip"),
+                text("slip", "Number of the landing slip").atMost(60),
                 code("water_body", "Code of the water body").mandatory(),
                 code("species", "FAO three-letter code, or mixed").mandatory(),
-                code("population", "Only where a water holds two stocks of one species"),
+                code("population", "Only where a water holds two stocks of one species")
+                        .atMost(40),
                 code("cooperative", "Code of the cooperative"),
                 text("sector", "Who fished")
                         .oneOf(
@@ -64,17 +65,19 @@ class LandingsTable implements TableHandler {
                                 "research",
                                 "discards")
                         .orElse("commercial"),
-                text("gear", "Gear used"),
+                text("gear", "Gear used").atMost(60),
                 number("nets", "Number of nets, traps or hooks").between(0, EntryRules.MAX_EFFORT),
                 number("nights", "Nights they stood").between(0, EntryRules.MAX_EFFORT),
                 number("weight_kg", "Weight as landed, kg").mandatory().between(0, EntryRules.MAX_WEIGHT_KG),
-                text("presentation", "How it was landed: whole, gutted …").orElse("whole"),
+                text("presentation", "How it was landed: whole, gutted …")
+                        .atMost(60)
+                        .orElse("whole"),
                 integer("number", "Number of fish").between(0, any),
                 text("fate", "What became of it")
                         .oneOf("kept", "discarded", "released", "seized")
                         .orElse("kept"),
-                text("place", "Landing place; no person's name"),
-                text("note", "Remark; no person's name"));
+                text("place", "Landing place; no person's name").atMost(200),
+                text("note", "Remark; no person's name").atMost(2000));
     }
 
     @Override
@@ -97,18 +100,17 @@ class LandingsTable implements TableHandler {
     }
 
     private static Fate fate(TableRow row, EntryRules rules, Map<String, LandingRow> stored, Batch batch) {
-        List<Problem> problems = lengthProblems(row);
-        if (!problems.isEmpty()) {
-            return Fate.refused(problems.toArray(Problem[]::new));
-        }
         Entry entry = entry(row);
+        if (entry.key().startsWith(LandingLog.OWN_KEYS)) {
+            return Fate.refused(new Problem("key", entry.key(), "may not begin with " + LandingLog.OWN_KEYS));
+        }
         LandingRow before = stored.get(entry.key());
         if (before != null) {
             return before.entry().equals(entry) ? Fate.SAME : Fate.refused(taken(before));
         }
-        rules.problems(entry).stream()
+        List<Problem> problems = rules.problems(entry).stream()
                 .filter(problem -> !broughtAlong(problem, entry, batch))
-                .forEach(problems::add);
+                .toList();
         return problems.isEmpty() ? Fate.NEW : Fate.refused(problems.toArray(Problem[]::new));
     }
 
@@ -134,23 +136,6 @@ class LandingsTable implements TableHandler {
                 before.entry().key(),
                 "stands for another landing already (" + before.entry().text()
                         + "); a correction is a new entry: correct it in the log, or send a new key");
-    }
-
-    private static final Map<String, Integer> LENGTHS = Map.of(
-            "key", 100, "slip", 60, "population", 40, "gear", 60, "presentation", 60, "place", 200, "note", 2000);
-
-    private static List<Problem> lengthProblems(TableRow row) {
-        List<Problem> problems = new ArrayList<>();
-        LENGTHS.forEach((column, length) -> {
-            String value = row.textOrEmpty(column);
-            if (value.length() > length) {
-                problems.add(new Problem(column, value.substring(0, 40) + "…", "at most " + length + " characters"));
-            }
-        });
-        if (row.need("key").startsWith(LandingLog.OWN_KEYS)) {
-            problems.add(new Problem("key", row.need("key"), "may not begin with " + LandingLog.OWN_KEYS));
-        }
-        return problems;
     }
 
     @Override

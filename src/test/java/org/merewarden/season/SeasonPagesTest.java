@@ -212,6 +212,28 @@ class SeasonPagesTest {
     }
 
     @Test
+    void aFactorOfTheSameImportCountsFromItsDay() {
+        org.merewarden.intake.Batch batch = new org.merewarden.intake.Batch() {
+            @Override
+            public boolean brings(String name, String... keys) {
+                return false;
+            }
+
+            @Override
+            public List<TableRow> rows(String name) {
+                return List.of(new TableRow(
+                        2, Map.of("species", "FPE", "presentation", "coming", "valid_from", today, "factor", 1.2)));
+            }
+        };
+        List<Fate> fates = table.examine(
+                List.of(
+                        row(2, "c1", "presentation", "coming"),
+                        row(3, "c2", "presentation", "coming", "date", today.minusDays(1))),
+                batch);
+        assertThat(fates).extracting(Fate::kind).containsExactly(Fate.Kind.NEW, Fate.Kind.REFUSED);
+    }
+
+    @Test
     void theColumnsAreThoseOfTheFormat() {
         assertThat(table.definition().columns().stream().map(org.merewarden.intake.Column::name))
                 .containsExactly(
