@@ -8,7 +8,6 @@ import java.util.Arrays;
 import java.util.List;
 import java.util.Locale;
 import org.merewarden.web.Choice;
-import org.merewarden.web.Figures;
 import org.springframework.context.MessageSource;
 import org.springframework.dao.OptimisticLockingFailureException;
 import org.springframework.http.HttpStatus;
@@ -37,20 +36,16 @@ class AccountPages {
         this.texts = texts;
     }
 
-    /** One line of the list. */
-    public record Row(
-            String username, String address, String name, String role, String waters, String since, String state) {}
-
     @ModelAttribute("roles")
     List<Choice> roles(Locale locale) {
         return Arrays.stream(Role.values())
-                .map(role -> new Choice(role.name(), text("role." + role, locale)))
+                .map(role -> new Choice(role.name(), texts.getMessage("role." + role, null, locale)))
                 .toList();
     }
 
     @GetMapping
     String list(@ModelAttribute("form") AccountForm form, Model model, Locale locale) {
-        List<Row> rows = accounts.all().stream().map(a -> row(a, locale)).toList();
+        List<AccountRow> rows = accounts.all().stream().map(a -> row(a, locale)).toList();
         model.addAttribute("rows", rows);
         return LIST;
     }
@@ -125,29 +120,12 @@ class AccountPages {
         return ONE;
     }
 
-    private Row row(Account account, Locale locale) {
-        Person person = account.asPerson();
-        String waters = person.role() != Role.CLERK
-                ? ""
-                : person.waters().contains(Person.ALL_WATERS)
-                        ? text("account.waters.all", locale)
-                        : String.join(", ", person.waters());
-        return new Row(
-                person.username(),
-                "/accounts/" + person.username(),
-                person.displayName(),
-                text("role." + person.role(), locale),
-                waters,
-                Figures.dateTime(account.createdAt()),
-                text(person.enabled() ? "account.state.enabled" : "account.state.disabled", locale));
+    private AccountRow row(Account account, Locale locale) {
+        return AccountRow.of(account, texts, locale);
     }
 
     private String done(RedirectAttributes next, String key, String username, Locale locale, String where) {
         next.addFlashAttribute("done", texts.getMessage(key, new Object[] {username}, locale));
         return where;
-    }
-
-    private String text(String key, Locale locale) {
-        return texts.getMessage(key, null, locale);
     }
 }
