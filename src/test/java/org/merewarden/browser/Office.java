@@ -67,8 +67,9 @@ final class Office implements AutoCloseable {
         return page.locator("h1").first().textContent().strip();
     }
 
+    /** What the page says; figures and their units are kept together by blanks that do not break. */
     String text() {
-        return page.locator("main").innerText();
+        return page.locator("main").innerText().replace('\u00a0', ' ').replace('\u202f', ' ');
     }
 
     String path() {

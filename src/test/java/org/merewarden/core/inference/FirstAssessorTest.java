@@ -102,12 +102,23 @@ class FirstAssessorTest {
     }
 
     @Test
-    void sixSeasonsWithoutCatchAtTheEndDoNotSettle() {
-        Posterior posterior = assessor.assess(Reference.albacore().evidence(), 1995, 7);
-        assertThat(posterior.verdict().settled()).isFalse();
-        assertThat(posterior.verdict().reasons().get(0)).startsWith("No catch was recorded for the last 6 seasons");
-        assertThat(assessor.assess(Reference.albacore().evidence(), 9999, 7).draws())
-                .isZero();
+    void aSeriesWhoseCatchesEndedLongAgoIsAssessedToItsEndAndSaysSo() {
+        Evidence evidence = Reference.albacore().evidence();
+        Posterior then = assessor.assess(evidence, 1989, 7);
+        Posterior now = assessor.assess(evidence, 2025, 7);
+        assertThat(now.lastYear()).isEqualTo(1989);
+        assertThat(now.estimates()).isEqualTo(then.estimates());
+        assertThat(now.verdict().reasons())
+                .contains("Catches are recorded up to 1989 only: all of this speaks of the start of 1990, not of the"
+                        + " present.");
+        assertThat(then.verdict().reasons()).noneMatch(s -> s.contains("not of the present"));
+    }
+
+    @Test
+    void aCatchMissingForAFewLastSeasonsIsHeld() {
+        Posterior posterior = assessor.assess(Reference.albacore().evidence(), 1994, 7);
+        assertThat(posterior.lastYear()).isEqualTo(1994);
+        assertThat(posterior.verdict().reasons()).anyMatch(s -> s.contains("its removals are held for 5 seasons"));
     }
 
     @ParameterizedTest
