@@ -132,13 +132,13 @@ class WholeJobBrowserTest {
                 assertThat(office.text()).contains(weight);
             }
             office.picture("landing-stored-1280");
-            office.go("/season/2026/landings?water=mizzow-lake");
+            office.go("/season/2026/landings?lake=mizzow-lake");
             office.picture("log-1280");
             int before = count("landing");
             office.follow("Correct");
             office.page().locator("[id='lines[0].weight']").fill("12");
-            office.page().getByLabel("Reason").first().fill("Misread the slip.");
-            office.press("Store");
+            office.page().locator("#reason").fill("Misread the slip.");
+            office.press("Store the correction");
             assertThat(count("landing")).as("a correction is a new entry").isEqualTo(before + 1);
             assertThat(jdbc.sql("select reason from landing where entry_kind = 'correction'")
                             .query(String.class)
