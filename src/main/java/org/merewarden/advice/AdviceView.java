@@ -143,7 +143,8 @@ class AdviceView {
                 Figures.sig(tonnes),
                 Figures.percent(result.collapseProbability()),
                 result.collapseProbability() > Policy.DEFAULT.strainedFrom(),
-                Figures.interval(100 * result.margin(), 100 * result.marginLow(), 100 * result.marginHigh()),
+                Figures.percent(result.margin()) + " (" + Figures.percent(result.marginLow()) + " to "
+                        + Figures.percent(result.marginHigh()) + ")",
                 Figures.sig(result.tippingBiomassTonnes()));
     }
 
@@ -158,7 +159,7 @@ class AdviceView {
                 toBeLogged(limit),
                 Figures.date(limit.validFrom()) + " – " + Figures.date(limit.validTo()),
                 proposal.decidedBy(),
-                Figures.dateTime(proposal.decidedAt()),
+                Figures.dateTime(proposal.effectiveAt()),
                 proposal.reason(),
                 proposal.decidedBy().equals(Who.name()));
     }
@@ -175,7 +176,7 @@ class AdviceView {
                 .map(d -> new Past(
                         d.limitId(),
                         text("advice.act." + d.act()),
-                        Figures.dateTime(d.decidedAt()),
+                        Figures.dateTime(d.effectiveAt()),
                         d.decidedBy(),
                         d.reason(),
                         d.act().equals(LimitWriter.ISSUED)

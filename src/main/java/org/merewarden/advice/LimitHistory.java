@@ -19,20 +19,20 @@ class LimitHistory {
         this.jdbc = jdbc;
     }
 
-    /** One decision. Act: PROPOSED, ISSUED, REFUSED, WITHDRAWN or SUPERSEDED. */
-    record Decision(long limitId, String act, Instant decidedAt, String decidedBy, String reason) {}
+    /** One decision. Act: PROPOSED, ISSUED, REFUSED, WITHDRAWN or SUPERSEDED; the instant from which it has effect. */
+    record Decision(long limitId, String act, Instant effectiveAt, String decidedBy, String reason) {}
 
     /** The decisions about a stock's limits, newest first. */
     List<Decision> decisions(long stockId) {
         return jdbc.sql("""
-                        select d.limit_id, d.act, d.decided_at, d.decided_by, d.reason
+                        select d.limit_id, d.act, d.effective_at, d.decided_by, d.reason
                         from limit_decision d join catch_limit l on l.id = d.limit_id
-                        where l.stock_id = ? order by d.decided_at desc, d.id desc""").param(stockId).query(LimitHistory::decision).list();
+                        where l.stock_id = ? order by d.effective_at desc, d.id desc""").param(stockId).query(LimitHistory::decision).list();
     }
 
     /** What was decided about one limit, oldest first. */
     List<Decision> ofLimit(long limitId) {
-        return jdbc.sql("select limit_id, act, decided_at, decided_by, reason from limit_decision where limit_id = ?"
+        return jdbc.sql("select limit_id, act, effective_at, decided_by, reason from limit_decision where limit_id = ?"
                         + " order by id")
                 .param(limitId)
                 .query(LimitHistory::decision)

@@ -18,7 +18,7 @@ class LimitStore implements Limits {
                 l.set_aside_subsistence_t + l.set_aside_angling_t + l.set_aside_research_t + l.set_aside_other_t
                     as set_asides_t,
                 l.reported_fraction, l.valid_from, l.valid_to, l.measures, l.legal_basis, l.objection,
-                d.reason, d.decided_at, d.decided_by
+                d.reason, d.effective_at, d.decided_by
             from catch_limit l
             join limit_decision d on d.limit_id = l.id and d.act = 'ISSUED'
             """;
@@ -102,7 +102,7 @@ class LimitStore implements Limits {
                 row.getString("legal_basis"),
                 row.getString("objection"),
                 row.getString("reason"),
-                row.getObject("decided_at", OffsetDateTime.class).toInstant(),
+                row.getObject("effective_at", OffsetDateTime.class).toInstant(),
                 row.getString("decided_by"));
     }
 }

@@ -81,7 +81,8 @@ public final class Figures {
         if (share < 1 && share > 0.995) {
             return ">" + format.format(0.99);
         }
-        return format.format(share == 0 ? 0.0 : share);
+        // no minus sign before a zero
+        return format.format(share <= 0 && share > -0.005 ? 0.0 : share);
     }
 
     /** A probability in natural frequencies: "about 1 of 6 cases". */

@@ -1,7 +1,6 @@
 package org.merewarden.core.inference;
 
 import java.util.Arrays;
-import java.util.random.RandomGenerator;
 
 /**
  * Residuals of the observation-error model at (ln r, ln K).
@@ -26,7 +25,6 @@ import java.util.random.RandomGenerator;
  */
 final class ObservationErrorModel implements LeastSquares.Residuals {
     private static final double FLOOR = 0.001;
-    private static final int PATHS = 20;
     private static final double LACK_WEIGHT = 30;
 
     private final SeasonSeries seasons;
@@ -72,10 +70,7 @@ final class ObservationErrorModel implements LeastSquares.Residuals {
         run(Math.exp(parameters[0]), Math.exp(parameters[1]));
         Arrays.fill(logQ, 0);
         for (int i = 0; i < logValue.length; i++) {
-            int t = data.season()[i];
-            double tau = data.timeOfYear()[i];
-            double logB = (1 - tau) * Math.log(afterEvents[t]) + (tau == 0 ? 0 : tau * Math.log(biomass[t + 1]));
-            residuals[i] = logValue[i] - logB;
+            residuals[i] = logValue[i] - logBiomass(i);
             int series = data.series()[i];
             if (series >= 0) {
                 logQ[series] += residuals[i] / perSeries[series];
@@ -154,39 +149,28 @@ final class ObservationErrorModel implements LeastSquares.Residuals {
     }
 
     /**
-     * Expected ln observations, up to a constant per series, on a path from (ln r, ln K) with natural variation: each
-     * season's end is multiplied by exp(N(0, sd)). A path on which the removals could not be taken is drawn again; after
-     * {@value #PATHS} of them the path without variation serves.
+     * How strongly a deviation of ln biomass at a season's start is still there at its end, on the last path that was run:
+     * ∂ ln B(t+1)/∂ ln B⁺(t), held in [0, 1]. The bound is there because below its tipping biomass a path runs away from
+     * itself, so that paths simulated anew under the same removals would end at many fates and speak of other stocks.
      */
-    void resample(double[] parameters, double processSd, RandomGenerator random, double[] expected) {
+    double[] persistence(double[] parameters) {
         double r = Math.exp(parameters[0]);
         double capacity = Math.exp(parameters[1]);
-        double sd = processSd;
-        for (int path = 0; path <= PATHS; path++) {
-            sd = path == PATHS ? 0 : processSd;
-            if (varied(r, capacity, sd, random)) {
-                break;
-            }
+        double[] persistence = new double[afterEvents.length];
+        for (int t = 0; t < persistence.length; t++) {
+            double response = (1 + AnnualStep.growthByBiomass(afterEvents[t], r, capacity, shape))
+                    * afterEvents[t]
+                    / biomass[t + 1];
+            persistence[t] = Math.max(0, Math.min(1, response));
         }
-        for (int i = 0; i < expected.length; i++) {
-            int t = data.season()[i];
-            double tau = data.timeOfYear()[i];
-            expected[i] = (1 - tau) * Math.log(afterEvents[t]) + tau * Math.log(biomass[t + 1]);
-        }
+        return persistence;
     }
 
-    private boolean varied(double r, double capacity, double sd, RandomGenerator random) {
-        biomass[0] = startFraction * capacity;
-        for (int t = 0; t < afterEvents.length; t++) {
-            double plus = AnnualStep.afterEvents(biomass[t], seasons.stocked()[t], seasons.killed()[t]);
-            double next = AnnualStep.next(plus, seasons.removals()[t], r, capacity, shape);
-            afterEvents[t] = plus;
-            biomass[t + 1] = Math.max(next, FLOOR * capacity) * Math.exp(sd * random.nextGaussian());
-            if (sd > 0 && next < FLOOR * capacity) {
-                return false;
-            }
-        }
-        return true;
+    /** ln biomass at observation i on the last path that was run. */
+    double logBiomass(int i) {
+        int t = data.season()[i];
+        double tau = data.timeOfYear()[i];
+        return (1 - tau) * Math.log(afterEvents[t]) + tau * Math.log(biomass[t + 1]);
     }
 
     /** Replaces the logarithms of the observations, for a refit to resampled data. */
