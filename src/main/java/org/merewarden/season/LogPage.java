@@ -53,13 +53,18 @@ class LogPage {
                 word(
                         "season.log.lede",
                         totals.counted(),
-                        Texts.kg(totals.liveKg()),
-                        Texts.kg(totals.landedKg()),
+                        sum(totals.liveKg()),
+                        sum(totals.landedKg()),
                         totals.entries() - totals.counted()),
                 entries.withHistory(entries.rows(season, filter, LogEntries.PAGE_SIZE, offset)),
                 address + ".csv?" + dropFirst(filter.query()),
                 page > 1 ? address + "?page=" + (page - 1) + filter.query() : null,
                 more ? address + "?page=" + (page + 1) + filter.query() : null);
+    }
+
+    /** Whole kilograms where there are many: weights of a product's factor have more digits than a scale. */
+    private static String sum(double kilograms) {
+        return Texts.kg(kilograms < 1000 ? kilograms : Math.rint(kilograms));
     }
 
     private static String dropFirst(String query) {
