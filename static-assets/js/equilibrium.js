@@ -1,24 +1,9 @@
 // Draws an equilibrium diagram from the page's data in place of the drawing that the server made.
+import { colour, dataOf, takeOver } from "./chart.js";
+import { directLabels } from "./labels.js";
+
 const SHAPES = ["circle", "rect", "triangle", "rectRot", "cross", "crossRot", "triangle", "star"];
-const ROLES = ["--water", "--ink", "--moss", "--ochre", "--plum"];
 const MARKER_EVERY = 9;
-
-export function colour(element, i) {
-  const styles = getComputedStyle(element);
-  return styles.getPropertyValue(ROLES[i % ROLES.length]).trim() || styles.color;
-}
-
-/** Shows the canvas and hides the drawing beside it; false where charts are not to be had. */
-export function takeOver(canvas) {
-  if (!window.Chart) return false;
-  canvas.parentElement.hidden = false;
-  canvas.closest("figure").querySelector("[data-drawing]").hidden = true;
-  return true;
-}
-
-export function dataOf(canvas) {
-  return JSON.parse(document.getElementById(canvas.dataset.chart).textContent);
-}
 
 const box = b => [[b.left, b.bottom], [b.right, b.bottom], [b.right, b.top], [b.left, b.top], [b.left, b.bottom]].map(([x, y]) => ({ x, y }));
 
@@ -28,12 +13,12 @@ function datasets(s, words, ink, several) {
   const rotation = s.style % 8 === 6 ? 180 : 0;
   const line = (label, data, more) => ({ label, data, showLine: true, borderColor: ink, backgroundColor: ink, borderWidth: width, pointRadius: 0, ...more });
   const dots = (label, data, more) => ({ label, data, showLine: false, borderColor: ink, backgroundColor: ink, ...more });
-  const marked = c => (several && c.dataIndex % MARKER_EVERY === 4 ? 5 : 0);
+  const marked = c => (several && (c.dataIndex + s.style) % MARKER_EVERY === 4 ? 5 : 0);
   const faint = ink + "33";
   return [
     dots(words.fold, [s.fold], { pointRadius: 6, borderWidth: 2, backgroundColor: "transparent" }),
-    dots(words.now, [s.now], { pointRadius: 5 }),
-    line(words.stable, s.stable, { pointStyle: shape, rotation, pointRadius: marked, pointBackgroundColor: "transparent", direct: several ? s.name : "" }),
+    dots(words.now, [s.now], { pointRadius: 5, direct: several ? s.name : "" }),
+    line(words.stable, s.stable, { pointStyle: shape, rotation, pointRadius: marked, pointBackgroundColor: "transparent" }),
     line(words.unstable, s.unstable, { borderDash: [6, 4] }),
     line("50 %", box(s.half), { borderWidth: 1.5 }),
     line("80 %", box(s.most), { borderWidth: 0.75 }),
@@ -45,21 +30,6 @@ function datasets(s, words, ink, several) {
     ] : []),
   ].map(d => ({ ...d, stock: s.name }));
 }
-
-// the name stands on the line, so that no legend has to be matched by colour
-const directLabels = {
-  id: "directLabels",
-  afterDatasetsDraw(chart) {
-    chart.data.datasets.forEach((d, i) => {
-      const points = chart.getDatasetMeta(i).data;
-      if (!d.direct || points.length === 0) return;
-      const at = points[Math.floor(points.length * 2 / 3)];
-      chart.ctx.fillStyle = d.borderColor;
-      chart.ctx.textAlign = at.x < (chart.chartArea.left + chart.chartArea.right) / 2 ? "left" : "right";
-      chart.ctx.fillText(d.direct, at.x, at.y - 8);
-    });
-  },
-};
 
 export function drawEquilibrium(canvas) {
   if (!takeOver(canvas)) return;

@@ -4,6 +4,7 @@ import java.math.BigDecimal;
 import java.math.MathContext;
 import java.util.ArrayList;
 import java.util.List;
+import java.util.function.ToDoubleFunction;
 import java.util.stream.Stream;
 import org.jspecify.annotations.Nullable;
 import org.merewarden.core.dynamics.SurplusProduction;
@@ -20,6 +21,8 @@ record Diagram(String xLabel, String yLabel, double xMax, double yMax, List<Seri
     private static final int ARROW_ROWS = 7;
     /** Room around what is drawn. */
     private static final double ROOM = 1.08;
+    /** A range may stretch an axis to so many times what the curves and positions need; beyond, it is cut. */
+    private static final double STRETCH = 1.5;
 
     record Words(String stable, String unstable, String fold, String now, String limit, String cloud, String band) {}
 
@@ -61,10 +64,11 @@ record Diagram(String xLabel, String yLabel, double xMax, double yMax, List<Seri
             List<Point> band,
             @Nullable Double limit,
             List<Arrow> arrows) {
+        /** What must be seen whole. */
         private Stream<Point> extent() {
             return Stream.concat(
                     Stream.of(stable, unstable).flatMap(List::stream),
-                    Stream.of(fold, now, new Point(most.right(), most.top()), new Point(limit == null ? 0 : limit, 0)));
+                    Stream.of(fold, now, new Point(limit == null ? 0 : limit, 0)));
         }
     }
 
@@ -74,24 +78,22 @@ record Diagram(String xLabel, String yLabel, double xMax, double yMax, List<Seri
         for (int i = 0; i < curves.size(); i++) {
             plain.add(series(curves.get(i), axes, i, i == focus));
         }
-        double xMax = ROOM
-                * plain.stream()
-                        .flatMap(Series::extent)
-                        .mapToDouble(Point::x)
-                        .max()
-                        .orElse(1);
-        double yMax = ROOM
-                * plain.stream()
-                        .flatMap(Series::extent)
-                        .mapToDouble(Point::y)
-                        .max()
-                        .orElse(1);
+        double xMax = end(plain, Point::x, s -> s.most().right());
+        double yMax = end(plain, Point::y, s -> s.most().top());
         if (focus >= 0) {
             Series s = plain.get(focus);
             List<Arrow> arrows = arrows(curves.get(focus), axes, xMax, yMax);
             plain.set(focus, withArrows(s, arrows));
         }
         return new Diagram(xLabel, yLabel, rounded(xMax), rounded(yMax), List.copyOf(plain), words);
+    }
+
+    /** Where an axis ends: a range that little is known of must not press the curves flat. */
+    private static double end(List<Series> all, ToDoubleFunction<Point> axis, ToDoubleFunction<Series> range) {
+        double needed =
+                all.stream().flatMap(Series::extent).mapToDouble(axis).max().orElse(1);
+        double widest = all.stream().mapToDouble(range).max().orElse(needed);
+        return ROOM * Math.max(needed, Math.min(widest, STRETCH * needed));
     }
 
     private static Series series(StockCurve c, Axes axes, int style, boolean focus) {

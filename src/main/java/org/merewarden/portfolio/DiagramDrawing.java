@@ -1,10 +1,12 @@
 package org.merewarden.portfolio;
 
+import java.util.Comparator;
+import java.util.List;
 import java.util.stream.IntStream;
 
 /** An equilibrium diagram as SVG, for pages without script and for paper. */
 final class DiagramDrawing {
-    /** Along a branch every so many points carry the stock's marker. */
+    /** Along a branch every so many points carry the stock's marker, each stock at points of its own. */
     private static final int MARKER_EVERY = 9;
 
     private DiagramDrawing() {}
@@ -19,11 +21,15 @@ final class DiagramDrawing {
 
     private static String draw(Diagram diagram, String title, double width, double height) {
         Plot plot = new Plot(width, height, 0, diagram.xMax(), diagram.yMax());
-        diagram.stocks().forEach(s -> draw(plot, s, diagram.stocks().size() > 1, diagram.xMax()));
+        boolean several = diagram.stocks().size() > 1;
+        diagram.stocks().forEach(s -> draw(plot, s, several));
+        if (several) {
+            label(plot, diagram);
+        }
         return plot.svg(title, diagram.xLabel(), diagram.yLabel(), false);
     }
 
-    private static void draw(Plot plot, Diagram.Series s, boolean several, double xMax) {
+    private static void draw(Plot plot, Diagram.Series s, boolean several) {
         String line = "line" + s.style() % 8 + (s.style() < 8 ? "" : " thick");
         if (!s.band().isEmpty()) {
             plot.area(s.band(), "band " + line);
@@ -33,7 +39,7 @@ final class DiagramDrawing {
         plot.line(s.stable(), "stable " + line).line(s.unstable(), "unstable " + line, "6 4");
         if (several) {
             IntStream.range(0, s.stable().size())
-                    .filter(i -> i % MARKER_EVERY == MARKER_EVERY / 2)
+                    .filter(i -> (i + s.style()) % MARKER_EVERY == MARKER_EVERY / 2)
                     .forEach(i -> plot.marker(s.stable().get(i), s.style(), line));
         }
         plot.line(s.most().outline(), "range " + line).line(s.half().outline(), "range half " + line);
@@ -41,9 +47,18 @@ final class DiagramDrawing {
         if (s.limit() != null) {
             plot.tick(s.limit(), "limit " + line);
         }
-        if (several) {
-            Point at = s.stable().get(s.stable().size() * 2 / 3);
-            plot.label(at, s.name(), at.x() < xMax / 2 ? "start" : "end");
+    }
+
+    /** Names stand beside the present positions, the highest first, each below the one before. */
+    private static void label(Plot plot, Diagram diagram) {
+        double free = 0;
+        List<Diagram.Series> downwards = diagram.stocks().stream()
+                .sorted(Comparator.comparingDouble((Diagram.Series s) -> s.now().y())
+                        .reversed())
+                .toList();
+        for (Diagram.Series s : downwards) {
+            String line = "line" + s.style() % 8;
+            free = plot.labelBeside(s.now(), s.name(), s.now().x() < diagram.xMax() / 2, free, line);
         }
     }
 }

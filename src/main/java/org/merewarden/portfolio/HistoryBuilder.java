@@ -22,6 +22,8 @@ import org.springframework.stereotype.Component;
 @Component
 class HistoryBuilder {
     private static final double ROOM = 1.08;
+    /** The band may stretch the axis to so many times what the line, bars and surveys need; beyond, it is cut. */
+    private static final double STRETCH = 2.5;
 
     private final Texts texts;
 
@@ -69,17 +71,19 @@ class HistoryBuilder {
             List<Point> bars,
             List<History.Series> surveys) {
         Stream<Double> tops = Stream.of(
-                        spreads.stream().map(Spread::high80),
+                        spreads.stream().map(Spread::mid),
                         Stream.of(level),
                         bars.stream().map(Point::y),
                         surveys.stream().flatMap(s -> s.points().stream()).map(Point::y))
                 .flatMap(s -> s);
+        double needed = tops.mapToDouble(Double::doubleValue).max().orElse(1);
+        double widest = spreads.stream().mapToDouble(Spread::high80).max().orElse(needed);
         History history = new History(
                 texts.get("history.season"),
                 texts.get("history." + kind + ".y"),
                 posterior.firstYear() - 0.5,
                 posterior.lastYear() + 1.5,
-                ROOM * tops.mapToDouble(Double::doubleValue).max().orElse(1),
+                ROOM * Math.max(needed, Math.min(widest, STRETCH * needed)),
                 points(posterior, spreads, Spread::mid),
                 points(posterior, spreads, Spread::low80),
                 points(posterior, spreads, Spread::high80),

@@ -101,6 +101,25 @@ final class Plot {
                 anchor, x(at.x()), y(at.y()) - 7, HtmlUtils.htmlEscape(text));
     }
 
+    /**
+     * A label beside a point, joined to it by a thin line where it had to move down.
+     *
+     * @param after to the right of the point, else to the left
+     * @param from drawing height above which the label may not stand
+     * @return the height from which the next label may stand
+     */
+    double labelBeside(Point at, String text, boolean after, double from, String cssClass) {
+        double x = x(at.x()) + (after ? 16 : -16);
+        double y = Math.max(from, y(at.y()) - 4);
+        add(
+                "<path fill=\"none\" stroke=\"currentColor\" stroke-width=\"0.75\" class=\"%s\" d=\"M%.1f,%.1fL%.1f,%.1f\"/>",
+                cssClass, x(at.x()), y(at.y()), x, y);
+        add(
+                "<text fill=\"currentColor\" font-size=\"12\" class=\"%s\" text-anchor=\"%s\" x=\"%.1f\" y=\"%.1f\">%s</text>",
+                cssClass, after ? "start" : "end", x + (after ? 2 : -2), y + 4, HtmlUtils.htmlEscape(text));
+        return y + 15;
+    }
+
     /** The finished drawing, with whole numbers without separators along the axis where it counts years. */
     String svg(String title, String xLabel, String yLabel, boolean years) {
         String axes = axes(xLabel, yLabel, years);

@@ -28,7 +28,9 @@ class StockWords {
         List<String> lede = new ArrayList<>();
         AssessmentView a = e.assessment();
         if (a != null && !a.settled()) {
-            lede.add(texts.get("stock.unsettled", String.join(" ", a.verdict())));
+            lede.add(texts.get(
+                    "stock.unsettled",
+                    String.join(" ", a.verdict().stream().limit(1).toList())));
         }
         boolean little = e.standing() != null && e.standing().mainlyLittleKnown();
         lede.add(texts.get(

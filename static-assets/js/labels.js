@@ -1,0 +1,39 @@
+// Names beside the present positions, so that no legend has to be matched by colour; the highest first, each below
+// the one before and joined to its position by a thin line.
+import { role } from "./chart.js";
+
+const LINE = 16;
+const ASIDE = 16;
+
+export const directLabels = {
+  id: "directLabels",
+  afterDatasetsDraw(chart) {
+    const { ctx, chartArea } = chart;
+    const middle = (chartArea.left + chartArea.right) / 2;
+    const named = chart.data.datasets
+      .map((d, i) => ({ name: d.direct, ink: d.borderColor, at: chart.getDatasetMeta(i).data[0] }))
+      .filter(l => l.name && l.at)
+      .sort((a, b) => a.at.y - b.at.y);
+    let free = 0;
+    ctx.save();
+    ctx.font = `${window.Chart.defaults.font.size}px ${window.Chart.defaults.font.family}`;
+    ctx.textBaseline = "middle";
+    for (const { name, ink, at } of named) {
+      const side = at.x < middle ? 1 : -1;
+      const y = Math.max(free, at.y - 4);
+      free = y + LINE;
+      ctx.strokeStyle = ctx.fillStyle = ink;
+      ctx.textAlign = side > 0 ? "left" : "right";
+      ctx.beginPath();
+      ctx.moveTo(at.x, at.y);
+      ctx.lineTo(at.x + side * ASIDE, y);
+      ctx.lineWidth = 1;
+      ctx.stroke();
+      ctx.lineWidth = 4;
+      ctx.strokeStyle = role(chart.canvas, "--paper");
+      ctx.strokeText(name, at.x + side * (ASIDE + 3), y);
+      ctx.fillText(name, at.x + side * (ASIDE + 3), y);
+    }
+    ctx.restore();
+  },
+};
