@@ -76,7 +76,7 @@ class PortfolioViewsTest {
         assertThat(row.msy()).isEqualTo("30 (24–37.5)");
         assertThat(row.yield()).isEqualTo("30");
         assertThat(row.biomass()).isEqualTo("1.2 (0.96–1.5)");
-        assertThat(row.margin()).isEqualTo("60%; 15% chance that it is negative");
+        assertThat(row.margin()).isEqualTo("60% (15%)");
         assertThat(row.limit()).isEqualTo("12\u00a0t");
         assertThat(row.taken()).isEqualTo("3.4\u00a0t");
         assertThat(row.takenBar()).contains("3.4&nbsp;t of 9.9&nbsp;t to be logged");
