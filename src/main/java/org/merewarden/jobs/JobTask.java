@@ -1,7 +1,10 @@
 package org.merewarden.jobs;
 
+import com.github.kagkarlsson.scheduler.SchedulerState;
+import com.github.kagkarlsson.scheduler.task.FailureHandler;
 import com.github.kagkarlsson.scheduler.task.helper.OneTimeTask;
 import com.github.kagkarlsson.scheduler.task.helper.Tasks;
+import java.time.Duration;
 import java.util.Map;
 import java.util.UUID;
 import java.util.function.Function;
@@ -20,10 +23,12 @@ class JobTask {
     @Bean
     OneTimeTask<Void> job(Jobs jobs, ObjectProvider<JobHandler> handlers) {
         return Tasks.oneTime(Jobs.TASK)
-                .execute((instance, context) -> run(jobs, handlers, Long.parseLong(instance.getId())));
+                .onFailure(new FailureHandler.OnFailureRetryLater<>(Duration.ofSeconds(5)))
+                .execute((instance, context) ->
+                        run(jobs, handlers, Long.parseLong(instance.getId()), context.getSchedulerState()));
     }
 
-    private static void run(Jobs jobs, ObjectProvider<JobHandler> handlers, long id) {
+    private static void run(Jobs jobs, ObjectProvider<JobHandler> handlers, long id, SchedulerState scheduler) {
         if (!jobs.begin(id)) {
             return;
         }
@@ -38,6 +43,10 @@ class JobTask {
             handler.run(job);
             jobs.end(id, job.cancelRequested() ? "CANCELLED" : "DONE", null);
         } catch (RuntimeException e) {
+            if (scheduler.isShuttingDown()) {
+                // the job did not fail: the next start takes it up where it was
+                throw e;
+            }
             String errorId = UUID.randomUUID().toString().substring(0, 8);
             LOG.error("job {} failed, error {}", id, errorId, e);
             jobs.end(id, "FAILED", "Stopped by an unexpected error; its number in the log is " + errorId + ".");

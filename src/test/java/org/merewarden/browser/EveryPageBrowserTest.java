@@ -33,6 +33,7 @@ class EveryPageBrowserTest {
             "/stocks/thavick-water/ACH",
             "/stocks/lurrow-tarn/FPE",
             "/stocks/bothrick-lake/FPE",
+            "/stocks/ilveray-water/FVE",
             "/stocks/pellowin-lake/PLN/evidence",
             "/stocks/pellowin-lake/PLN/assessments/1",
             "/stocks/pellowin-lake/PLN/advice",
@@ -46,13 +47,17 @@ class EveryPageBrowserTest {
             "/stocks/skelder-water/PLN/edit",
             "/cooperatives",
             "/cooperatives/new",
+            "/cooperatives/quilder-hands",
+            "/cooperatives/quilder-hands/edit",
             "/species-weights",
             "/imports",
             "/imports/1",
             "/formats",
             "/season/2026",
             "/season/2026/landings",
+            "/season/2026/stocks/skelder-water/PLN",
             "/landings/new",
+            "/landings/3000/correct",
             "/assessments",
             "/policy",
             "/shares",
@@ -136,7 +141,7 @@ class EveryPageBrowserTest {
         }
     }
 
-    private static void assertClean(Office office, String path) {
+    static void assertClean(Office office, String path) {
         List<Rule> violations = new AxeBuilder(office.page())
                 .withTags(LEVELS)
                 // our pages have no frames: no second page is needed to gather results

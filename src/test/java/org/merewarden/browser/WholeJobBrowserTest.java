@@ -169,6 +169,7 @@ class WholeJobBrowserTest {
             assertThat(stranger.text().toLowerCase()).doesNotContain("margin");
             assertThat(stranger.overflow()).isZero();
             stranger.picture("view-360");
+            EveryPageBrowserTest.assertClean(stranger, "the share view");
             office.press("Revoke");
             Response gone = stranger.page().navigate("http://localhost:" + port + shareAddress);
             assertThat(gone.status()).isEqualTo(404);
