@@ -38,8 +38,8 @@ final class BiomassBar {
                 + x(now, full) + "\"/>"
                 + "<path d=\"M" + x(low, full) + " 42.5H" + x(high, full) + "M" + x(low, full) + " 37v11M"
                 + x(high, full) + " 37v11\" stroke-width=\"2\"/>"
-                + mark(x(lessBelow, full), lessLabel, 20, lessBelow > full * 0.6, "")
-                + mark(x(nothingBelow, full), nothingLabel, 80, nothingBelow > full * 0.6, "5 3") + "</svg>";
+                + mark(x(lessBelow, full), lessLabel, 20, lessBelow > full * 0.5, "")
+                + mark(x(nothingBelow, full), nothingLabel, 80, nothingBelow > full * 0.5, "5 3") + "</svg>";
     }
 
     private static String mark(String x, String label, int textY, boolean toTheLeft, String dash) {

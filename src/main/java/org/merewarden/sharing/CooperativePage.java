@@ -144,7 +144,7 @@ class CooperativePage {
     }
 
     private List<String> answer(Known known, @Nullable LocalDate recorded, boolean usedUp) {
-        String taken = Figures.tonnes(known.ownTaken);
+        String taken = weight(known.ownTaken);
         String upTo = recorded == null ? word("sharing.no-record") : word("sharing.up-to", Figures.date(recorded));
         if (known.limit == null) {
             return List.of(word("sharing.no-limit"), word("sharing.taken", taken, upTo));
@@ -154,15 +154,20 @@ class CooperativePage {
         }
         double allocated = known.allocation.amountKg() / 1000.0;
         List<String> answer = new ArrayList<>();
-        answer.add(word("sharing.of-yours", taken, Figures.tonnes(allocated), upTo));
+        answer.add(word("sharing.of-yours", taken, weight(allocated), upTo));
         double left = allocated - known.ownTaken;
         if (left <= 0) {
             answer.add(word("sharing.own-used"));
         } else if (!usedUp) {
-            answer.add(word("sharing.left", Figures.tonnes(left)));
+            answer.add(word("sharing.left", weight(left)));
             answer.add(word("sharing.earlier"));
         }
         return answer;
+    }
+
+    /** Kilograms below one tonne: that is what a scale at the landing place shows. */
+    private static String weight(double tonnes) {
+        return tonnes > 0 && tonnes < 1 ? Figures.withUnit(1000 * tonnes, "kg") : Figures.tonnes(tonnes);
     }
 
     private String bar(@Nullable AssessmentView a) {
