@@ -14,14 +14,19 @@ export const directLabels = {
       .map((d, i) => ({ name: d.direct, ink: d.borderColor, at: chart.getDatasetMeta(i).data[0] }))
       .filter(l => l.name && l.at)
       .sort((a, b) => a.at.y - b.at.y);
-    let free = 0;
+    let free = chartArea.top;
+    const heights = named.map(({ at }) => (free = Math.max(free, at.y - 4) + LINE) - LINE);
+    let lowest = chartArea.bottom - LINE / 2;
+    for (let i = heights.length - 1; i >= 0; i--) {
+      heights[i] = Math.min(heights[i], lowest);
+      lowest = heights[i] - LINE;
+    }
     ctx.save();
     ctx.font = `${window.Chart.defaults.font.size}px ${window.Chart.defaults.font.family}`;
     ctx.textBaseline = "middle";
-    for (const { name, ink, at } of named) {
+    named.forEach(({ name, ink, at }, i) => {
       const side = at.x < middle ? 1 : -1;
-      const y = Math.max(free, at.y - 4);
-      free = y + LINE;
+      const y = heights[i];
       ctx.strokeStyle = ctx.fillStyle = ink;
       ctx.textAlign = side > 0 ? "left" : "right";
       ctx.beginPath();
@@ -33,7 +38,7 @@ export const directLabels = {
       ctx.strokeStyle = role(chart.canvas, "--paper");
       ctx.strokeText(name, at.x + side * (ASIDE + 3), y);
       ctx.fillText(name, at.x + side * (ASIDE + 3), y);
-    }
+    });
     ctx.restore();
   },
 };

@@ -1,7 +1,5 @@
 package org.merewarden.portfolio;
 
-import java.util.Comparator;
-import java.util.List;
 import java.util.stream.IntStream;
 
 /** An equilibrium diagram as SVG, for pages without script and for paper. */
@@ -24,7 +22,7 @@ final class DiagramDrawing {
         boolean several = diagram.stocks().size() > 1;
         diagram.stocks().forEach(s -> draw(plot, s, several));
         if (several) {
-            label(plot, diagram);
+            plot.labels(diagram.stocks().stream().map(DiagramDrawing::label).toList());
         }
         return plot.svg(title, diagram.xLabel(), diagram.yLabel(), false);
     }
@@ -49,16 +47,8 @@ final class DiagramDrawing {
         }
     }
 
-    /** Names stand beside the present positions, the highest first, each below the one before. */
-    private static void label(Plot plot, Diagram diagram) {
-        double free = 0;
-        List<Diagram.Series> downwards = diagram.stocks().stream()
-                .sorted(Comparator.comparingDouble((Diagram.Series s) -> s.now().y())
-                        .reversed())
-                .toList();
-        for (Diagram.Series s : downwards) {
-            String line = "line" + s.style() % 8;
-            free = plot.labelBeside(s.now(), s.name(), s.now().x() < diagram.xMax() / 2, free, line);
-        }
+    /** Names stand beside the present positions: in shares the curves themselves may coincide. */
+    private static Plot.Label label(Diagram.Series s) {
+        return new Plot.Label(s.now(), s.name(), "line" + s.style() % 8);
     }
 }

@@ -1,5 +1,6 @@
 package org.merewarden.portfolio;
 
+import java.util.Comparator;
 import java.util.List;
 import java.util.Locale;
 import java.util.stream.Collectors;
@@ -13,6 +14,8 @@ final class Plot {
     private static final double TOP = 12;
     private static final double RIGHT = 12;
     private static final int TICKS = 5;
+    /** Height of a line of labels. */
+    private static final double LABEL = 15;
     /** Eight markers, told apart by shape: paths about (0, 0). */
     private static final List<String> MARKERS = List.of(
             "M-4,0a4,4 0 1,0 8,0a4,4 0 1,0 -8,0",
@@ -101,23 +104,42 @@ final class Plot {
                 anchor, x(at.x()), y(at.y()) - 7, HtmlUtils.htmlEscape(text));
     }
 
-    /**
-     * A label beside a point, joined to it by a thin line where it had to move down.
-     *
-     * @param after to the right of the point, else to the left
-     * @param from drawing height above which the label may not stand
-     * @return the height from which the next label may stand
-     */
-    double labelBeside(Point at, String text, boolean after, double from, String cssClass) {
-        double x = x(at.x()) + (after ? 16 : -16);
-        double y = Math.max(from, y(at.y()) - 4);
+    record Label(Point at, String text, String cssClass) {}
+
+    /** Labels beside their points and joined to them, each below the one before where they would overlap. */
+    Plot labels(List<Label> labels) {
+        List<Label> downwards = labels.stream()
+                .sorted(Comparator.comparingDouble((Label l) -> l.at().y()).reversed())
+                .toList();
+        double[] heights = new double[labels.size()];
+        double free = TOP;
+        for (int i = 0; i < heights.length; i++) {
+            heights[i] = Math.max(free, y(downwards.get(i).at().y()) - 4);
+            free = heights[i] + LABEL;
+        }
+        double lowest = height - BOTTOM - LABEL / 2;
+        for (int i = heights.length - 1; i >= 0; i--) {
+            heights[i] = Math.min(heights[i], lowest);
+            lowest = heights[i] - LABEL;
+            label(downwards.get(i), heights[i]);
+        }
+        return this;
+    }
+
+    private void label(Label label, double labelY) {
+        double x = x(label.at().x());
+        boolean after = x < (LEFT + width - RIGHT) / 2;
+        double end = x + (after ? 16 : -16);
         add(
                 "<path fill=\"none\" stroke=\"currentColor\" stroke-width=\"0.75\" class=\"%s\" d=\"M%.1f,%.1fL%.1f,%.1f\"/>",
-                cssClass, x(at.x()), y(at.y()), x, y);
+                label.cssClass(), x, y(label.at().y()), end, labelY);
         add(
                 "<text fill=\"currentColor\" font-size=\"12\" class=\"%s\" text-anchor=\"%s\" x=\"%.1f\" y=\"%.1f\">%s</text>",
-                cssClass, after ? "start" : "end", x + (after ? 2 : -2), y + 4, HtmlUtils.htmlEscape(text));
-        return y + 15;
+                label.cssClass(),
+                after ? "start" : "end",
+                end + (after ? 2 : -2),
+                labelY + 4,
+                HtmlUtils.htmlEscape(label.text()));
     }
 
     /** The finished drawing, with whole numbers without separators along the axis where it counts years. */

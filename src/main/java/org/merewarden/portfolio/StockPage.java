@@ -10,6 +10,7 @@ import org.jspecify.annotations.Nullable;
  * @param equilibrium null where no assessment has draws, or the stock lives from stocking alone
  * @param biomass null without an assessed season, as is fishing
  * @param words fold, tipping biomass, return time
+ * @param strip evidence by kind and year as finished SVG; null without an assessment or any record
  * @param basis what the assessment rests on; empty without one
  */
 record StockPage(
@@ -26,11 +27,14 @@ record StockPage(
         List<HistoryRow> history,
         List<Term> season,
         String takenBar,
+        @Nullable String strip,
         List<String> basis,
         List<Term> estimates,
         List<Term> regressions,
         List<Link> assessments,
-        List<Link> links) {
+        List<Link> links,
+        String adviceAddress,
+        @Nullable Link notice) {
 
     /** The drawing as SVG, and its data for the script. */
     record Figure(String id, String drawing, String json) {}

@@ -8,6 +8,7 @@ import org.merewarden.assessment.AssessmentView;
 import org.merewarden.assessment.Assessments;
 import org.merewarden.core.evidence.Evidence;
 import org.merewarden.core.inference.Posterior;
+import org.merewarden.records.EvidenceStrip;
 import org.merewarden.web.Figures;
 import org.merewarden.web.NotFound;
 import org.merewarden.web.Who;
@@ -87,11 +88,24 @@ class StockPages {
                 series == null ? List.of() : history.table(series.posterior(), series.evidence()),
                 words.season(e),
                 rows.row(e).takenBar(),
+                result == null ? null : strip(e, result.evidence()),
                 result == null ? List.of() : words.basis(result.assessment(), result.evidence()),
                 estimates.terms(named, false),
                 estimates.terms(named, true),
                 earlier(e),
-                links(e, season));
+                links(e, season),
+                e.stock().path() + "/advice",
+                e.limit() == null
+                        ? null
+                        : link("notice", "/notices/" + e.limit().id()));
+    }
+
+    private @Nullable String strip(Entry e, Evidence evidence) {
+        EvidenceStrip strip = EvidenceStrip.of(evidence);
+        return strip.rows().isEmpty()
+                ? null
+                : strip.svg(
+                        texts.of("records.strip.title", e.stock().title()), kind -> texts.of("records.strip." + kind));
     }
 
     private @Nullable String missing(@Nullable Result result) {
@@ -125,9 +139,6 @@ class StockPages {
         List<StockPage.Link> links = new ArrayList<>();
         links.add(link("evidence", e.stock().path() + "/evidence"));
         links.add(link("advice", e.stock().path() + "/advice"));
-        if (e.limit() != null) {
-            links.add(link("notice", "/notices/" + e.limit().id()));
-        }
         links.add(link("landings", "/season/" + season + "/landings"));
         links.add(link(
                 "enter",

@@ -119,7 +119,7 @@ class StockWords {
         }
         terms.add(term("taken", taken == null ? texts.get("season.nothing") : Figures.tonnes(taken)));
         Double allowed = limit == null ? null : limit.toBeLoggedTonnes();
-        if (allowed != null && taken != null) {
+        if (allowed != null && allowed > 0 && taken != null) {
             terms.add(term("left", left(allowed - taken)));
         }
         addRecords(terms, e.uptake());

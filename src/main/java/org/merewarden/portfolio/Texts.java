@@ -18,9 +18,14 @@ class Texts {
         return messages.getMessage("portfolio." + key, arguments, LocaleContextHolder.getLocale());
     }
 
-    /** The text under the key, or the fallback where there is none. */
+    /** A text of another feature, by its whole key. */
+    String of(String key, Object... arguments) {
+        return messages.getMessage(key, arguments, LocaleContextHolder.getLocale());
+    }
+
+    /** The text under the whole key, or the fallback where there is none. */
     String orElse(String key, String fallback) {
-        String text = messages.getMessage("portfolio." + key, new Object[0], "", LocaleContextHolder.getLocale());
+        String text = messages.getMessage(key, new Object[0], "", LocaleContextHolder.getLocale());
         return text == null || text.isEmpty() ? fallback : text;
     }
 

@@ -64,7 +64,7 @@ public record EvidenceStrip(List<Row> rows, int firstYear, int lastYear) {
      *
      * @param labels the kinds' names for people
      */
-    String svg(String title, Function<String, String> labels) {
+    public String svg(String title, Function<String, String> labels) {
         int years = lastYear - firstYear + 1;
         double step = (WIDTH - LABELS) / (double) years;
         List<String> parts = new ArrayList<>();

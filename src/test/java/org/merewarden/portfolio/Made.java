@@ -23,7 +23,7 @@ final class Made {
 
     static Texts texts() {
         ResourceBundleMessageSource messages = new ResourceBundleMessageSource();
-        messages.setBasename("messages/portfolio");
+        messages.setBasenames("messages/portfolio", "messages/records", "messages/common");
         messages.setDefaultEncoding("UTF-8");
         messages.setFallbackToSystemLocale(false);
         return new Texts(messages);
