@@ -7,6 +7,9 @@ export const colour = (element, i) => role(element, ROLES[i % ROLES.length]);
 
 export const dataOf = canvas => JSON.parse(document.getElementById(canvas.dataset.chart).textContent);
 
+/** Width to height; on a phone a chart needs height more than it has width. */
+export const proportion = (canvas, wide) => (canvas.parentElement.clientWidth < 480 ? 1 : wide);
+
 /** Shows the canvas and hides the drawing beside it; false where charts are not to be had. */
 export function takeOver(canvas) {
   if (!window.Chart) return false;

@@ -1,5 +1,5 @@
 // Draws an equilibrium diagram from the page's data in place of the drawing that the server made.
-import { colour, dataOf, takeOver } from "./chart.js";
+import { colour, dataOf, proportion, takeOver } from "./chart.js";
 import { directLabels } from "./labels.js";
 
 const SHAPES = ["circle", "rect", "triangle", "rectRot", "cross", "crossRot", "triangle", "star"];
@@ -40,7 +40,7 @@ export function drawEquilibrium(canvas) {
     data: { datasets: data.stocks.flatMap(s => datasets(s, data.words, colour(canvas, s.style), data.stocks.length > 1)) },
     options: {
       animation: false,
-      aspectRatio: 1.5,
+      aspectRatio: proportion(canvas, 1.5),
       scales: { x: axis(data.xLabel, data.xMax), y: axis(data.yLabel, data.yMax) },
       plugins: {
         legend: { display: false },

@@ -1,5 +1,5 @@
 // Draws a history (median with band, a level, bars, surveys) from the page's data in place of the server's drawing.
-import { colour, dataOf, takeOver } from "./chart.js";
+import { colour, dataOf, proportion, takeOver } from "./chart.js";
 
 const SHAPES = ["circle", "rect", "triangle", "rectRot", "cross", "crossRot", "star"];
 
@@ -37,7 +37,7 @@ function drawHistory(canvas) {
     data: { datasets: datasets(h, canvas) },
     options: {
       animation: false,
-      aspectRatio: 2.2,
+      aspectRatio: proportion(canvas, 2.2),
       scales: {
         x: { type: "linear", offset: false, min: h.from, max: h.to, title: { display: true, text: h.xLabel }, afterBuildTicks: axis => { axis.ticks = seasons(h); }, ticks: { callback: v => String(v) } },
         y: { min: 0, max: h.yMax, title: { display: true, text: h.yLabel }, ticks: { includeBounds: false } },

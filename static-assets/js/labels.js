@@ -26,9 +26,11 @@ export const directLabels = {
     ctx.textBaseline = "middle";
     named.forEach(({ name, ink, at }, i) => {
       const side = at.x < middle ? 1 : -1;
+      const width = ctx.measureText(name).width;
+      const start = side > 0 ? at.x + ASIDE + 3 : at.x - ASIDE - 3 - width;
+      const x = Math.max(chartArea.left + 3, Math.min(start, chartArea.right - width));
       const y = heights[i];
       ctx.strokeStyle = ctx.fillStyle = ink;
-      ctx.textAlign = side > 0 ? "left" : "right";
       ctx.beginPath();
       ctx.moveTo(at.x, at.y);
       ctx.lineTo(at.x + side * ASIDE, y);
@@ -36,8 +38,8 @@ export const directLabels = {
       ctx.stroke();
       ctx.lineWidth = 4;
       ctx.strokeStyle = role(chart.canvas, "--paper");
-      ctx.strokeText(name, at.x + side * (ASIDE + 3), y);
-      ctx.fillText(name, at.x + side * (ASIDE + 3), y);
+      ctx.strokeText(name, x, y);
+      ctx.fillText(name, x, y);
     });
     ctx.restore();
   },
