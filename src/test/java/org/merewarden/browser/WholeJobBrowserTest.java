@@ -65,7 +65,7 @@ class WholeJobBrowserTest {
             office.press("Compare the chosen stocks");
             assertThat(office.path()).startsWith("/portfolio/compare?");
             assertThat(office.page().locator("main table tbody tr").count()).isGreaterThanOrEqualTo(3);
-            assertThat(office.page().locator("main canvas").first().isVisible()).isTrue();
+            office.page().locator("main canvas").first().waitFor();
             office.picture("compare-1280");
             office.page().locator("main table tbody th a").first().click();
             assertThat(office.path()).startsWith("/stocks/");
