@@ -34,7 +34,7 @@ class EveryPageBrowserTest {
             "/stocks/lurrow-tarn/FPE",
             "/stocks/bothrick-lake/FPE",
             "/stocks/ilveray-water/FVE",
-            "/stocks/pellowin-lake/PLN/evidence",
+            "/stocks/orlow-tarn/ACH/evidence",
             "/stocks/pellowin-lake/PLN/assessments/1",
             "/stocks/pellowin-lake/PLN/advice",
             "/notices/1",
@@ -54,7 +54,7 @@ class EveryPageBrowserTest {
             "/imports/1",
             "/formats",
             "/season/2026",
-            "/season/2026/landings",
+            "/season/2026/landings?lake=orlow-tarn",
             "/season/2026/stocks/skelder-water/PLN",
             "/landings/new",
             "/landings/3000/correct",
@@ -64,6 +64,10 @@ class EveryPageBrowserTest {
             "/activity");
 
     private static final List<String> ADMINISTRATORS = List.of("/accounts", "/settings");
+
+    /** Looked at by axe at both widths; the others differ in width alone and are looked at on the phone. */
+    private static final List<String> WIDE_TOO =
+            List.of("/portfolio", "/stocks/pellowin-lake/PLN", "/stocks/pellowin-lake/PLN/advice", "/season/2026");
 
     @LocalServerPort
     private int port;
@@ -107,7 +111,9 @@ class EveryPageBrowserTest {
             assertThat(office.page().locator("h1").count()).as("one h1").isEqualTo(1);
             office.picture("page-" + name + (office == wide ? "-1280" : "-360"));
             assertThat(office.overflow()).as("pixels wider than the window").isZero();
-            assertClean(office, path);
+            if (office == narrow || WIDE_TOO.contains(path)) {
+                assertClean(office, path);
+            }
         }
     }
 
