@@ -5,6 +5,7 @@ import java.time.ZoneOffset;
 import java.util.List;
 import java.util.Map;
 import org.merewarden.activity.ActivityLog;
+import org.merewarden.intake.Column;
 import org.merewarden.intake.Fate;
 import org.merewarden.intake.Problem;
 import org.merewarden.intake.TableRow;
@@ -38,6 +39,7 @@ class RecordDesk {
         TableRow row = form.row(owner);
         RecordHandler handler = handler(form.table());
         checkChoices(form.table(), row, errors);
+        checkBounds(form.table(), row, errors);
         if (errors.hasErrors()) {
             return;
         }
@@ -71,6 +73,21 @@ class RecordDesk {
                         "records.choice",
                         new Object[] {row.textOrEmpty(c.name())},
                         "none of the choices"));
+    }
+
+    /** The bounds of the columns hold for typed figures too, also where a form's own rules are silent. */
+    private static void checkBounds(RecordTable table, TableRow row, Errors errors) {
+        for (RecordTable.Field field : table.fields()) {
+            Column column = field.column();
+            if (row.values().get(column.name()) instanceof Number number
+                    && !(number.doubleValue() >= column.min() && number.doubleValue() <= column.max())) {
+                errors.rejectValue(
+                        RecordForm.property(column.name()),
+                        "records.bounds",
+                        new Object[] {Cells.text(number), Cells.plain(column.min()), Cells.plain(column.max())},
+                        "out of bounds");
+            }
+        }
     }
 
     private static void reject(RecordTable table, Problem problem, Errors errors) {

@@ -74,7 +74,7 @@ abstract class RecordForm {
 
         @NotNull(message = "{form.needed}")
         @DecimalMin(value = "0", message = "{form.least}")
-        @DecimalMax(value = "1000000", message = "{form.most}")
+        @DecimalMax(value = "100000000", message = "{form.most}")
         public @Nullable Double catchT;
 
         @DecimalMin(value = "0.001", message = "{form.least}")

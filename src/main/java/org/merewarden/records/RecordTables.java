@@ -42,7 +42,7 @@ final class RecordTables {
                             .orElse("commercial")),
                     field(number("catch_t", "live weight in tonnes, as reported")
                             .mandatory()
-                            .between(0, 1e6)),
+                            .between(0, 1e8)),
                     field(CV),
                     field(number("reported_fraction", "part of the true catch that was reported, 0 to 1; empty: all")
                             .between(0.001, 1)),

@@ -17,21 +17,32 @@ import org.springframework.web.bind.WebDataBinder;
 public final class FormBinding {
     private FormBinding() {}
 
-    /** To be called from a controller's {@code @InitBinder}. */
+    /** For forms with public fields; to be called from a controller's {@code @InitBinder}. */
     public static void prepare(WebDataBinder binder) {
         binder.initDirectFieldAccess();
-        binder.setBindingErrorProcessor(new NamesTheValue());
         binder.registerCustomEditor(String.class, new StringTrimmerEditor(true));
+        numbers(binder);
+    }
+
+    /** For forms with accessors: numbers as people write them, and an answer that names what is none. */
+    public static void numbers(WebDataBinder binder) {
+        binder.setBindingErrorProcessor(new NamesTheValue());
         binder.registerCustomEditor(Double.class, new NumberEditor(FormBinding::decimal, v -> Cells.plain((Double) v)));
         binder.registerCustomEditor(Integer.class, new NumberEditor(Integer::valueOf, Object::toString));
     }
 
+    /** A comma that may as well part thousands (1,250) is refused: taken for a decimal it would be a thousand times off. */
     private static Double decimal(String text) {
         String pointed = text.indexOf('.') < 0 ? text.replace(',', '.') : text;
-        if (!pointed.matches("[+-]?(\\d+(\\.\\d*)?|\\.\\d+)([eE][+-]?\\d{1,3})?")) {
+        if (!pointed.matches("[+-]?(\\d+(\\.\\d*)?|\\.\\d+)([eE][+-]?\\d{1,3})?")
+                || text.matches("[+-]?[1-9]\\d{0,2},\\d{3}")) {
             throw new NumberFormatException(text);
         }
-        return Double.valueOf(pointed);
+        double value = Double.parseDouble(pointed);
+        if (Double.isInfinite(value)) {
+            throw new NumberFormatException(text);
+        }
+        return value;
     }
 
     private static final class NumberEditor extends PropertyEditorSupport {

@@ -151,6 +151,27 @@ class EvidencePagesTest {
     }
 
     @Test
+    void typedFiguresObeyTheBoundsOfTheColumns() throws Exception {
+        for (String effort : List.of("1e999", "1e300", "1,250")) {
+            mvc.perform(post(EVIDENCE + "/effort/new")
+                            .with(csrf())
+                            .param("year", "2020")
+                            .param("series", "nets")
+                            .param("effort", effort)
+                            .param("source", "ledger"))
+                    .andExpect(status().is(422))
+                    .andExpect(model().attributeHasFieldErrors("form", "effort"));
+        }
+        enterCatch("5000000", "a sea, in t").andExpect(redirectedUrl(EVIDENCE));
+        enterCatch("100000001", "beyond all measure").andExpect(status().is(422));
+        assertThat(jdbc.sql("select count(*) from effort_record where stock_id = ?")
+                        .param(stock)
+                        .query(Integer.class)
+                        .single())
+                .isZero();
+    }
+
+    @Test
     void anEventOfTheWaterReachesItsStock() throws Exception {
         mvc.perform(get("/water-bodies/paged-lake/events"))
                 .andExpect(status().isOk())
