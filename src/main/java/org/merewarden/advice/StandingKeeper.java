@@ -52,6 +52,11 @@ class StandingKeeper implements Standings {
     /** Judges the stock anew; without draws nothing stands, and an earlier standing is taken away. */
     @Transactional
     public void refresh(long stockId) {
+        // an assessment and a decision at the same moment: the second sees what the first has stored
+        jdbc.sql("select id from stock where id = ? for update")
+                .param(stockId)
+                .query(Long.class)
+                .optional();
         Optional<AssessmentView> latest = assessments.latest(stockId);
         if (latest.isEmpty()) {
             return;

@@ -45,8 +45,15 @@ class AssessmentStore implements Assessments {
         this.clock = clock;
     }
 
-    /** Stores the next assessment of the stock; returns its id. */
+    /**
+     * Stores the next assessment of the stock; returns its id. The stock's row is locked: of two runs over the same
+     * stock the second waits for its number, and standings follow in the same order.
+     */
     long add(long stockId, @Nullable Long jobId, String by, Evidence evidence, Posterior posterior) {
+        jdbc.sql("select id from stock where id = ? for update")
+                .param(stockId)
+                .query(Long.class)
+                .single();
         var summary = new Summary(posterior);
         int number = jdbc.sql("select coalesce(max(number), 0) + 1 from assessment where stock_id = ?")
                 .param(stockId)
