@@ -182,7 +182,15 @@ class Examiner {
                 }
             }
         }
-        return new TableRow(row.line(), values);
+        return new TableRow(row.line(), values, absent(table, file, row));
+    }
+
+    /** A cell that was typed when the row was mended speaks, also where the file has no such column. */
+    private static Set<String> absent(TableDefinition table, ImportedFile file, ImportedFile.Row row) {
+        Set<String> absent = new HashSet<>(table.columnNames());
+        file.header().forEach(absent::remove);
+        absent.removeAll(row.cells().keySet());
+        return absent;
     }
 
     /** Keys that differ in case only count as the same: one of the two would be a slip of the pen. */

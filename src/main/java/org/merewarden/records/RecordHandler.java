@@ -46,7 +46,15 @@ class RecordHandler implements TableHandler {
     public List<Fate> examine(List<TableRow> rows, Batch batch) {
         StockReferences references = StockReferences.of(register);
         Map<String, Owned> inForce = inForce(rows, references);
-        return rows.stream().map(row -> fate(row, references, inForce, batch)).toList();
+        return rows.stream()
+                .map(row -> fate(whole(row, references, inForce), references, inForce, batch))
+                .toList();
+    }
+
+    /** The row together with what is in force of the columns that its file does not have. */
+    private TableRow whole(TableRow row, StockReferences references, Map<String, Owned> inForce) {
+        Owned before = inForce.get(table.key(owner(row, references).orElse(-1L), table.cells(row)));
+        return before == null ? row : row.over(before.row().cells());
     }
 
     private Fate fate(TableRow row, StockReferences references, Map<String, Owned> inForce, Batch batch) {
@@ -76,10 +84,12 @@ class RecordHandler implements TableHandler {
 
     void store(List<TableRow> rows, Entry entry) {
         StockReferences references = StockReferences.of(register);
+        Map<String, Owned> inForce = inForce(rows, references);
         List<Wanted> wanted = rows.stream()
+                .map(row -> whole(row, references, inForce))
                 .map(row -> new Wanted(owner(row, references).orElseThrow(), table.cells(row)))
                 .toList();
-        store.write(table, wanted, inForce(rows, references), entry);
+        store.write(table, wanted, inForce, entry);
     }
 
     private Map<String, Owned> inForce(List<TableRow> rows, StockReferences references) {

@@ -18,7 +18,8 @@ import org.springframework.data.jpa.repository.JpaRepository;
 
 /**
  * The register's side of the importer. The register is small (hundreds of rows), so each table is read whole. A file that
- * leaves a cell empty says that the value is unknown; the preview shows what would be lost.
+ * leaves a cell empty says that the value is unknown; the preview shows what would be lost. About a column that the file
+ * does not have it says nothing, and what is stored stays.
  *
  * @param <E> the entity behind the table
  */
@@ -54,7 +55,10 @@ abstract class RegisterHandler<E> implements TableHandler {
         StockReferences references = StockReferences.of(register);
         Map<String, E> stored = stored();
         return rows.stream()
-                .map(row -> fate(row, stored.get(key(row)), references, batch))
+                .map(row -> {
+                    E before = stored.get(key(row));
+                    return fate(before == null ? row : row.over(cells(before)), before, references, batch);
+                })
                 .toList();
     }
 
@@ -81,7 +85,7 @@ abstract class RegisterHandler<E> implements TableHandler {
             if (before == null) {
                 fresh.add(make(row, references));
             } else {
-                replace(before, row, provenance);
+                replace(before, row.over(cells(before)), provenance);
             }
         }
         repository.saveAll(fresh);

@@ -8,6 +8,7 @@ import java.util.Arrays;
 import java.util.HashMap;
 import java.util.List;
 import java.util.Map;
+import java.util.Set;
 import org.junit.jupiter.api.BeforeEach;
 import org.junit.jupiter.api.Test;
 import org.merewarden.TestRegion;
@@ -98,6 +99,38 @@ class RecordHandlersTest {
                     assertThat(old.get("import_id")).isEqualTo(provenance.importId());
                 });
         assertThat(count("catch_record where season_year = 2021")).isEqualTo(1);
+    }
+
+    @Test
+    void aColumnThatTheFileDoesNotHaveLeavesWhatIsStored() {
+        Map<String, Object> told = Map.of(
+                "water_body",
+                "kept-lake",
+                "species",
+                "FPE",
+                "year",
+                2020,
+                "sector",
+                "commercial",
+                "catch_t",
+                12.4,
+                "cv",
+                0.2,
+                "source",
+                "ledger");
+        store(catchHandler, new TableRow(2, told));
+        Map<String, Object> less = new HashMap<>(told);
+        less.keySet().removeAll(Set.of("cv", "source"));
+        TableRow emptied = new TableRow(2, less);
+        TableRow without = new TableRow(2, less, Set.of("cv", "source", "reported_fraction"));
+        assertThat(catchHandler.examine(List.of(emptied), ALONE))
+                .containsExactly(Fate.changed("cv 0.2 → unknown; source ledger → unknown"));
+        assertThat(catchHandler.examine(List.of(without), ALONE)).containsExactly(Fate.SAME);
+        less.put("catch_t", 13.0);
+        TableRow changed = new TableRow(2, less, Set.of("cv", "source", "reported_fraction"));
+        assertThat(catchHandler.examine(List.of(changed), ALONE)).containsExactly(Fate.changed("catch_t 12.4 → 13"));
+        store(catchHandler, changed);
+        assertThat(reader.evidence(stock).catches()).containsExactly(new CatchRecord(2020, "commercial", 13, 0.2, 1));
     }
 
     @Test

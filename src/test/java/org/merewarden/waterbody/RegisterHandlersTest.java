@@ -8,6 +8,7 @@ import java.util.Arrays;
 import java.util.HashMap;
 import java.util.List;
 import java.util.Map;
+import java.util.Set;
 import org.junit.jupiter.api.Test;
 import org.merewarden.TestRegion;
 import org.merewarden.WholeApplication;
@@ -64,6 +65,21 @@ class RegisterHandlersTest {
                         .query(String.class)
                         .single())
                 .contains("area_ha 120");
+    }
+
+    @Test
+    void aColumnThatTheFileDoesNotHaveLeavesWhatIsStored() {
+        TableRow whole = row("code", "part-lake", "name", "Part Lake", "kind", "lagoon", "area_ha", 120.0);
+        waterBodies.store(List.of(whole), IMPORT);
+        // a default stands in the cell of a column that is not there, too
+        Map<String, Object> told = Map.of("code", "part-lake", "name", "Part Lake", "kind", "lake", "area_ha", 90.0);
+        TableRow part = new TableRow(2, told, Set.of("kind", "note"));
+
+        assertThat(waterBodies.examine(List.of(part), ALONE)).containsExactly(Fate.changed("area_ha 120 → 90"));
+        waterBodies.store(List.of(part), IMPORT);
+        assertThat(register.waterBody("part-lake").orElseThrow())
+                .satisfies(lake -> assertThat(lake.kind()).isEqualTo("lagoon"))
+                .satisfies(lake -> assertThat(lake.areaHectares()).isEqualTo(90));
     }
 
     @Test
