@@ -1,5 +1,6 @@
 package org.merewarden.intake;
 
+import static java.nio.charset.StandardCharsets.UTF_8;
 import static org.assertj.core.api.Assertions.assertThat;
 import static org.assertj.core.api.Assertions.assertThatThrownBy;
 import static org.hamcrest.Matchers.containsString;
@@ -15,6 +16,10 @@ import static org.springframework.test.web.servlet.result.MockMvcResultMatchers.
 import static org.springframework.test.web.servlet.result.MockMvcResultMatchers.redirectedUrl;
 import static org.springframework.test.web.servlet.result.MockMvcResultMatchers.status;
 
+import java.net.URI;
+import java.net.http.HttpClient;
+import java.net.http.HttpRequest;
+import java.net.http.HttpResponse;
 import java.nio.charset.StandardCharsets;
 import java.nio.file.Files;
 import java.nio.file.Path;
@@ -24,6 +29,7 @@ import org.junit.jupiter.api.Test;
 import org.junit.jupiter.api.io.TempDir;
 import org.merewarden.WholeApplication;
 import org.springframework.beans.factory.annotation.Autowired;
+import org.springframework.boot.test.web.server.LocalServerPort;
 import org.springframework.jdbc.core.JdbcTemplate;
 import org.springframework.mock.web.MockMultipartFile;
 import org.springframework.test.web.servlet.MockMvc;
@@ -37,6 +43,9 @@ import org.springframework.test.web.servlet.request.RequestPostProcessor;
 class ImportPagesTest {
     private static final String HEADER = "gadget_code,gadget_year,weight_t,colour\n";
     private static final RequestPostProcessor BIOLOGIST = user("ada").roles("BIOLOGIST");
+
+    @LocalServerPort
+    private int port;
 
     @Autowired
     private MockMvc mvc;
@@ -229,6 +238,21 @@ class ImportPagesTest {
         see("/imports/999999").andExpect(status().isNotFound());
         long id = upload(file("test-gadgets.csv", HEADER + "other,2020,1,\n"));
         see("/imports/999999/rows/" + row(id, 2)).andExpect(status().isNotFound());
+    }
+
+    /** Over a real connection: the server must read on, or the browser shows a broken connection and no sentence. */
+    @Test
+    void aFileBeyondTheLimitIsAnsweredWithASentence() throws Exception {
+        String start = "--x\r\nContent-Disposition: form-data; name=\"files\"; filename=\"big.csv\"\r\n\r\n";
+        byte[] file = new byte[51 * 1024 * 1024];
+        HttpRequest request = HttpRequest.newBuilder(URI.create("http://localhost:" + port + "/imports"))
+                .header("Content-Type", "multipart/form-data; boundary=x")
+                .POST(HttpRequest.BodyPublishers.ofByteArrays(
+                        List.of(start.getBytes(UTF_8), file, "\r\n--x--\r\n".getBytes(UTF_8))))
+                .build();
+        HttpResponse<String> answer = HttpClient.newHttpClient().send(request, HttpResponse.BodyHandlers.ofString());
+        assertThat(answer.statusCode()).isEqualTo(413);
+        assertThat(answer.body()).contains("larger than 50 MB");
     }
 
     @Test
