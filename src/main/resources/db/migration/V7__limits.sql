@@ -36,7 +36,8 @@ create table limit_decision (
     decided_at timestamp with time zone not null,
     decided_by varchar(60) not null,
     effective_at timestamp with time zone not null,
-    reason varchar(4000) not null,
+    -- what was written, up to 4000 characters, and that it is an own proposal
+    reason varchar(4100) not null,
     unique (limit_id, act)
 );
 

@@ -10,6 +10,7 @@ import org.merewarden.assessment.Assessments;
 import org.merewarden.waterbody.Register;
 import org.merewarden.waterbody.StockView;
 import org.merewarden.web.Choice;
+import org.merewarden.web.FormBinding;
 import org.merewarden.web.NotFound;
 import org.merewarden.web.Seasons;
 import org.springframework.context.MessageSource;
@@ -18,7 +19,9 @@ import org.springframework.http.HttpStatus;
 import org.springframework.stereotype.Controller;
 import org.springframework.ui.Model;
 import org.springframework.validation.BindingResult;
+import org.springframework.web.bind.WebDataBinder;
 import org.springframework.web.bind.annotation.GetMapping;
+import org.springframework.web.bind.annotation.InitBinder;
 import org.springframework.web.bind.annotation.ModelAttribute;
 import org.springframework.web.bind.annotation.PathVariable;
 import org.springframework.web.bind.annotation.PostMapping;
@@ -50,6 +53,11 @@ class AdviceController {
         this.assessments = assessments;
         this.seasons = seasons;
         this.messages = messages;
+    }
+
+    @InitBinder("form")
+    void binder(WebDataBinder binder) {
+        FormBinding.numbers(binder);
     }
 
     @ModelAttribute("kinds")
@@ -85,6 +93,7 @@ class AdviceController {
         crossField(result, "amountGiven", "amount");
         crossField(result, "setAsidesWithinLimit", "subsistence");
         crossField(result, "datesInOrder", "validTo");
+        crossField(result, "datesWithinReason", "validTo");
         if (result.hasErrors()) {
             response.setStatus(HttpStatus.UNPROCESSABLE_CONTENT.value());
             return page(stock, model);

@@ -53,6 +53,15 @@ class Decisions {
         this.clock = clock;
     }
 
+    /** What the store holds of a reason, less the words that an own proposal adds. */
+    static final int LONGEST_REASON = 4000;
+
+    private static void checkLength(@Nullable String reason) {
+        if (reason != null && reason.length() > LONGEST_REASON) {
+            throw new NotAllowed("advice.reason.long");
+        }
+    }
+
     /** Writes the proposal down; returns the number of the notice-to-be. */
     @Transactional
     public long propose(NewLimit limit, String reason) {
@@ -69,6 +78,7 @@ class Decisions {
      */
     @Transactional
     public void issue(long id, @Nullable String remark) {
+        checkLength(remark);
         NewLimit limit = open(id);
         LimitHistory.Decision proposal = history.ofLimit(id).get(0);
         boolean own = proposal.decidedBy().equals(Who.name());
@@ -88,6 +98,7 @@ class Decisions {
 
     @Transactional
     public void refuse(long id, String reason) {
+        checkLength(reason);
         NewLimit limit = open(id);
         writer.decide(id, LimitWriter.REFUSED, Who.name(), clock.instant(), reason);
         activity.record("refused limit", subject(id, limit), "proposed", reason);
@@ -96,6 +107,7 @@ class Decisions {
     /** Takes an issued limit out of force. */
     @Transactional
     public void withdraw(long id, String reason) {
+        checkLength(reason);
         writer.lock(id);
         NewLimit limit = find(id);
         List<String> acts =

@@ -30,7 +30,7 @@ class LimitForm {
     @DecimalMax(value = "10000000", message = "{advice.form.amount.range}")
     private @Nullable Double amount;
 
-    @Size(max = 60)
+    @Size(max = 60, message = "{advice.form.long}")
     private String unit = "t";
 
     @PositiveOrZero(message = "{advice.form.setAside.range}")
@@ -62,17 +62,17 @@ class LimitForm {
     @DateTimeFormat(iso = DateTimeFormat.ISO.DATE)
     private @Nullable LocalDate validTo;
 
-    @Size(max = 4000)
+    @Size(max = 4000, message = "{advice.form.long}")
     private String measures = "";
 
-    @Size(max = 1000)
+    @Size(max = 1000, message = "{advice.form.long}")
     private String legalBasis = "";
 
-    @Size(max = 1000)
+    @Size(max = 1000, message = "{advice.form.long}")
     private String objection = "";
 
     @NotBlank(message = "{advice.form.reason.needed}")
-    @Size(max = 4000)
+    @Size(max = 4000, message = "{advice.form.long}")
     private String reason = "";
 
     @AssertTrue(message = "{advice.form.amount.needed}")
@@ -88,6 +88,15 @@ class LimitForm {
     @AssertTrue(message = "{advice.form.date.order}")
     boolean isDatesInOrder() {
         return validFrom == null || validTo == null || !validFrom.isAfter(validTo);
+    }
+
+    @AssertTrue(message = "{advice.form.date.range}")
+    boolean isDatesWithinReason() {
+        return withinReason(validFrom) && withinReason(validTo);
+    }
+
+    private static boolean withinReason(@Nullable LocalDate date) {
+        return date == null || (date.getYear() >= 1800 && date.getYear() <= 2201);
     }
 
     private double setAsides() {

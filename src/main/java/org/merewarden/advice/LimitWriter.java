@@ -96,6 +96,22 @@ class LimitWriter {
         allocate(limitId, limit);
     }
 
+    /** Puts a limit from papers in force, unless one that was issued later is; then it is superseded as it comes. */
+    void enterInForce(long limitId, NewLimit limit, Instant issued, String by) {
+        Optional<Long> later = jdbc.sql("""
+                        select f.limit_id from limit_in_force f
+                        join limit_decision d on d.limit_id = f.limit_id and d.act = 'ISSUED'
+                        where f.stock_id = ? and f.season_year = ? and d.effective_at > ?""")
+                .params(limit.stockId(), limit.season(), issued.atOffset(ZoneOffset.UTC))
+                .query(Long.class)
+                .optional();
+        if (later.isPresent()) {
+            decide(limitId, SUPERSEDED, by, clock.instant(), "superseded by notice " + later.get());
+        } else {
+            putInForce(limitId, limit, by);
+        }
+    }
+
     void endForce(long limitId) {
         jdbc.sql("delete from limit_in_force where limit_id = ?").param(limitId).update();
     }

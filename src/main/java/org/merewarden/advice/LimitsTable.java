@@ -5,6 +5,7 @@ import static org.merewarden.intake.Column.number;
 import static org.merewarden.intake.Column.text;
 import static org.merewarden.intake.Column.year;
 
+import java.time.Instant;
 import java.time.LocalDate;
 import java.time.OffsetDateTime;
 import java.time.ZoneOffset;
@@ -54,14 +55,15 @@ class LimitsTable implements TableHandler {
                                             .oneOf("catch", "effort", "measures only"),
                                     number("amount", "total removals in t, or effort in its unit")
                                             .between(0, 1e7),
-                                    text("unit", "t for a catch limit"),
+                                    text("unit", "t for a catch limit").atMost(60),
                                     number("set_aside_t", "kept for subsistence, angling, research and others, t")
                                             .between(0, 1e7),
                                     date("valid_from", "first day; empty: the season's first"),
                                     date("valid_to", "last day; empty: the season's last"),
-                                    text("measures", "sizes, mesh, closed times, as text"),
-                                    text("legal_basis", "law or ordinance"),
-                                    text("reason", "why this limit")))
+                                    text("measures", "sizes, mesh, closed times, as text")
+                                            .atMost(4000),
+                                    text("legal_basis", "law or ordinance").atMost(1000),
+                                    text("reason", "why this limit").atMost(4000)))
                     .toList());
 
     private final JdbcClient jdbc;
@@ -98,10 +100,18 @@ class LimitsTable implements TableHandler {
     public List<Fate> examine(List<TableRow> rows, Batch batch) {
         StockReferences references = StockReferences.of(register);
         Map<String, Stored> stored = stored();
-        return rows.stream().map(row -> fate(row, references, stored, batch)).toList();
+        Map<String, Long> decided = decidedInForce();
+        return rows.stream()
+                .map(row -> fate(row, references, stored, decided, batch))
+                .toList();
     }
 
-    private Fate fate(TableRow row, StockReferences references, Map<String, Stored> stored, Batch batch) {
+    private Fate fate(
+            TableRow row,
+            StockReferences references,
+            Map<String, Stored> stored,
+            Map<String, Long> decided,
+            Batch batch) {
         Problem unknown = references.stockProblem(row, batch);
         if (unknown != null) {
             return Fate.refused(unknown);
@@ -115,7 +125,15 @@ class LimitsTable implements TableHandler {
                 .map(stock -> stored.get(key(stock.id(), row)))
                 .orElse(null);
         if (earlier == null) {
-            return Fate.NEW;
+            return references
+                    .stock(row)
+                    .map(stock -> decided.get(stock.id() + "|" + season(row)))
+                    .map(notice -> Fate.refused(new Problem(
+                            "season",
+                            Integer.toString(season(row)),
+                            "notice " + notice + ", decided in this office, is in force; a limit from papers does not"
+                                    + " supersede it: propose a revision or withdraw the notice first")))
+                    .orElse(Fate.NEW);
         }
         return sameContent(earlier, row)
                 ? Fate.SAME
@@ -132,6 +150,11 @@ class LimitsTable implements TableHandler {
         Double setAside = row.number("set_aside_t");
         LocalDate from = from(row);
         LocalDate to = to(row);
+        LocalDate issuedOn = Objects.requireNonNull(row.date("issued_on"));
+        if (issuedOn.isAfter(seasons.today())) {
+            return Optional.of(
+                    new Problem("issued_on", issuedOn.toString(), "lies in the future; today is " + seasons.today()));
+        }
         if (amount == null && !kind.equals("measures only")) {
             return Optional.of(new Problem("amount", "", "a limit of kind " + kind + " needs an amount"));
         }
@@ -197,13 +220,9 @@ class LimitsTable implements TableHandler {
         NewLimit limit = limit(stock, row, reported);
         long id = writer.add(limit, provenance.by());
         LocalDate issuedOn = Objects.requireNonNull(row.date("issued_on"));
-        writer.decide(
-                id,
-                LimitWriter.ISSUED,
-                provenance.by(),
-                issuedOn.atStartOfDay(ZoneOffset.UTC).toInstant(),
-                reason(row));
-        writer.putInForce(id, limit, provenance.by());
+        Instant issued = issuedOn.atStartOfDay(ZoneOffset.UTC).toInstant();
+        writer.decide(id, LimitWriter.ISSUED, provenance.by(), issued, reason(row));
+        writer.enterInForce(id, limit, issued, provenance.by());
     }
 
     private NewLimit limit(long stock, TableRow row, double reportedFraction) {
@@ -257,6 +276,17 @@ class LimitsTable implements TableHandler {
                 .stream()
                 .collect(Collectors.toMap(
                         s -> key(s.limit().stockId(), s.limit().season(), s.issuedOn()), Function.identity()));
+    }
+
+    /** Numbers of the notices in force that were decided in this office, by stock and season. */
+    private Map<String, Long> decidedInForce() {
+        Map<String, Long> decided = new HashMap<>();
+        jdbc.sql("""
+                        select f.stock_id, f.season_year, f.limit_id from limit_in_force f
+                        join catch_limit l on l.id = f.limit_id where l.origin = 'decided'""").query(row -> {
+            decided.put(row.getLong(1) + "|" + row.getInt(2), row.getLong(3));
+        });
+        return decided;
     }
 
     private static String key(long stock, TableRow row) {

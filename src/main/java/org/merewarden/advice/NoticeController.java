@@ -1,6 +1,7 @@
 package org.merewarden.advice;
 
 import java.util.List;
+import java.util.Objects;
 import java.util.Optional;
 import org.jspecify.annotations.Nullable;
 import org.merewarden.assessment.AssessmentView;
@@ -73,7 +74,6 @@ class NoticeController {
         NewLimit limit = decisions.find(id);
         StockView stock = register.stock(limit.stockId()).orElseThrow();
         List<LimitHistory.Decision> acts = history.ofLimit(id);
-        Optional<AssessmentView> assessment = assessments.latest(stock.id());
         return new Notice(
                 id,
                 settings.get(OfficeSettings.OFFICE_NAME),
@@ -88,12 +88,22 @@ class NoticeController {
                 limit.measures(),
                 limit.legalBasis(),
                 limit.objection(),
-                assessment.map(AssessmentView::strength).orElse(null),
+                strength(stock.id(), limit),
                 state(acts),
                 parts(id),
                 acts.stream()
                         .map(d -> new Act(d.act(), Figures.dateTime(d.effectiveAt()), d.decidedBy(), d.reason()))
                         .toList());
+    }
+
+    /** Of the assessment that the proposal rested on, whatever was assessed since; papers know none, so the latest. */
+    private @Nullable String strength(long stockId, NewLimit limit) {
+        Optional<AssessmentView> assessment = limit.origin().equals("decided")
+                ? assessments.ofStock(stockId).stream()
+                        .filter(a -> Objects.equals(a.id(), limit.assessmentId()))
+                        .findFirst()
+                : assessments.latest(stockId);
+        return assessment.map(AssessmentView::strength).orElse(null);
     }
 
     /** The latest act; a notice is a draft until it is issued. */

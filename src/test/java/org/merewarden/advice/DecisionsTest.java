@@ -10,7 +10,10 @@ import static org.springframework.test.web.servlet.result.MockMvcResultMatchers.
 import static org.springframework.test.web.servlet.result.MockMvcResultMatchers.flash;
 import static org.springframework.test.web.servlet.result.MockMvcResultMatchers.status;
 
+import java.time.Instant;
+import java.time.LocalDate;
 import java.util.List;
+import java.util.Map;
 import java.util.stream.DoubleStream;
 import org.junit.jupiter.api.BeforeAll;
 import org.junit.jupiter.api.Test;
@@ -18,6 +21,9 @@ import org.junit.jupiter.api.TestInstance;
 import org.merewarden.TestRegion;
 import org.merewarden.WholeApplication;
 import org.merewarden.assessment.AssessForTests;
+import org.merewarden.intake.Fate;
+import org.merewarden.intake.Provenance;
+import org.merewarden.intake.TableRow;
 import org.springframework.beans.factory.annotation.Autowired;
 import org.springframework.jdbc.core.simple.JdbcClient;
 import org.springframework.test.web.servlet.MockMvc;
@@ -44,6 +50,9 @@ class DecisionsTest {
 
     @Autowired
     private Limits limits;
+
+    @Autowired
+    private LimitsTable table;
 
     private long stock;
 
@@ -203,7 +212,11 @@ class DecisionsTest {
             {"amount", "", "needs its amount"},
             {"subsistence", "99", "together are more than the limit"},
             {"reportedFraction", "0", "more than 0 and at most 1"},
+            {"amount", "1,250", "is no number such as 1250"},
             {"validTo", "2106-01-01", "last day is before the first"},
+            {"validTo", "+999999999-12-31", "between the years 1800 and 2201"},
+            {"validTo", "soon", "is no date"},
+            {"legalBasis", "x".repeat(1001), "At most 1000 characters"},
             {"reason", " ", "Write down why"},
             {"season", "19999", "A season is a year from 1800 to 2200"}
         }) {
@@ -220,5 +233,111 @@ class DecisionsTest {
                         .query(Integer.class)
                         .single())
                 .isEqualTo(before);
+    }
+
+    @Test
+    void amountsMayCarryADecimalComma() throws Exception {
+        mvc.perform(proposal(2108)
+                        .with(r -> {
+                            r.setParameter("amount", "12,5");
+                            return r;
+                        })
+                        .with(BIOLOGIST))
+                .andExpect(status().is3xxRedirection());
+        assertThat(jdbc.sql("select amount from catch_limit where season_year = 2108")
+                        .query(Double.class)
+                        .single())
+                .isEqualTo(12.5);
+    }
+
+    @Test
+    void aReasonTooLongForTheStoreIsRefusedWithASentence() throws Exception {
+        long id = propose(2109, BIOLOGIST);
+        for (String act : List.of("issue", "refuse")) {
+            act(id, act, "x".repeat(4001), APPROVER)
+                    .andExpect(flash().attribute("refused", containsString("at most 4000 characters")));
+        }
+        act(id, "issue", "x".repeat(4000), APPROVER).andExpect(flash().attributeExists("done"));
+        act(id, "withdraw", "x".repeat(4001), APPROVER).andExpect(flash().attributeExists("refused"));
+        assertThat(limits.inForce(stock, 2109)).isPresent();
+    }
+
+    @Test
+    void aNoticeShowsTheEvidenceOfItsOwnDayNotOfALaterAssessment() throws Exception {
+        var region = new TestRegion(jdbc);
+        long late = region.stock(region.lake("dec-late", "Late Lake"), "FRO");
+        mvc.perform(post("/stocks/dec-late/FRO/limits")
+                        .param("season", "2112")
+                        .param("kind", "catch")
+                        .param("amount", "1")
+                        .param("reportedFraction", "1")
+                        .param("validFrom", "2112-01-01")
+                        .param("validTo", "2112-12-31")
+                        .param("reason", "Provisional.")
+                        .with(BIOLOGIST)
+                        .with(csrf()))
+                .andExpect(status().is3xxRedirection());
+        long id = jdbc.sql("select max(id) from catch_limit").query(Long.class).single();
+        region.catches(late, 2020, List.of(1.0, 1.2, 0.9, 1.1));
+        assess.assess(late, 2025);
+        mvc.perform(get("/notices/" + id).with(BIOLOGIST))
+                .andExpect(content().string(containsString("<dd>unassessed</dd>")));
+    }
+
+    /** Who may propose may import, and only an approver decides. */
+    @Test
+    void papersDoNotSupersedeWhatWasDecidedHere() throws Exception {
+        long id = propose(1990, BIOLOGIST);
+        act(id, "issue", "", APPROVER);
+        Fate fate = table.examine(List.of(paper(1990, "1989-11-01", 999)), (other, keys) -> false)
+                .get(0);
+        assertThat(fate.kind()).isEqualTo(Fate.Kind.REFUSED);
+        assertThat(fate.problems().get(0).rule()).contains("notice " + id);
+    }
+
+    @Test
+    void theLaterOfTwoPapersIsInForceWhicheverComesFirst() {
+        store(paper(1991, "1991-03-01", 7));
+        store(paper(1991, "1990-11-01", 12));
+        assertThat(limits.inForce(stock, 1991).orElseThrow().amountTonnes()).isEqualTo(7);
+        store(paper(1991, "1991-05-01", 5));
+        assertThat(limits.inForce(stock, 1991).orElseThrow().amountTonnes()).isEqualTo(5);
+        assertThat(table.examine(List.of(paper(1991, "1990-11-01", 12)), (other, keys) -> false))
+                .containsExactly(Fate.SAME);
+        assertThat(table.examine(List.of(paper(2110, "2110-01-01", 12)), (other, keys) -> false)
+                        .get(0)
+                        .problems()
+                        .get(0)
+                        .rule())
+                .contains("lies in the future");
+    }
+
+    private void store(TableRow paper) {
+        table.store(
+                List.of(paper),
+                new Provenance(
+                        jdbc.sql("select coalesce(max(id), 0) from import_batch")
+                                .query(Long.class)
+                                .single(),
+                        "ines",
+                        Instant.parse("2026-01-01T00:00:00Z")));
+    }
+
+    private static TableRow paper(int season, String issuedOn, double tonnes) {
+        return new TableRow(
+                2,
+                Map.of(
+                        "water_body",
+                        "dec-lake",
+                        "species",
+                        "FPE",
+                        "season",
+                        season,
+                        "issued_on",
+                        LocalDate.parse(issuedOn),
+                        "kind",
+                        "catch",
+                        "amount",
+                        tonnes));
     }
 }
