@@ -32,6 +32,15 @@ record ActivityFilter(
         @Nullable Integer page) {
     static final int PAGE_SIZE = 50;
 
+    /** Days beyond the years of four digits are slips of the pen, and no store can compare with them. */
+    boolean daysWithinReason() {
+        return withinReason(from) && withinReason(to);
+    }
+
+    private static boolean withinReason(@Nullable LocalDate day) {
+        return day == null || (day.getYear() >= 1 && day.getYear() <= 9999);
+    }
+
     int pageNumber() {
         return page == null ? 1 : Math.max(1, Math.min(page, 1_000_000));
     }

@@ -20,13 +20,14 @@ class ActivityPage {
     /** A date that cannot be read leaves its field empty and is said on the page. */
     @GetMapping("/activity")
     String page(@ModelAttribute("filter") ActivityFilter filter, BindingResult errors, Model model) {
-        ActivityFilter asked = errors.hasErrors() ? new ActivityFilter(null, null, null, null, null) : filter;
+        boolean unreadable = errors.hasErrors() || !filter.daysWithinReason();
+        ActivityFilter asked = unreadable ? new ActivityFilter(null, null, null, null, null) : filter;
         long count = reader.count(asked);
         int page = asked.pageNumber();
         List<Choice> people =
                 reader.people().stream().map(p -> new Choice(p, p)).toList();
         model.addAttribute("asked", asked);
-        model.addAttribute("unreadable", errors.hasErrors());
+        model.addAttribute("unreadable", unreadable);
         model.addAttribute("rows", reader.rows(asked));
         model.addAttribute("count", count);
         model.addAttribute("people", people);

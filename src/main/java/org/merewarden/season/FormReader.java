@@ -17,6 +17,9 @@ final class FormReader {
     static final List<String> SECTORS =
             List.of("commercial", "subsistence", "angling", "other party", "unlawful", "research", "discards");
 
+    /** A code of three letters, a point and the name of a population. */
+    private static final int LONGEST_SPECIES_KEY = 44;
+
     private final LandingForm form;
     private final Errors errors;
     /** for each entry, the index of its line in the form */
@@ -76,6 +79,11 @@ final class FormReader {
         String chosen = line.getOtherSpecies().isEmpty() ? line.getSpecies() : line.getOtherSpecies();
         if (chosen.isEmpty()) {
             reject(at + "species", "Choose a species, or mixed.");
+        }
+        if (chosen.length() > LONGEST_SPECIES_KEY) {
+            reject(
+                    at + (line.getOtherSpecies().isEmpty() ? "species" : "otherSpecies"),
+                    "At most " + LONGEST_SPECIES_KEY + " characters; this has " + chosen.length() + ".");
         }
         int dot = chosen.indexOf('.');
         String species = dot < 0 ? chosen : chosen.substring(0, dot);

@@ -125,8 +125,8 @@ class LandingsTable implements TableHandler {
     }
 
     private static boolean converts(TableRow conversion, Entry entry) {
-        return conversion.need("species").equalsIgnoreCase(entry.species())
-                && conversion.need("presentation").equalsIgnoreCase(entry.presentation())
+        return conversion.need("species").equals(entry.species())
+                && conversion.need("presentation").equals(entry.presentation())
                 && !Objects.requireNonNull(conversion.date("valid_from")).isAfter(entry.landedOn());
     }
 

@@ -47,6 +47,14 @@ class ActivityPageTest {
     }
 
     @Test
+    void aDayBeyondAllCalendarsIsSaidToBeUnreadable() throws Exception {
+        shown("/activity?to=+999999999-12-31")
+                .andExpect(content().string(containsString("A date or page in the address cannot be read")));
+        shown("/activity?from=-999999999-01-01")
+                .andExpect(content().string(containsString("A date or page in the address cannot be read")));
+    }
+
+    @Test
     void filtersByDaysOfTheOffice() throws Exception {
         entry("act.day", "2020-03-03T00:00:00Z", "did at midnight", null, null);
         entry("act.day", "2020-03-03T23:59:59Z", "did at the end", null, null);

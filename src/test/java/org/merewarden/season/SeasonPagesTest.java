@@ -116,6 +116,20 @@ class SeasonPagesTest {
     }
 
     @Test
+    void whatNoPageOffersIsTheSendersFault() throws Exception {
+        for (String line : List.of("-1", "300", "99999999999", "x")) {
+            mvc.perform(slip(LogFixture.key(), "12.5").param("lines[" + line + "].weight", "3"))
+                    .andExpect(status().isBadRequest());
+        }
+        mvc.perform(slip(LogFixture.key(), "12.5")
+                        .param("lines[2].otherSpecies", "FPE." + "x".repeat(41))
+                        .param("lines[2].weight", "3"))
+                .andExpect(status().isUnprocessableContent())
+                .andExpect(content().string(containsString("At most 44 characters")));
+        assertThat(at.rows()).isEmpty();
+    }
+
+    @Test
     void pagesShowUptakeLogHistoryAndExport() throws Exception {
         mvc.perform(slip(LogFixture.key(), "2500")).andExpect(status().is3xxRedirection());
         long id = jdbc.sql("select max(id) from landing").query(Long.class).single();
@@ -228,9 +242,11 @@ class SeasonPagesTest {
         List<Fate> fates = table.examine(
                 List.of(
                         row(2, "c1", "presentation", "coming"),
-                        row(3, "c2", "presentation", "coming", "date", today.minusDays(1))),
+                        row(3, "c2", "presentation", "coming", "date", today.minusDays(1)),
+                        // factors are found by their exact name when the row is stored
+                        row(4, "c3", "presentation", "Coming")),
                 batch);
-        assertThat(fates).extracting(Fate::kind).containsExactly(Fate.Kind.NEW, Fate.Kind.REFUSED);
+        assertThat(fates).extracting(Fate::kind).containsExactly(Fate.Kind.NEW, Fate.Kind.REFUSED, Fate.Kind.REFUSED);
     }
 
     @Test
