@@ -1,6 +1,7 @@
 package org.merewarden.waterbody;
 
 import static org.assertj.core.api.Assertions.assertThat;
+import static org.assertj.core.api.Assertions.assertThatThrownBy;
 import static org.hamcrest.Matchers.allOf;
 import static org.hamcrest.Matchers.containsString;
 import static org.hamcrest.Matchers.not;
@@ -12,10 +13,12 @@ import static org.springframework.test.web.servlet.result.MockMvcResultMatchers.
 import static org.springframework.test.web.servlet.result.MockMvcResultMatchers.redirectedUrl;
 import static org.springframework.test.web.servlet.result.MockMvcResultMatchers.status;
 
+import java.sql.SQLException;
 import org.junit.jupiter.api.Test;
 import org.merewarden.TestRegion;
 import org.merewarden.WholeApplication;
 import org.springframework.beans.factory.annotation.Autowired;
+import org.springframework.dao.DataIntegrityViolationException;
 import org.springframework.jdbc.core.simple.JdbcClient;
 import org.springframework.security.test.context.support.WithMockUser;
 import org.springframework.test.web.servlet.MockMvc;
@@ -33,6 +36,9 @@ class RegisterFormsTest {
 
     @Autowired
     private JdbcClient jdbc;
+
+    @Autowired
+    private WaterBodies waterBodies;
 
     @Test
     void aWaterBodyIsAddedAndShownWithItsUnits() throws Exception {
@@ -70,7 +76,8 @@ class RegisterFormsTest {
                 .andExpect(content()
                         .string(allOf(
                                 containsString("at least 0.001, not -3"),
-                                containsString("is no number: “deep”"),
+                                containsString(
+                                        "is no number such as 1250 or 12.5, without a mark between thousands: “deep”"),
                                 containsString("choices: pond"))));
     }
 
@@ -115,6 +122,25 @@ class RegisterFormsTest {
                 .param("name", name)
                 .param("kind", "lake")
                 .param("areaHectares", "1000"));
+    }
+
+    /** Two who add the same code at the same moment pass the check for it both; the answer for this is a conflict's. */
+    @Test
+    void theStoreKnowsACodeOnlyOnce() {
+        waterBodies.saveAndFlush(twin());
+        assertThatThrownBy(() -> waterBodies.saveAndFlush(twin()))
+                .isInstanceOf(DataIntegrityViolationException.class)
+                .rootCause()
+                .isInstanceOfSatisfying(
+                        SQLException.class, sql -> assertThat(sql.getSQLState()).isEqualTo("23505"));
+    }
+
+    private static WaterBody twin() {
+        WaterBody twin = new WaterBody();
+        twin.details.code = "twin-lake";
+        twin.details.name = "Twin Lake";
+        twin.details.areaHectares = 1.0;
+        return twin;
     }
 
     @Test
