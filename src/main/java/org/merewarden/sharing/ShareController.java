@@ -11,13 +11,16 @@ import org.merewarden.waterbody.CooperativeView;
 import org.merewarden.waterbody.Register;
 import org.merewarden.web.Choice;
 import org.merewarden.web.Figures;
+import org.merewarden.web.FormBinding;
 import org.springframework.context.MessageSource;
 import org.springframework.context.i18n.LocaleContextHolder;
 import org.springframework.http.HttpStatus;
 import org.springframework.stereotype.Controller;
 import org.springframework.ui.Model;
 import org.springframework.validation.BindingResult;
+import org.springframework.web.bind.WebDataBinder;
 import org.springframework.web.bind.annotation.GetMapping;
+import org.springframework.web.bind.annotation.InitBinder;
 import org.springframework.web.bind.annotation.ModelAttribute;
 import org.springframework.web.bind.annotation.PathVariable;
 import org.springframework.web.bind.annotation.PostMapping;
@@ -48,6 +51,11 @@ class ShareController {
             String lastUsed,
             String state,
             boolean open) {}
+
+    @InitBinder("form")
+    void binder(WebDataBinder binder) {
+        FormBinding.numbers(binder);
+    }
 
     @GetMapping("/shares")
     String list(Model model) {

@@ -9,15 +9,15 @@ import org.jspecify.annotations.Nullable;
 
 /** What is asked for when a share link is made. */
 class ShareForm {
-    @NotBlank
+    @NotBlank(message = "{sharing.unknown-cooperative}")
     private String cooperative = "";
 
-    @Size(max = 200)
+    @Size(max = 200, message = "{sharing.form.label.long}")
     private String label = "";
 
-    @NotNull
-    @Min(1)
-    @Max(ShareLinks.MOST_DAYS)
+    @NotNull(message = "{sharing.form.days.range}")
+    @Min(value = 1, message = "{sharing.form.days.range}")
+    @Max(value = ShareLinks.MOST_DAYS, message = "{sharing.form.days.range}")
     private @Nullable Integer days = 365;
 
     public String getCooperative() {

@@ -1,10 +1,12 @@
 package org.merewarden.sharing;
 
 import static org.assertj.core.api.Assertions.assertThat;
+import static org.hamcrest.Matchers.containsString;
 import static org.springframework.security.test.web.servlet.request.SecurityMockMvcRequestPostProcessors.csrf;
 import static org.springframework.security.test.web.servlet.request.SecurityMockMvcRequestPostProcessors.user;
 import static org.springframework.test.web.servlet.request.MockMvcRequestBuilders.get;
 import static org.springframework.test.web.servlet.request.MockMvcRequestBuilders.post;
+import static org.springframework.test.web.servlet.result.MockMvcResultMatchers.content;
 import static org.springframework.test.web.servlet.result.MockMvcResultMatchers.header;
 import static org.springframework.test.web.servlet.result.MockMvcResultMatchers.status;
 
@@ -176,6 +178,23 @@ class ShareLinksTest {
         assertThat(open(make()).getContentAsString())
                 .contains("By the records the limit for the whole water is used up")
                 .doesNotContain("About 7");
+    }
+
+    @Test
+    void aNumberOfDaysThatIsNoneIsNamedInWords() throws Exception {
+        for (String[] bad : new String[][] {
+            {"a month", "is no whole number"},
+            {"731", "open for 1 to 730 whole days"},
+            {"", "open for 1 to 730 whole days"}
+        }) {
+            mvc.perform(post("/shares")
+                            .with(user("share-biologist").roles("BIOLOGIST"))
+                            .with(csrf())
+                            .param("cooperative", own)
+                            .param("days", bad[0]))
+                    .andExpect(status().isUnprocessableContent())
+                    .andExpect(content().string(containsString(bad[1])));
+        }
     }
 
     @Test
