@@ -13,7 +13,6 @@ import org.merewarden.web.NotFound;
 import org.merewarden.web.Who;
 import org.slf4j.Logger;
 import org.slf4j.LoggerFactory;
-import org.springframework.context.ApplicationEventPublisher;
 import org.springframework.dao.DataIntegrityViolationException;
 import org.springframework.stereotype.Service;
 import org.springframework.transaction.support.TransactionTemplate;
@@ -27,7 +26,6 @@ class Importer {
     private final Examiner examiner;
     private final ImportStore store;
     private final ActivityLog activity;
-    private final ApplicationEventPublisher events;
     private final TransactionTemplate transaction;
     private final Clock clock;
 
@@ -36,14 +34,12 @@ class Importer {
             Examiner examiner,
             ImportStore store,
             ActivityLog activity,
-            ApplicationEventPublisher events,
             TransactionTemplate transaction,
             Clock clock) {
         this.tables = tables;
         this.examiner = examiner;
         this.store = store;
         this.activity = activity;
-        this.events = events;
         this.transaction = transaction;
         this.clock = clock;
     }
@@ -172,7 +168,6 @@ class Importer {
         }
         store.decide(id, "COMMITTED");
         activity.record("committed import", "import " + id, null, counts(now.toStore()));
-        events.publishEvent(new ImportCommitted(id, now.toStore().keySet()));
         return Result.COMMITTED;
     }
 

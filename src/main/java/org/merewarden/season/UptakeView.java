@@ -7,7 +7,8 @@ import org.jspecify.annotations.Nullable;
  * What the log holds of one stock in one season.
  *
  * @param takenKg live weight of kept, discarded and seized commercial landings that count
- * @param recordedUpTo the date up to which every cooperative with a right is complete; null with no record at all
+ * @param recordedUpTo the earliest end of records among the cooperatives with a right that have any this season, else the
+ *     last landing; null with no record at all. Those without any are among the silent
  * @param silentCooperatives names of cooperatives with a right whose records end more than six weeks before today
  */
 public record UptakeView(
