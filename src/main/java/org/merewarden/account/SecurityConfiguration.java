@@ -45,7 +45,7 @@ class SecurityConfiguration {
 
     private static void rules(
             AuthorizeHttpRequestsConfigurer<HttpSecurity>.AuthorizationManagerRequestMatcherRegistry rule) {
-        rule.requestMatchers("/sign-in/**", "/setup/**", "/view/**", "/actuator/health", "/error")
+        rule.requestMatchers("/sign-in/**", "/setup/**", "/view/**", "/actuator/health/**", "/error")
                 .permitAll();
         rule.requestMatchers(GET, "/css/**", "/js/**", "/marks/**", "/webjars/**")
                 .permitAll();
