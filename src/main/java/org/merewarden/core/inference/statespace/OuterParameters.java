@@ -13,7 +13,7 @@ import org.merewarden.core.prior.Prior;
  * </pre>
  *
  * <p>MSY in the data's unit, so m_0 = 0; m, s: logarithm of the prior's median and its log-sd. A parameter with s = 0 is
- * fixed and has no u. Everything outside works with u: there the prior is a standard normal.
+ * fixed and has no u; where all are, MSY is left a log-sd of 1e-9. Everything outside works with u: there the prior is a standard normal.
  */
 final class OuterParameters {
     static final int MSY = 0;
@@ -22,6 +22,7 @@ final class OuterParameters {
     static final int HARVEST_SD = 3;
     static final int SHAPE = 4;
     static final int FIRST_SCATTER = 5;
+    private static final double LEAST_SPREAD = 1e-9;
     private static final double HALF_LOG_TWO_PI = 0.5 * Math.log(2 * Math.PI);
 
     private final double[] middle;
@@ -35,6 +36,9 @@ final class OuterParameters {
         middle = all.stream().mapToDouble(p -> Math.log(p.median())).toArray();
         middle[MSY] -= Math.log(data.unitTonnes());
         spread = all.stream().mapToDouble(Prior::logSd).toArray();
+        if (IntStream.range(0, spread.length).noneMatch(k -> spread[k] > 0)) {
+            spread[MSY] = LEAST_SPREAD;
+        }
         free = IntStream.range(0, spread.length).filter(k -> spread[k] > 0).toArray();
     }
 

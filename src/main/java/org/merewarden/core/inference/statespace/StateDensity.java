@@ -148,19 +148,26 @@ final class StateDensity {
         return (stocked == 0 ? x : Math.log(Math.exp(x) + stocked / capacity(t))) + data.logSurvival()[t];
     }
 
+    /** Starts the step of season t from its state; returns ln F as the dynamics take it, −∞ for none. */
+    double beginSeason(int t, double x, double l) {
+        double plus = afterEvents(t, x);
+        boolean closed = data.removals().closed()[t];
+        double known = data.removals().known()[t];
+        if (closed && known > 0) {
+            return knownCatch.solve(plus, Math.log(known) - logCapacity(t));
+        }
+        knownCatch.none();
+        step.start(plus, l, !closed);
+        return closed ? Double.NEGATIVE_INFINITY : l;
+    }
+
     private void season(double[] z, int t) {
         double x = z[2 * t];
         double l = z[2 * t + 1];
         double plus = afterEvents(t, x);
         double kept = data.stocked()[t] == 0 ? 1 : Math.exp(x - plus + data.logSurvival()[t]);
         boolean closed = data.removals().closed()[t];
-        double known = data.removals().known()[t];
-        if (closed && known > 0) {
-            knownCatch.solve(plus, Math.log(known) - logCapacity(t));
-        } else {
-            knownCatch.none();
-            step.start(plus, l, !closed);
-        }
+        beginSeason(t, x, l);
         wholeSeason(z, t, kept, closed);
         Observations o = data.observations();
         for (int i = o.firstOf()[t]; i < o.firstOf()[t + 1]; i++) {
