@@ -153,15 +153,51 @@ final class BorderedBand {
         backward(out);
     }
 
-    /** out ~ N(0, H⁻¹) by the last factor. */
-    void sample(RandomGenerator random, double[] out) {
+    /** out ~ N(0, H⁻¹) by the last factor; returns outᵀ H out. */
+    double sample(RandomGenerator random, double[] out) {
+        double squares = 0;
         for (int i = 0; i < band; i++) {
-            out[i] = random.nextGaussian() / Math.sqrt(d[i]);
+            double g = random.nextGaussian();
+            squares += g * g;
+            out[i] = g / Math.sqrt(d[i]);
         }
         for (int j = 0; j < borders; j++) {
             half[j] = random.nextGaussian();
+            squares += half[j] * half[j];
         }
         backward(out);
+        return squares;
+    }
+
+    /** vᵀ H v with the matrix itself, not its factor. */
+    double quadratic(double[] v) {
+        double sum = 0;
+        for (int i = 0; i < band; i++) {
+            double row = 0.5 * diagonal[i] * v[i];
+            row += i > 0 ? below[i] * v[i - 1] : 0;
+            row += i > 1 ? below2[i] * v[i - 2] : 0;
+            for (int j = 0; j < borders; j++) {
+                row += border[j][i] * v[band + j];
+            }
+            sum += 2 * row * v[i];
+        }
+        for (int j = 0; j < borders; j++) {
+            for (int k = 0; k < borders; k++) {
+                sum += corner[j][k] * v[band + j] * v[band + k];
+            }
+        }
+        return sum;
+    }
+
+    /** Takes over the entries of another matrix of the same size, not its factor. */
+    void copy(BorderedBand other) {
+        System.arraycopy(other.diagonal, 0, diagonal, 0, band);
+        System.arraycopy(other.below, 0, below, 0, band);
+        System.arraycopy(other.below2, 0, below2, 0, band);
+        for (int j = 0; j < borders; j++) {
+            System.arraycopy(other.border[j], 0, border[j], 0, band);
+            System.arraycopy(other.corner[j], 0, corner[j], 0, borders);
+        }
     }
 
     /** Corner by Cᵀ, then the band by Lᵀ, from {@code half} and out[0 … N − 1]. */

@@ -3,7 +3,7 @@ package org.merewarden.core.inference.statespace;
 import java.util.ArrayList;
 import java.util.Arrays;
 import java.util.List;
-import java.util.function.ToDoubleFunction;
+import java.util.SplittableRandom;
 import java.util.random.RandomGenerator;
 
 /**
@@ -13,23 +13,34 @@ import java.util.random.RandomGenerator;
  *   w_i = p(u_i, data) / Σ_r (N_r/N) q_r(u_i)          ESS = (Σ w)²/Σ w²          ln evidence = ln mean w
  * </pre>
  *
+ * <p>Two kinds of weight: with Laplace's p, smooth, from which proposals are adapted; and with the unbiased p̂ of {@link
+ * StateMixture}, exact, by which the sample is judged and resampled. Draws more than {@value #NEGLIGIBLE} below the best
+ * in ln p keep Laplace's. The states of draw i come from a generator seeded with the sample's seed and i, so that they can
+ * be made again.
+ *
  * <p>Adaptive multiple importance sampling with deterministic-mixture weights: Cornuet et al. 2012, Scand. J. Stat. 39:
  * 798–812. Adding a proposal re-weights all earlier draws.
  */
 final class ImportanceSample {
     private static final double PRIOR_COUNT = 20;
 
-    private final ToDoubleFunction<double[]> logDensity;
+    private static final double NEGLIGIBLE = 20;
+
+    private final Marginal marginal;
+    private final long seed;
     private final int dimension;
     private double[][] draws = new double[0][];
     private double[] logTarget = new double[0];
+    private double[] logExact = new double[0];
     private double[] logMixture = new double[0];
+    private double best = Double.NEGATIVE_INFINITY;
     private final List<StudentT> proposals = new ArrayList<>();
     private final List<Integer> counts = new ArrayList<>();
 
-    ImportanceSample(ToDoubleFunction<double[]> logDensity, int dimension) {
-        this.logDensity = logDensity;
-        this.dimension = dimension;
+    ImportanceSample(Marginal marginal, long seed) {
+        this.marginal = marginal;
+        this.seed = seed;
+        dimension = marginal.dimension();
     }
 
     int size() {
@@ -45,6 +56,7 @@ final class ImportanceSample {
         int total = old + count;
         draws = Arrays.copyOf(draws, total);
         logTarget = Arrays.copyOf(logTarget, total);
+        logExact = Arrays.copyOf(logExact, total);
         logMixture = Arrays.copyOf(logMixture, total);
         for (int i = 0; i < old; i++) {
             logMixture[i] = logSum(logMixture[i], Math.log(count) + proposal.logDensity(draws[i]));
@@ -55,8 +67,7 @@ final class ImportanceSample {
             double[] u = new double[dimension];
             proposal.draw(random, u);
             draws[i] = u;
-            double value = logDensity.applyAsDouble(u);
-            logTarget[i] = Double.isNaN(value) ? Double.NEGATIVE_INFINITY : value;
+            evaluate(i);
             double mixture = Double.NEGATIVE_INFINITY;
             for (int r = 0; r < proposals.size(); r++) {
                 mixture = logSum(
@@ -66,23 +77,50 @@ final class ImportanceSample {
         }
     }
 
+    private void evaluate(int i) {
+        double value = marginal.evaluate(draws[i]);
+        logTarget[i] = Double.isNaN(value) ? Double.NEGATIVE_INFINITY : value;
+        best = Math.max(best, logTarget[i]);
+        logExact[i] = logTarget[i] < best - NEGLIGIBLE || best == Double.NEGATIVE_INFINITY
+                ? logTarget[i]
+                : marginal.logPrior(draws[i]) + states(i).logLikelihood();
+    }
+
+    /** The states of draw i, right after the marginal's evaluation there. */
+    StateMixture states(int i) {
+        StateMixture mixture = marginal.mixture();
+        mixture.draw(new SplittableRandom(seed + i));
+        return mixture;
+    }
+
     private static double logSum(double a, double b) {
         double high = Math.max(a, b);
         return high == Double.NEGATIVE_INFINITY ? high : high + Math.log1p(Math.exp(Math.min(a, b) - high));
     }
 
-    /** ln w_i; their mean weight estimates the evidence. */
+    /** Exact ln w_i; their mean weight estimates the evidence. */
     double[] logWeights() {
+        return logWeights(logExact);
+    }
+
+    private double[] logWeights(double[] target) {
         double[] result = new double[draws.length];
         for (int i = 0; i < result.length; i++) {
-            result[i] = logTarget[i] - logMixture[i] + Math.log(draws.length);
+            result[i] = target[i] - logMixture[i] + Math.log(draws.length);
         }
         return result;
     }
 
-    /** Weights that add up to 1; all 0 where no draw is possible. */
+    /** Exact weights that add up to 1; all 0 where no draw is possible. */
     double[] weights() {
-        double[] w = logWeights();
+        return scaled(logWeights());
+    }
+
+    private double[] smoothWeights() {
+        return scaled(logWeights(logTarget));
+    }
+
+    private static double[] scaled(double[] w) {
         double largest = Arrays.stream(w).max().orElse(Double.NEGATIVE_INFINITY);
         double sum = 0;
         for (int i = 0; i < w.length; i++) {
@@ -95,9 +133,18 @@ final class ImportanceSample {
         return w;
     }
 
+    /** ESS by Laplace's weights: how well the proposals fit, whatever the states add. */
+    double smoothEffectiveSize() {
+        return effectiveSize(smoothWeights());
+    }
+
     double effectiveSize() {
+        return effectiveSize(weights());
+    }
+
+    private static double effectiveSize(double[] weights) {
         double squares = 0;
-        for (double w : weights()) {
+        for (double w : weights) {
             squares += w * w;
         }
         return squares > 0 ? 1 / squares : 0;
@@ -117,10 +164,6 @@ final class ImportanceSample {
         return largest == Double.NEGATIVE_INFINITY ? largest : largest + Math.log(sum / w.length);
     }
 
-    double[] mean() {
-        return mean(weights());
-    }
-
     private double[] mean(double[] weights) {
         double[] mean = new double[dimension];
         for (int i = 0; i < draws.length; i++) {
@@ -137,8 +180,8 @@ final class ImportanceSample {
     }
 
     StudentT widened(double[] otherMean, double[][] otherCovariance, double widening) {
-        double[] weights = weights();
-        double trust = effectiveSize();
+        double[] weights = smoothWeights();
+        double trust = effectiveSize(weights);
         double share = trust / (trust + PRIOR_COUNT);
         double[] mean = mean(weights);
         for (int k = 0; k < dimension; k++) {
@@ -149,7 +192,7 @@ final class ImportanceSample {
 
     /** A proposal from the draws on one side (sign) of the weighted mean along an axis, widened. */
     StudentT half(double[] axis, double sign, double[][] otherCovariance, double widening) {
-        double[] weights = weights();
+        double[] weights = smoothWeights();
         double[] centre = mean(weights);
         double kept = 0;
         double squares = 0;

@@ -39,16 +39,18 @@ final class Ladder {
     private double[] mode;
     private double[][] covariance;
     private ImportanceSample sample;
+    private final long stateSeed;
     private int rung;
     private boolean settled;
 
     Ladder(Marginal marginal, RandomGenerator random) {
         this.marginal = marginal;
         this.random = random;
+        stateSeed = random.nextLong();
         prior = StudentT.standard(marginal.dimension());
         mode = new double[marginal.dimension()];
         covariance = new double[0][];
-        sample = new ImportanceSample(marginal::evaluate, marginal.dimension());
+        sample = new ImportanceSample(marginal, stateSeed);
         climb();
     }
 
@@ -123,9 +125,9 @@ final class Ladder {
 
     private void firstRung() {
         rung = 1;
-        sample = new ImportanceSample(marginal::evaluate, marginal.dimension());
-        sample.add(prior, DEFENSIVE, random);
+        sample = new ImportanceSample(marginal, stateSeed);
         sample.add(new StudentT(mode, covariance), ROUND, random);
+        sample.add(prior, DEFENSIVE, random);
         for (int round = 1; round < ROUNDS && !good(WANTED_EFFECTIVE); round++) {
             sample.add(sample.adapted(mode, covariance), ROUND, random);
         }

@@ -2,7 +2,6 @@ package org.merewarden.core.inference.statespace;
 
 import java.util.ArrayList;
 import java.util.List;
-import java.util.random.RandomGenerator;
 
 /**
  * ln p(θ, data) of the outer parameters with the hidden states integrated out by Laplace, summed over distinct modes.
@@ -29,6 +28,7 @@ final class Marginal {
     private final InnerMode inner;
     private final Starts starts;
     private final List<Anchor> anchors = new ArrayList<>();
+    private final StateMixture mixture;
     private final double[] theta;
     private final double[][] found;
     private final double[] terms;
@@ -43,6 +43,7 @@ final class Marginal {
         theta = new double[outer.size()];
         found = new double[MOST_ANCHORS + Starts.COUNT][density.size];
         terms = new double[found.length];
+        mixture = new StateMixture(density, found.length);
     }
 
     int dimension() {
@@ -200,28 +201,16 @@ final class Marginal {
         }
     }
 
-    /** Draws the hidden states at the u of the last {@link #evaluate}: a mode by its weight, then its Gaussian. */
-    void draw(RandomGenerator random, double[] z) {
-        double best = best();
-        double sum = 0;
+    /** The states at the u of the last {@link #evaluate}. */
+    StateMixture mixture() {
+        mixture.begin(theta);
         for (int m = 0; m < modes; m++) {
-            sum += Math.exp(terms[m] - best);
+            mixture.add(found[m], terms[m]);
         }
-        double point = random.nextDouble() * sum;
-        int chosen = 0;
-        while (chosen < modes - 1 && point >= Math.exp(terms[chosen] - best)) {
-            point -= Math.exp(terms[chosen++] - best);
-        }
-        density.parameters(theta, 0);
-        density.evaluate(found[chosen]);
-        density.addCurvature(1);
-        if (!density.matrix.factor()) {
-            density.addCurvature(-1);
-            density.matrix.factor();
-        }
-        density.matrix.sample(random, z);
-        for (int i = 0; i < z.length; i++) {
-            z[i] += found[chosen][i];
-        }
+        return mixture;
+    }
+
+    double logPrior(double[] u) {
+        return outer.logPrior(u);
     }
 }

@@ -23,13 +23,14 @@ record StateDraws(double[][] theta, double[][] biomassTonnes, double[][] fishing
                 new double[draws][density.seasons + 1],
                 new double[draws][density.seasons],
                 new double[draws][series]);
-        double[] z = new double[density.size];
+        StateMixture mixture = marginal.mixture();
         for (int k = 0; k < draws; k++) {
             double[] u = sample.draw(chosen[k]);
             if (k == 0 || chosen[k] != chosen[k - 1]) {
                 marginal.evaluate(u);
+                mixture = sample.states(chosen[k]);
             }
-            marginal.draw(random, z);
+            double[] z = mixture.choose(random);
             outer.natural(u, result.theta[k]);
             result.put(k, z, density, random.nextGaussian());
             System.arraycopy(z, 2 * density.seasons, result.logQ[k], 0, series);

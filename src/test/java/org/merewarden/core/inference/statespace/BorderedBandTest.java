@@ -49,6 +49,11 @@ class BorderedBandTest {
         band.solve(rhs, out);
         double[] dense = lu.getSolver().solve(MatrixUtils.createRealVector(rhs)).toArray();
         assertThat(out).containsExactly(dense, offset(1e-12));
+        BorderedBand copy = new BorderedBand(BAND, BORDERS);
+        copy.copy(band);
+        double expected = MatrixUtils.createRealVector(rhs).dotProduct(new Array2DRowRealMatrix(full).operate(
+                MatrixUtils.createRealVector(rhs)));
+        assertThat(copy.quadratic(rhs)).isEqualTo(expected, offset(1e-12));
     }
 
     @Test
@@ -74,7 +79,8 @@ class BorderedBandTest {
         double[] z = new double[size];
         int draws = 40_000;
         for (int k = 0; k < draws; k++) {
-            band.sample(random, z);
+            double squares = band.sample(random, z);
+            assertThat(squares).isEqualTo(band.quadratic(z), offset(1e-9));
             for (int i = 0; i < size; i++) {
                 for (int j = 0; j < size; j++) {
                     sum[i][j] += z[i] * z[j] / draws;
