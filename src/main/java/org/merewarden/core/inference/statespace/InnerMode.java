@@ -15,7 +15,7 @@ package org.merewarden.core.inference.statespace;
 final class InnerMode {
     static final double TOLERANCE = 1e-5;
     private static final double LONGEST_STEP = 2;
-    private static final int MOST_STEPS = 80;
+    private static final int MOST_STEPS = 50;
     private static final int MOST_HALVINGS = 20;
     private static final double HALF_LOG_TWO_PI = 0.5 * Math.log(2 * Math.PI);
 

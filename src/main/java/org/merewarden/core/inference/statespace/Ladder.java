@@ -72,7 +72,11 @@ final class Ladder {
     }
 
     private void climb() {
-        findModes();
+        if (!findModes()) {
+            rung = 3;
+            rungs.add("No path of biomass and harvest was found that agrees with the records.");
+            return;
+        }
         for (int restart = 0; restart <= MOST_RESTARTS; restart++) {
             firstRung();
             if (restart == MOST_RESTARTS || !furtherModes()) {
@@ -87,7 +91,8 @@ final class Ladder {
         }
     }
 
-    private void findModes() {
+    /** False where the records agree with no path at all. */
+    private boolean findModes() {
         marginal.explore(new double[marginal.dimension()]);
         double[] best = new double[marginal.dimension()];
         double bestValue = marginal.evaluate(best);
@@ -101,7 +106,11 @@ final class Ladder {
                 best = u;
             }
         }
+        if (marginal.anchors() == 0) {
+            return false;
+        }
         outerMode(best);
+        return true;
     }
 
     private void outerMode(double[] start) {

@@ -12,7 +12,7 @@ import java.util.List;
  *
  * <p>Modes are followed from {@link Anchor anchors}, one per branch; {@link #explore} looks for further ones from
  * {@link Starts} along both branches, eased in by a process sd of 0.5, then 0.25, then its value. Where no anchor leads
- * to a mode the eased starts are taken. Two results closer than {@value #DISTINCT} in every state are one mode. Without
+ * to a mode the eased starts are taken, up to 200 times in all: they are a hundred times slower. Two results closer than {@value #DISTINCT} in every state are one mode. Without
  * any mode the value is −∞. An evaluation from anchors allocates nothing.
  */
 final class Marginal {
@@ -33,6 +33,7 @@ final class Marginal {
     private final double[][] found;
     private final double[] terms;
     private int modes;
+    private int rescues = 200;
     private long calls;
 
     Marginal(SeasonData data, ModelPriors priors, OuterParameters outer) {
@@ -76,7 +77,8 @@ final class Marginal {
             anchors.get(a).predict(u, found[modes]);
             accept();
         }
-        if (modes == 0) {
+        if (modes == 0 && rescues > 0) {
+            rescues--;
             fromStarts();
         }
         return total(u);
