@@ -169,24 +169,27 @@ final class BorderedBand {
         return squares;
     }
 
-    /** vᵀ H v with the matrix itself, not its factor. */
-    double quadratic(double[] v) {
-        double sum = 0;
+    /** out = H v with the matrix itself, not its factor. */
+    void multiply(double[] v, double[] out) {
         for (int i = 0; i < band; i++) {
-            double row = 0.5 * diagonal[i] * v[i];
-            row += i > 0 ? below[i] * v[i - 1] : 0;
-            row += i > 1 ? below2[i] * v[i - 2] : 0;
-            for (int j = 0; j < borders; j++) {
-                row += border[j][i] * v[band + j];
-            }
-            sum += 2 * row * v[i];
+            double sum = diagonal[i] * v[i];
+            sum += i > 0 ? below[i] * v[i - 1] : 0;
+            sum += i > 1 ? below2[i] * v[i - 2] : 0;
+            sum += i + 1 < band ? below[i + 1] * v[i + 1] : 0;
+            sum += i + 2 < band ? below2[i + 2] * v[i + 2] : 0;
+            out[i] = sum;
         }
         for (int j = 0; j < borders; j++) {
-            for (int k = 0; k < borders; k++) {
-                sum += corner[j][k] * v[band + j] * v[band + k];
+            double sum = 0;
+            for (int i = 0; i < band; i++) {
+                out[i] += border[j][i] * v[band + j];
+                sum += border[j][i] * v[i];
             }
+            for (int k = 0; k < borders; k++) {
+                sum += corner[j][k] * v[band + k];
+            }
+            out[band + j] = sum;
         }
-        return sum;
     }
 
     /** Takes over the entries of another matrix of the same size, not its factor. */

@@ -13,9 +13,12 @@ import java.util.random.RandomGenerator;
  *   w_i = p(u_i, data) / Σ_r (N_r/N) q_r(u_i)          ESS = (Σ w)²/Σ w²          ln evidence = ln mean w
  * </pre>
  *
- * <p>Two kinds of weight: with Laplace's p, smooth, from which proposals are adapted; and with the unbiased p̂ of {@link
- * StateMixture}, exact, by which the sample is judged and resampled. Draws more than {@value #NEGLIGIBLE} below the best
- * in ln p keep Laplace's. The states of draw i come from a generator seeded with the sample's seed and i, so that they can
+ * <p>Two kinds of weight. With Laplace's p they are smooth, and proposals are adapted from them. The sample is judged and
+ * resampled by corrected ones, with p = Laplace · min(ρ, {@value #TRUNCATION} ρ̄): ρ = p̂/Laplace from the unbiased p̂ of
+ * {@link StateMixture}, ρ̄ its weighted geometric mean. Where no ρ is cut the weights are exact; cutting (truncated
+ * importance sampling, Ionides 2008, J. Comput. Graph. Stat. 17: 295–311; the bound our judgement) trades the tails that
+ * the states' proposals cannot reach for a bounded variance, and {@link #truncatedShare()} tells how often it was needed.
+ * Draws more than {@value #NEGLIGIBLE} below the best in ln p keep Laplace's. The states of draw i come from a generator seeded with the sample's seed and i, so that they can
  * be made again.
  *
  * <p>Adaptive multiple importance sampling with deterministic-mixture weights: Cornuet et al. 2012, Scand. J. Stat. 39:
@@ -25,13 +28,15 @@ final class ImportanceSample {
     private static final double PRIOR_COUNT = 20;
 
     private static final double NEGLIGIBLE = 20;
+    private static final double TRUNCATION = 5;
+    private static final double LOWEST_CORRECTION = -20;
 
     private final Marginal marginal;
     private final long seed;
     private final int dimension;
     private double[][] draws = new double[0][];
     private double[] logTarget = new double[0];
-    private double[] logExact = new double[0];
+    private double[] correction = new double[0];
     private double[] logMixture = new double[0];
     private double best = Double.NEGATIVE_INFINITY;
     private final List<StudentT> proposals = new ArrayList<>();
@@ -56,7 +61,7 @@ final class ImportanceSample {
         int total = old + count;
         draws = Arrays.copyOf(draws, total);
         logTarget = Arrays.copyOf(logTarget, total);
-        logExact = Arrays.copyOf(logExact, total);
+        correction = Arrays.copyOf(correction, total);
         logMixture = Arrays.copyOf(logMixture, total);
         for (int i = 0; i < old; i++) {
             logMixture[i] = logSum(logMixture[i], Math.log(count) + proposal.logDensity(draws[i]));
@@ -81,9 +86,9 @@ final class ImportanceSample {
         double value = marginal.evaluate(draws[i]);
         logTarget[i] = Double.isNaN(value) ? Double.NEGATIVE_INFINITY : value;
         best = Math.max(best, logTarget[i]);
-        logExact[i] = logTarget[i] < best - NEGLIGIBLE || best == Double.NEGATIVE_INFINITY
-                ? logTarget[i]
-                : marginal.logPrior(draws[i]) + states(i).logLikelihood();
+        boolean negligible = best == Double.NEGATIVE_INFINITY || logTarget[i] < best - NEGLIGIBLE;
+        double exact = negligible ? logTarget[i] : marginal.logPrior(draws[i]) + states(i).logLikelihood();
+        correction[i] = negligible ? 0 : Math.max(LOWEST_CORRECTION, exact - logTarget[i]);
     }
 
     /** The states of draw i, right after the marginal's evaluation there. */
@@ -98,9 +103,34 @@ final class ImportanceSample {
         return high == Double.NEGATIVE_INFINITY ? high : high + Math.log1p(Math.exp(Math.min(a, b) - high));
     }
 
-    /** Exact ln w_i; their mean weight estimates the evidence. */
+    /** Corrected ln w_i; their mean weight estimates the evidence. */
     double[] logWeights() {
-        return logWeights(logExact);
+        double bound = largestCorrection();
+        double[] corrected = logTarget.clone();
+        for (int i = 0; i < corrected.length; i++) {
+            corrected[i] += Math.min(bound, correction[i]);
+        }
+        return logWeights(corrected);
+    }
+
+    private double largestCorrection() {
+        double[] smooth = smoothWeights();
+        double mean = 0;
+        for (int i = 0; i < smooth.length; i++) {
+            mean += smooth[i] * correction[i];
+        }
+        return mean + Math.log(TRUNCATION);
+    }
+
+    /** Share of the corrected weight that lies with draws whose correction was cut. */
+    double truncatedShare() {
+        double bound = largestCorrection();
+        double[] weights = weights();
+        double share = 0;
+        for (int i = 0; i < weights.length; i++) {
+            share += correction[i] > bound ? weights[i] : 0;
+        }
+        return share;
     }
 
     private double[] logWeights(double[] target) {
@@ -111,7 +141,7 @@ final class ImportanceSample {
         return result;
     }
 
-    /** Exact weights that add up to 1; all 0 where no draw is possible. */
+    /** Corrected weights that add up to 1; all 0 where no draw is possible. */
     double[] weights() {
         return scaled(logWeights());
     }

@@ -3,10 +3,10 @@ package org.merewarden.core.inference.statespace;
 import java.util.random.RandomGenerator;
 
 /**
- * Draws of the hidden states at one θ from the Gaussians at its modes, and the exact weight of each draw.
+ * Draws of the hidden states at one θ from the proposals at its modes, and the exact weight of each draw.
  *
  * <pre>
- *   z = z_m ± δ,  δ ~ N(0, H_m⁻¹),   v(z) = p(data, z | θ) / Σ_k π_k N(z; z_k, H_k⁻¹)
+ *   z = z_m ± δ from g_m ({@link StateProposal}),   v(z) = p(data, z | θ) / Σ_k π_k g_k(z)
  *   p̂(data | θ) = Σ_m π_m ½ (v(z_m + δ_m) + v(z_m − δ_m))
  * </pre>
  *
@@ -16,31 +16,23 @@ import java.util.random.RandomGenerator;
  * Laplace's error. Nothing is allocated after construction.
  */
 final class StateMixture {
-    private static final double HALF_LOG_TWO_PI = 0.5 * Math.log(2 * Math.PI);
-
     private final StateDensity density;
-    private final BorderedBand[] hessians;
-    private final double[][] centres;
+    private final StateProposal[] proposals;
     private final double[] logShare;
-    private final double[] halfLogDeterminant;
     private final double[][] draws;
     private final double[] logWeights;
-    private final double[] difference;
     private int modes;
     private double logLikelihood;
 
     StateMixture(StateDensity density, int mostModes) {
         this.density = density;
-        hessians = new BorderedBand[mostModes];
+        proposals = new StateProposal[mostModes];
         for (int m = 0; m < mostModes; m++) {
-            hessians[m] = new BorderedBand(density.matrix.band, density.matrix.borders);
+            proposals[m] = new StateProposal(density.matrix.band, density.matrix.borders);
         }
-        centres = new double[mostModes][];
         logShare = new double[mostModes];
-        halfLogDeterminant = new double[mostModes];
         draws = new double[2 * mostModes][density.size];
         logWeights = new double[2 * mostModes];
-        difference = new double[density.size];
     }
 
     void begin(double[] theta) {
@@ -52,11 +44,7 @@ final class StateMixture {
     void add(double[] centre, double logTerm) {
         density.evaluate(centre);
         density.addCurvature(1);
-        BorderedBand hessian = hessians[modes];
-        hessian.copy(density.matrix);
-        if (hessian.factor()) {
-            centres[modes] = centre;
-            halfLogDeterminant[modes] = 0.5 * hessian.logDeterminant();
+        if (proposals[modes].at(centre, density.matrix)) {
             logShare[modes++] = logTerm;
         }
     }
@@ -66,16 +54,9 @@ final class StateMixture {
         normalise();
         double total = Double.NEGATIVE_INFINITY;
         for (int m = 0; m < modes; m++) {
-            double[] plus = draws[2 * m];
-            double[] minus = draws[2 * m + 1];
-            double squares = hessians[m].sample(random, plus);
-            for (int i = 0; i < plus.length; i++) {
-                minus[i] = centres[m][i] - plus[i];
-                plus[i] += centres[m][i];
-            }
+            proposals[m].draw(random, draws[2 * m], draws[2 * m + 1]);
             for (int side = 2 * m; side <= 2 * m + 1; side++) {
-                double weight = logShare[m] + Math.log(0.5) - logMixture(draws[side], m, squares)
-                        - density.evaluate(draws[side]);
+                double weight = logShare[m] + Math.log(0.5) - logMixture(draws[side], m) - density.evaluate(draws[side]);
                 logWeights[side] = Double.isNaN(weight) ? Double.NEGATIVE_INFINITY : weight;
                 total = logSum(total, logWeights[side]);
             }
@@ -99,21 +80,12 @@ final class StateMixture {
         }
     }
 
-    private double logMixture(double[] z, int own, double squares) {
+    private double logMixture(double[] z, int own) {
         double sum = Double.NEGATIVE_INFINITY;
         for (int k = 0; k < modes; k++) {
-            double distance = k == own ? squares : distance(z, k);
-            sum = logSum(
-                    sum, logShare[k] - 0.5 * distance + halfLogDeterminant[k] - z.length * HALF_LOG_TWO_PI);
+            sum = logSum(sum, logShare[k] + (k == own ? proposals[k].logDensity() : proposals[k].logDensity(z)));
         }
         return sum;
-    }
-
-    private double distance(double[] z, int k) {
-        for (int i = 0; i < z.length; i++) {
-            difference[i] = z[i] - centres[k][i];
-        }
-        return hessians[k].quadratic(difference);
     }
 
     private static double logSum(double a, double b) {
