@@ -87,7 +87,9 @@ final class ImportanceSample {
         logTarget[i] = Double.isNaN(value) ? Double.NEGATIVE_INFINITY : value;
         best = Math.max(best, logTarget[i]);
         boolean negligible = best == Double.NEGATIVE_INFINITY || logTarget[i] < best - NEGLIGIBLE;
-        double exact = negligible ? logTarget[i] : marginal.logPrior(draws[i]) + states(i).logLikelihood();
+        double exact = negligible
+                ? logTarget[i]
+                : marginal.logPrior(draws[i]) + states(i).logLikelihood();
         correction[i] = negligible ? 0 : Math.max(LOWEST_CORRECTION, exact - logTarget[i]);
     }
 

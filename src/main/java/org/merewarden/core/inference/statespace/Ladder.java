@@ -22,7 +22,7 @@ final class Ladder {
     static final double LEAST_EFFECTIVE = 400;
     static final double LARGEST_SHAPE = 0.7;
     static final double WANTED_EFFECTIVE = 1000;
-    private static final int PROBES = 10;
+    private static final int PROBES = 6;
     private static final int DEFENSIVE = 500;
     private static final int ROUND = 900;
     private static final int ROUNDS = 3;

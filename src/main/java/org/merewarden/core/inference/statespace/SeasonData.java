@@ -144,15 +144,18 @@ record SeasonData(
         }
     }
 
-    /** Number of seasons with an index or biomass value, one below detection included. */
-    int seasonsSeen() {
-        Observations o = observations;
-        return (int) IntStream.range(0, seasons)
-                .filter(t -> IntStream.range(o.firstOf()[t], o.firstOf()[t + 1])
-                        .anyMatch(i -> o.kind()[i] != Observations.EFFORT))
-                .count();
+    /** Whether a season has an index or biomass value, one below detection included. */
+    boolean seen(int t) {
+        return IntStream.range(observations.firstOf()[t], observations.firstOf()[t + 1])
+                .anyMatch(i -> observations.kind()[i] != Observations.EFFORT);
     }
 
+    /** Number of seasons {@link #seen}. */
+    int seasonsSeen() {
+        return (int) IntStream.range(0, seasons).filter(this::seen).count();
+    }
+
+    /** Whether any season has a catch above 0. */
     boolean hasCatch() {
         return Arrays.stream(removals.logCatch()).anyMatch(c -> !Double.isNaN(c));
     }

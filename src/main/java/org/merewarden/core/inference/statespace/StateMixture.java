@@ -56,7 +56,8 @@ final class StateMixture {
         for (int m = 0; m < modes; m++) {
             proposals[m].draw(random, draws[2 * m], draws[2 * m + 1]);
             for (int side = 2 * m; side <= 2 * m + 1; side++) {
-                double weight = logShare[m] + Math.log(0.5) - logMixture(draws[side], m) - density.evaluate(draws[side]);
+                double weight =
+                        logShare[m] + Math.log(0.5) - logMixture(draws[side], m) - density.evaluate(draws[side]);
                 logWeights[side] = Double.isNaN(weight) ? Double.NEGATIVE_INFINITY : weight;
                 total = logSum(total, logWeights[side]);
             }

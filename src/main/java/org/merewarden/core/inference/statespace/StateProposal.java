@@ -21,9 +21,8 @@ final class StateProposal {
     private static final int ITERATIONS = 3;
     private static final int DIRECTIONS = 2;
     private static final double HALF_LOG_TWO_PI = 0.5 * Math.log(2 * Math.PI);
-    private static final double LOG_T = Gamma.logGamma((FREEDOM + 1) / 2.0)
-            - Gamma.logGamma(FREEDOM / 2.0)
-            - 0.5 * Math.log(FREEDOM * Math.PI);
+    private static final double LOG_T =
+            Gamma.logGamma((FREEDOM + 1) / 2.0) - Gamma.logGamma(FREEDOM / 2.0) - 0.5 * Math.log(FREEDOM * Math.PI);
 
     private final BorderedBand hessian;
     private final double[][] direction;

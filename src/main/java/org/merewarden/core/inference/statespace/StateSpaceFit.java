@@ -34,4 +34,15 @@ record StateSpaceFit(
         }
         return values;
     }
+
+    /** Catchability of a series by draw: index per t; of an effort series effort = F/catchability. */
+    double[] catchability(int series) {
+        Series of = data.series().get(series);
+        double shift = of.effort() ? -of.logMean() : of.logMean() - Math.log(data.unitTonnes());
+        double[] values = new double[draws.logQ().length];
+        for (int k = 0; k < values.length; k++) {
+            values[k] = Math.exp(draws.logQ()[k][series] + shift);
+        }
+        return values;
+    }
 }

@@ -28,8 +28,7 @@ class MarginalTest {
     @MethodSource("parameters")
     void theLaplaceSumIsTheIntegralOverTheStates(double[] p) {
         for (double[] biomass : new double[][] {BIOMASS, ONE_BIOMASS}) {
-            double grid = new GridFilter(
-                            p[0], p[1], p[2], p[3], CATCHES, 0.15, biomass, 0.2, Math.log(0.8), 0.3)
+            double grid = new GridFilter(p[0], p[1], p[2], p[3], CATCHES, 0.15, biomass, 0.2, Math.log(0.8), 0.3)
                     .logLikelihood();
             assertThat(laplace(p, biomass)).isEqualTo(grid, offset(0.05));
         }
