@@ -1,0 +1,281 @@
+package org.merewarden.core.inference.statespace;
+
+import java.util.ArrayList;
+import java.util.Arrays;
+import java.util.List;
+import java.util.SplittableRandom;
+import java.util.random.RandomGenerator;
+
+/**
+ * Weighted draws of the outer parameters from several proposals, weighted as draws from their mixture.
+ *
+ * <pre>
+ *   w_i = p(u_i, data) / Σ_r (N_r/N) q_r(u_i)          ESS = (Σ w)²/Σ w²          ln evidence = ln mean w
+ * </pre>
+ *
+ * <p>Two kinds of weight. With Laplace's p they are smooth, and proposals are adapted from them. The sample is judged and
+ * resampled by corrected ones, with p = Laplace · min(ρ, {@value #TRUNCATION} ρ̄): ρ = p̂/Laplace from the unbiased p̂ of
+ * {@link StateMixture}, ρ̄ its weighted geometric mean. Where no ρ is cut the weights are exact; cutting (truncated
+ * importance sampling, Ionides 2008, J. Comput. Graph. Stat. 17: 295–311; the bound our judgement) trades the tails that
+ * the states' proposals cannot reach for a bounded variance, and {@link #truncatedShare()} tells how often it was needed.
+ * Draws more than {@value #NEGLIGIBLE} below the best in ln p keep Laplace's. The states of draw i come from a generator seeded with the sample's seed and i, so that they can
+ * be made again.
+ *
+ * <p>Adaptive multiple importance sampling with deterministic-mixture weights: Cornuet et al. 2012, Scand. J. Stat. 39:
+ * 798–812. Adding a proposal re-weights all earlier draws.
+ */
+final class ImportanceSample {
+    private static final double PRIOR_COUNT = 20;
+
+    private static final double NEGLIGIBLE = 20;
+    private static final double TRUNCATION = 5;
+    private static final double LOWEST_CORRECTION = -20;
+
+    private final Marginal marginal;
+    private final long seed;
+    private final int dimension;
+    private double[][] draws = new double[0][];
+    private double[] logTarget = new double[0];
+    private double[] correction = new double[0];
+    private double[] logMixture = new double[0];
+    private double best = Double.NEGATIVE_INFINITY;
+    private final List<StudentT> proposals = new ArrayList<>();
+    private final List<Integer> counts = new ArrayList<>();
+
+    ImportanceSample(Marginal marginal, long seed) {
+        this.marginal = marginal;
+        this.seed = seed;
+        dimension = marginal.dimension();
+    }
+
+    int size() {
+        return draws.length;
+    }
+
+    double[] draw(int i) {
+        return draws[i];
+    }
+
+    void add(StudentT proposal, int count, RandomGenerator random) {
+        int old = draws.length;
+        int total = old + count;
+        draws = Arrays.copyOf(draws, total);
+        logTarget = Arrays.copyOf(logTarget, total);
+        correction = Arrays.copyOf(correction, total);
+        logMixture = Arrays.copyOf(logMixture, total);
+        for (int i = 0; i < old; i++) {
+            logMixture[i] = logSum(logMixture[i], Math.log(count) + proposal.logDensity(draws[i]));
+        }
+        proposals.add(proposal);
+        counts.add(count);
+        for (int i = old; i < total; i++) {
+            double[] u = new double[dimension];
+            proposal.draw(random, u);
+            draws[i] = u;
+            evaluate(i);
+            double mixture = Double.NEGATIVE_INFINITY;
+            for (int r = 0; r < proposals.size(); r++) {
+                mixture = logSum(
+                        mixture, Math.log(counts.get(r)) + proposals.get(r).logDensity(u));
+            }
+            logMixture[i] = mixture;
+        }
+    }
+
+    private void evaluate(int i) {
+        double value = marginal.evaluate(draws[i]);
+        logTarget[i] = Double.isNaN(value) ? Double.NEGATIVE_INFINITY : value;
+        best = Math.max(best, logTarget[i]);
+        boolean negligible = best == Double.NEGATIVE_INFINITY || logTarget[i] < best - NEGLIGIBLE;
+        double exact = negligible
+                ? logTarget[i]
+                : marginal.logPrior(draws[i]) + states(i).logLikelihood();
+        correction[i] = negligible ? 0 : Math.max(LOWEST_CORRECTION, exact - logTarget[i]);
+    }
+
+    /** The states of draw i, right after the marginal's evaluation there. */
+    StateMixture states(int i) {
+        StateMixture mixture = marginal.mixture();
+        mixture.draw(new SplittableRandom(seed + i));
+        return mixture;
+    }
+
+    private static double logSum(double a, double b) {
+        double high = Math.max(a, b);
+        return high == Double.NEGATIVE_INFINITY ? high : high + Math.log1p(Math.exp(Math.min(a, b) - high));
+    }
+
+    /** Corrected ln w_i; their mean weight estimates the evidence. */
+    double[] logWeights() {
+        double bound = largestCorrection();
+        double[] corrected = logTarget.clone();
+        for (int i = 0; i < corrected.length; i++) {
+            corrected[i] += Math.min(bound, correction[i]);
+        }
+        return logWeights(corrected);
+    }
+
+    private double largestCorrection() {
+        double[] smooth = smoothWeights();
+        double mean = 0;
+        for (int i = 0; i < smooth.length; i++) {
+            mean += smooth[i] * correction[i];
+        }
+        return mean + Math.log(TRUNCATION);
+    }
+
+    /** Share of the corrected weight that lies with draws whose correction was cut. */
+    double truncatedShare() {
+        double bound = largestCorrection();
+        double[] weights = weights();
+        double share = 0;
+        for (int i = 0; i < weights.length; i++) {
+            share += correction[i] > bound ? weights[i] : 0;
+        }
+        return share;
+    }
+
+    private double[] logWeights(double[] target) {
+        double[] result = new double[draws.length];
+        for (int i = 0; i < result.length; i++) {
+            result[i] = target[i] - logMixture[i] + Math.log(draws.length);
+        }
+        return result;
+    }
+
+    /** Corrected weights that add up to 1; all 0 where no draw is possible. */
+    double[] weights() {
+        return scaled(logWeights());
+    }
+
+    private double[] smoothWeights() {
+        return scaled(logWeights(logTarget));
+    }
+
+    private static double[] scaled(double[] w) {
+        double largest = Arrays.stream(w).max().orElse(Double.NEGATIVE_INFINITY);
+        double sum = 0;
+        for (int i = 0; i < w.length; i++) {
+            w[i] = largest == Double.NEGATIVE_INFINITY ? 0 : Math.exp(w[i] - largest);
+            sum += w[i];
+        }
+        for (int i = 0; i < w.length && sum > 0; i++) {
+            w[i] /= sum;
+        }
+        return w;
+    }
+
+    /** ESS by Laplace's weights: how well the proposals fit, whatever the states add. */
+    double smoothEffectiveSize() {
+        return effectiveSize(smoothWeights());
+    }
+
+    double effectiveSize() {
+        return effectiveSize(weights());
+    }
+
+    private static double effectiveSize(double[] weights) {
+        double squares = 0;
+        for (double w : weights) {
+            squares += w * w;
+        }
+        return squares > 0 ? 1 / squares : 0;
+    }
+
+    double paretoShape() {
+        return ParetoTail.shape(logWeights());
+    }
+
+    double logEvidence() {
+        double[] w = logWeights();
+        double largest = Arrays.stream(w).max().orElse(Double.NEGATIVE_INFINITY);
+        double sum = 0;
+        for (double each : w) {
+            sum += Math.exp(each - largest);
+        }
+        return largest == Double.NEGATIVE_INFINITY ? largest : largest + Math.log(sum / w.length);
+    }
+
+    private double[] mean(double[] weights) {
+        double[] mean = new double[dimension];
+        for (int i = 0; i < draws.length; i++) {
+            for (int k = 0; k < dimension; k++) {
+                mean[k] += weights[i] * draws[i][k];
+            }
+        }
+        return mean;
+    }
+
+    /** A proposal from the weighted mean and covariance, which few effective draws hardly move from the given one. */
+    StudentT adapted(double[] otherMean, double[][] otherCovariance) {
+        return widened(otherMean, otherCovariance, 1);
+    }
+
+    StudentT widened(double[] otherMean, double[][] otherCovariance, double widening) {
+        double[] weights = smoothWeights();
+        double trust = effectiveSize(weights);
+        double share = trust / (trust + PRIOR_COUNT);
+        double[] mean = mean(weights);
+        for (int k = 0; k < dimension; k++) {
+            mean[k] = share * mean[k] + (1 - share) * otherMean[k];
+        }
+        return new StudentT(mean, covariance(weights, mean, otherCovariance, share, widening));
+    }
+
+    /** A proposal from the draws on one side (sign) of the weighted mean along an axis, widened. */
+    StudentT half(double[] axis, double sign, double[][] otherCovariance, double widening) {
+        double[] weights = smoothWeights();
+        double[] centre = mean(weights);
+        double kept = 0;
+        double squares = 0;
+        for (int i = 0; i < draws.length; i++) {
+            double along = 0;
+            for (int k = 0; k < dimension; k++) {
+                along += axis[k] * (draws[i][k] - centre[k]);
+            }
+            weights[i] = along * sign > 0 ? weights[i] : 0;
+            kept += weights[i];
+            squares += weights[i] * weights[i];
+        }
+        for (int i = 0; i < weights.length && kept > 0; i++) {
+            weights[i] /= kept;
+        }
+        double trust = squares > 0 ? kept * kept / squares : 0;
+        double[] mean = kept > 0 ? mean(weights) : centre;
+        return new StudentT(mean, covariance(weights, mean, otherCovariance, trust / (trust + PRIOR_COUNT), widening));
+    }
+
+    private double[][] covariance(double[] weights, double[] mean, double[][] other, double share, double widening) {
+        double[][] c = new double[dimension][dimension];
+        for (int i = 0; i < draws.length; i++) {
+            for (int k = 0; k < dimension && weights[i] > 0; k++) {
+                for (int m = 0; m < dimension; m++) {
+                    c[k][m] += weights[i] * (draws[i][k] - mean[k]) * (draws[i][m] - mean[m]);
+                }
+            }
+        }
+        for (int k = 0; k < dimension; k++) {
+            for (int m = 0; m < dimension; m++) {
+                c[k][m] = widening * (share * c[k][m] + (1 - share) * other[k][m]);
+            }
+        }
+        return c;
+    }
+
+    /** Systematic resampling: indices of {@code count} equally weighted draws, in ascending order. */
+    int[] resample(int count, RandomGenerator random) {
+        double[] weights = weights();
+        int[] chosen = new int[count];
+        double point = random.nextDouble() / count;
+        double sum = 0;
+        int i = -1;
+        for (int k = 0; k < count; k++) {
+            while (point > sum && i < weights.length - 1) {
+                sum += weights[++i];
+            }
+            chosen[k] = Math.max(0, i);
+            point += 1.0 / count;
+        }
+        return chosen;
+    }
+}

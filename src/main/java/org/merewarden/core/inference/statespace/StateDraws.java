@@ -1,0 +1,52 @@
+package org.merewarden.core.inference.statespace;
+
+import java.util.random.RandomGenerator;
+
+/**
+ * Equally weighted draws of outer parameters and hidden states, in tonnes.
+ *
+ * @param theta [draw][parameter] as {@link OuterParameters} orders them, MSY in the data's unit
+ * @param biomassTonnes [draw][T + 1] at the season's start
+ * @param fishing [draw][T], 1/yr; of a closed season the F that yields its known catch
+ * @param logQ [draw][series] hidden ln q
+ */
+record StateDraws(double[][] theta, double[][] biomassTonnes, double[][] fishing, double[][] logQ) {
+
+    /** {@code chosen}: indices of the sample in ascending order; one inner mode serves all draws of one index. */
+    static StateDraws at(
+            int[] chosen, ImportanceSample sample, Marginal marginal, OuterParameters outer, RandomGenerator random) {
+        StateDensity density = marginal.density();
+        int draws = chosen.length;
+        int series = density.matrix.borders;
+        StateDraws result = new StateDraws(
+                new double[draws][outer.size()],
+                new double[draws][density.seasons + 1],
+                new double[draws][density.seasons],
+                new double[draws][series]);
+        StateMixture mixture = marginal.mixture();
+        for (int k = 0; k < draws; k++) {
+            double[] u = sample.draw(chosen[k]);
+            if (k == 0 || chosen[k] != chosen[k - 1]) {
+                marginal.evaluate(u);
+                mixture = sample.states(chosen[k]);
+            }
+            double[] z = mixture.choose(random);
+            outer.natural(u, result.theta[k]);
+            result.put(k, z, density, random.nextGaussian());
+            System.arraycopy(z, 2 * density.seasons, result.logQ[k], 0, series);
+        }
+        return result;
+    }
+
+    private void put(int k, double[] z, StateDensity density, double noise) {
+        double unit = density.data.unitTonnes();
+        int last = density.seasons - 1;
+        for (int t = 0; t <= last; t++) {
+            biomassTonnes[k][t] = unit * Math.exp(z[2 * t] + density.logCapacity(t));
+            fishing[k][t] = Math.exp(density.beginSeason(t, z[2 * t], z[2 * t + 1]));
+        }
+        density.step.biomassAt(1);
+        double next = density.step.y + density.logCapacity(last) + noise * Math.sqrt(density.stepVariance(last));
+        biomassTonnes[k][last + 1] = unit * Math.exp(next);
+    }
+}

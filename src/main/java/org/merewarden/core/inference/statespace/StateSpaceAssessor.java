@@ -1,0 +1,164 @@
+package org.merewarden.core.inference.statespace;
+
+import java.util.ArrayList;
+import java.util.Arrays;
+import java.util.List;
+import java.util.Locale;
+import java.util.Map;
+import java.util.TreeMap;
+import org.merewarden.core.evidence.Evidence;
+import org.merewarden.core.inference.Assessor;
+import org.merewarden.core.inference.EvidenceStrength;
+import org.merewarden.core.inference.Posterior;
+import org.merewarden.core.inference.PriorOnlyAssessor;
+import org.merewarden.core.inference.Quantiles;
+import org.merewarden.core.inference.Verdict;
+import org.merewarden.core.prior.Prior;
+
+/**
+ * Surplus production with hidden biomass and harvest rate, fitted to whatever evidence a stock has.
+ *
+ * <p>The model: {@link StateDensity}; its priors: {@link ModelPriors}; the estimation: {@link Ladder}. A stock without any
+ * record of a season gets the priors alone ({@link PriorOnlyAssessor}); a stock that lives from stocking alone gets no
+ * draws. Otherwise {@value StateSpaceFit#DRAWS} equally weighted draws, also where the estimation did not settle, as long
+ * as any was possible. Estimates are posterior medians: {@code msy_t, fmsy, r, k_t, shape, process_sd, harvest_sd,
+ * observation_sd:SERIES, catchability:SERIES} (index per t; F per unit of effort), and {@code
+ * log_evidence, effective_draws, pareto_k, rung, cut_share}. Never throws on valid records and never yields NaN.
+ */
+public final class StateSpaceAssessor implements Assessor {
+    static final String METHOD = "state-space surplus production";
+
+    private final PriorOnlyAssessor priorOnly = new PriorOnlyAssessor();
+
+    @Override
+    public Posterior assess(Evidence evidence, int lastClosedYear, long seed) {
+        if (evidence.traits().stockedOnly()) {
+            return nothing(
+                    lastClosedYear,
+                    EvidenceStrength.NONE,
+                    List.of("Recruitment comes from stocking alone: there is no self-sustaining growth, so no MSY and"
+                            + " no tipping point to estimate."));
+        }
+        ModelPriors priors = ModelPriors.of(evidence);
+        SeasonData data = SeasonData.of(evidence, lastClosedYear, priors);
+        String failure = data.failure();
+        if (failure != null) {
+            return nothing(lastClosedYear, EvidenceStrength.THIN, List.of(failure));
+        }
+        if (data.seasons() == 0) {
+            return priorOnly.assess(evidence, lastClosedYear, seed);
+        }
+        return posterior(StateSpaceFit.of(data, priors, seed), lastClosedYear);
+    }
+
+    private static Posterior nothing(int lastClosedYear, EvidenceStrength strength, List<String> reasons) {
+        return new Posterior(
+                METHOD,
+                lastClosedYear + 1,
+                new double[0],
+                new double[0],
+                new double[0],
+                new double[0][],
+                new double[0][],
+                Map.of(),
+                strength,
+                new Verdict(false, reasons));
+    }
+
+    private static Posterior posterior(StateSpaceFit fit, int lastClosedYear) {
+        EvidenceStrength strength = StateSpaceStrength.of(fit);
+        Verdict verdict = new Verdict(fit.ladder().settled(), reasons(fit));
+        double[] msy = fit.parameter(OuterParameters.MSY);
+        if (msy.length == 0) {
+            return nothing(lastClosedYear, strength, verdict.reasons());
+        }
+        double[] shape = Arrays.stream(fit.parameter(OuterParameters.SHAPE))
+                .map(n -> n < SeasonStep.LEAST_SHAPE ? 0 : n)
+                .toArray();
+        return new Posterior(
+                METHOD,
+                fit.data().firstYear(),
+                msy,
+                fit.parameter(OuterParameters.FMSY),
+                shape,
+                fit.draws().biomassTonnes(),
+                fit.draws().fishing(),
+                estimates(fit, shape),
+                strength,
+                verdict);
+    }
+
+    private static Map<String, Double> estimates(StateSpaceFit fit, double[] shape) {
+        Map<String, Double> estimates = new TreeMap<>();
+        double[] msy = fit.parameter(OuterParameters.MSY);
+        double[] fmsy = fit.parameter(OuterParameters.FMSY);
+        double[] r = new double[msy.length];
+        double[] k = new double[msy.length];
+        for (int i = 0; i < r.length; i++) {
+            r[i] = fmsy[i] * (1 + shape[i]);
+            k[i] = msy[i] / fmsy[i] * (shape[i] == 0 ? Math.E : Math.exp(Math.log1p(shape[i]) / shape[i]));
+        }
+        estimates.put("msy_t", Quantiles.of(msy, 0.5));
+        estimates.put("fmsy", Quantiles.of(fmsy, 0.5));
+        estimates.put("r", Quantiles.of(r, 0.5));
+        estimates.put("k_t", Quantiles.of(k, 0.5));
+        estimates.put("shape", Quantiles.of(shape, 0.5));
+        estimates.put("process_sd", Quantiles.of(fit.parameter(OuterParameters.PROCESS_SD), 0.5));
+        estimates.put("harvest_sd", Quantiles.of(fit.parameter(OuterParameters.HARVEST_SD), 0.5));
+        for (int j = 0; j < fit.data().series().size(); j++) {
+            String name = fit.data().series().get(j).name();
+            double[] scatter = fit.parameter(OuterParameters.FIRST_SCATTER + j);
+            estimates.put("observation_sd:" + name, Quantiles.of(scatter, 0.5));
+            estimates.put("catchability:" + name, Quantiles.of(fit.catchability(j), 0.5));
+        }
+        ImportanceSample sample = fit.ladder().sample();
+        estimates.put("log_evidence", sample.logEvidence());
+        estimates.put("effective_draws", sample.effectiveSize());
+        estimates.put("pareto_k", sample.paretoShape());
+        estimates.put("rung", (double) fit.ladder().rung());
+        estimates.put("cut_share", sample.truncatedShare());
+        estimates.values().removeIf(value -> !Double.isFinite(value));
+        return estimates;
+    }
+
+    private static List<String> reasons(StateSpaceFit fit) {
+        List<String> sentences = new ArrayList<>();
+        List<String> rungs = fit.ladder().rungs();
+        if (!fit.ladder().settled()) {
+            sentences.add("Not settled. " + rungs.get(0));
+        }
+        sentences.add(restsOn(fit.data()));
+        sentences.addAll(fit.data().notes());
+        sentences.addAll(fit.ladder().settled() ? rungs : rungs.subList(1, rungs.size()));
+        double cut = fit.ladder().sample().truncatedShare();
+        if (cut > 0.1) {
+            sentences.add(String.format(
+                    Locale.ROOT,
+                    "For %.0f %% of the draws the hidden biomass is wider than the approximation shows; their weight is"
+                            + " held back.",
+                    100 * cut));
+        }
+        sentences.add(said("MSY", fit.priors().msy(), "t"));
+        sentences.add(said("FMSY", fit.priors().fmsy(), "per year"));
+        return sentences;
+    }
+
+    private static String restsOn(SeasonData data) {
+        int seen = data.seasonsSeen();
+        String removals = data.hasCatch() ? "recorded removals" : "no recorded removals";
+        return "Rests on " + data.seasons() + (data.seasons() == 1 ? " season" : " seasons") + " with " + removals
+                + ", on abundance seen in " + seen + " of them, and on the priors.";
+    }
+
+    private static String said(String name, Prior prior, String unit) {
+        return String.format(
+                Locale.ROOT,
+                "%s before the records: %.3g %s, within a factor of %.2g in two cases of three (%s). %s",
+                name,
+                prior.median(),
+                unit,
+                Math.exp(prior.logSd()),
+                prior.source(),
+                prior.reason());
+    }
+}
