@@ -159,7 +159,7 @@ class AdviceView {
                 toBeLogged(limit),
                 Figures.date(limit.validFrom()) + " – " + Figures.date(limit.validTo()),
                 proposal.decidedBy(),
-                Figures.dateTime(proposal.effectiveAt()),
+                proposal.when(),
                 proposal.reason(),
                 proposal.decidedBy().equals(Who.name()));
     }
@@ -176,7 +176,7 @@ class AdviceView {
                 .map(d -> new Past(
                         d.limitId(),
                         text("advice.act." + d.act()),
-                        Figures.dateTime(d.effectiveAt()),
+                        d.when(),
                         d.decidedBy(),
                         d.reason(),
                         d.act().equals(LimitWriter.ISSUED)

@@ -5,8 +5,10 @@ import java.sql.SQLException;
 import java.time.Instant;
 import java.time.LocalDate;
 import java.time.OffsetDateTime;
+import java.time.ZoneOffset;
 import java.util.List;
 import java.util.Optional;
+import org.merewarden.web.Figures;
 import org.springframework.jdbc.core.simple.JdbcClient;
 import org.springframework.stereotype.Repository;
 
@@ -20,23 +22,30 @@ class LimitHistory {
     }
 
     /** One decision. Act: PROPOSED, ISSUED, REFUSED, WITHDRAWN or SUPERSEDED; the instant from which it has effect. */
-    record Decision(long limitId, String act, Instant effectiveAt, String decidedBy, String reason) {}
+    record Decision(long limitId, String act, Instant effectiveAt, String decidedBy, String reason, boolean fromPaper) {
+
+        /** When it took effect, for people; papers know the day only. */
+        String when() {
+            return fromPaper && act.equals(LimitWriter.ISSUED)
+                    ? Figures.date(LocalDate.ofInstant(effectiveAt, ZoneOffset.UTC))
+                    : Figures.dateTime(effectiveAt);
+        }
+    }
 
     /** The decisions about a stock's limits, newest first. */
     List<Decision> decisions(long stockId) {
         return jdbc.sql("""
-                        select d.limit_id, d.act, d.effective_at, d.decided_by, d.reason
+                        select d.limit_id, d.act, d.effective_at, d.decided_by, d.reason, l.origin
                         from limit_decision d join catch_limit l on l.id = d.limit_id
                         where l.stock_id = ? order by d.effective_at desc, d.id desc""").param(stockId).query(LimitHistory::decision).list();
     }
 
     /** What was decided about one limit, oldest first. */
     List<Decision> ofLimit(long limitId) {
-        return jdbc.sql("select limit_id, act, effective_at, decided_by, reason from limit_decision where limit_id = ?"
-                        + " order by id")
-                .param(limitId)
-                .query(LimitHistory::decision)
-                .list();
+        return jdbc.sql("""
+                        select d.limit_id, d.act, d.effective_at, d.decided_by, d.reason, l.origin
+                        from limit_decision d join catch_limit l on l.id = d.limit_id
+                        where d.limit_id = ? order by d.id""").param(limitId).query(LimitHistory::decision).list();
     }
 
     private static Decision decision(ResultSet row, int n) throws SQLException {
@@ -45,7 +54,8 @@ class LimitHistory {
                 row.getString(2),
                 row.getObject(3, OffsetDateTime.class).toInstant(),
                 row.getString(4),
-                row.getString(5));
+                row.getString(5),
+                row.getString(6).equals("entered"));
     }
 
     Optional<NewLimit> find(long limitId) {

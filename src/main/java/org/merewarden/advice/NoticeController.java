@@ -92,7 +92,7 @@ class NoticeController {
                 state(acts),
                 parts(id),
                 acts.stream()
-                        .map(d -> new Act(d.act(), Figures.dateTime(d.effectiveAt()), d.decidedBy(), d.reason()))
+                        .map(d -> new Act(d.act(), d.when(), d.decidedBy(), d.reason()))
                         .toList());
     }
 
