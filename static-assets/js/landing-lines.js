@@ -17,7 +17,9 @@ function add() {
   line.querySelectorAll('input').forEach(input => { input.value = ''; input.removeAttribute('aria-invalid'); });
   line.querySelector('select').value = '';
   line.querySelector('legend').textContent = line.querySelector('legend').textContent.replace(/\d+/, index + 1);
-  lines.append(line);
+  const more = lines.querySelector(':scope > details');
+  more.append(line);
+  more.open = true;
   line.querySelector('select').focus();
   button.hidden = index + 1 >= most;
 }
