@@ -4,6 +4,8 @@ import static org.assertj.core.api.Assertions.assertThat;
 
 import com.microsoft.playwright.Locator;
 import com.microsoft.playwright.Response;
+import java.time.LocalDate;
+import java.time.ZoneOffset;
 import org.junit.jupiter.api.AfterAll;
 import org.junit.jupiter.api.BeforeAll;
 import org.junit.jupiter.api.MethodOrderer;
@@ -132,7 +134,7 @@ class WholeJobBrowserTest {
                 assertThat(office.text()).contains(weight);
             }
             office.picture("landing-stored-1280");
-            office.go("/season/2026/landings?lake=mizzow-lake");
+            office.go("/season/" + LocalDate.now(ZoneOffset.UTC).getYear() + "/landings?lake=mizzow-lake");
             office.picture("log-1280");
             int before = count("landing");
             office.follow("Correct");
