@@ -24,6 +24,13 @@ class LimitStore implements Limits {
             """;
     private static final String IN_FORCE = VIEW + " join limit_in_force f on f.limit_id = l.id ";
 
+    private static final String ALLOCATIONS = """
+            select a.limit_id, l.stock_id, l.season_year, a.cooperative_id, c.name, a.share_percent, a.amount_kg
+            from allocation a
+            join catch_limit l on l.id = a.limit_id
+            join cooperative c on c.id = a.cooperative_id
+            """;
+
     private final JdbcClient jdbc;
     private final Seasons seasons;
 
@@ -50,23 +57,30 @@ class LimitStore implements Limits {
 
     @Override
     public List<AllocationView> allocations(int season) {
-        return jdbc.sql("""
-                        select a.limit_id, f.stock_id, f.season_year, a.cooperative_id, c.name, a.share_percent,
-                            a.amount_kg
-                        from limit_in_force f
-                        join allocation a on a.limit_id = f.limit_id
-                        join cooperative c on c.id = a.cooperative_id
-                        where f.season_year = ? order by f.stock_id, c.name""")
+        return jdbc.sql(ALLOCATIONS + "join limit_in_force f on f.limit_id = a.limit_id where f.season_year = ?"
+                        + " order by l.stock_id, c.name")
                 .param(season)
-                .query((row, n) -> new AllocationView(
-                        row.getLong(1),
-                        row.getLong(2),
-                        row.getInt(3),
-                        row.getLong(4),
-                        row.getString(5),
-                        row.getDouble(6),
-                        row.getLong(7)))
+                .query(LimitStore::allocation)
                 .list();
+    }
+
+    /** The allocations of one limit, in force or not, by cooperative. */
+    List<AllocationView> allocationsOf(long limitId) {
+        return jdbc.sql(ALLOCATIONS + "where a.limit_id = ? order by c.name")
+                .param(limitId)
+                .query(LimitStore::allocation)
+                .list();
+    }
+
+    private static AllocationView allocation(ResultSet row, int n) throws SQLException {
+        return new AllocationView(
+                row.getLong(1),
+                row.getLong(2),
+                row.getInt(3),
+                row.getLong(4),
+                row.getString(5),
+                row.getDouble(6),
+                row.getLong(7));
     }
 
     @Override

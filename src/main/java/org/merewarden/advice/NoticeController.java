@@ -10,7 +10,6 @@ import org.merewarden.waterbody.Register;
 import org.merewarden.waterbody.StockView;
 import org.merewarden.web.Figures;
 import org.merewarden.web.OfficeSettings;
-import org.springframework.jdbc.core.simple.JdbcClient;
 import org.springframework.stereotype.Controller;
 import org.springframework.ui.Model;
 import org.springframework.web.bind.annotation.GetMapping;
@@ -24,7 +23,7 @@ class NoticeController {
     private final LimitHistory history;
     private final Assessments assessments;
     private final OfficeSettings settings;
-    private final JdbcClient jdbc;
+    private final LimitStore limits;
 
     NoticeController(
             Register register,
@@ -32,13 +31,13 @@ class NoticeController {
             LimitHistory history,
             Assessments assessments,
             OfficeSettings settings,
-            JdbcClient jdbc) {
+            LimitStore limits) {
         this.register = register;
         this.decisions = decisions;
         this.history = history;
         this.assessments = assessments;
         this.settings = settings;
-        this.jdbc = jdbc;
+        this.limits = limits;
     }
 
     record Part(String cooperative, String share, String amount) {}
@@ -120,14 +119,11 @@ class NoticeController {
     }
 
     private List<Part> parts(long id) {
-        return jdbc.sql("""
-                        select c.name, a.share_percent, a.amount_kg from allocation a
-                        join cooperative c on c.id = a.cooperative_id where a.limit_id = ? order by c.name""")
-                .param(id)
-                .query((row, n) -> new Part(
-                        row.getString(1),
-                        Figures.sig(row.getDouble(2)) + " %",
-                        Figures.withUnit((double) row.getLong(3), "kg")))
-                .list();
+        return limits.allocationsOf(id).stream()
+                .map(a -> new Part(
+                        a.cooperativeName(),
+                        Figures.sig(a.sharePercent()) + " %",
+                        Figures.withUnit((double) a.amountKg(), "kg")))
+                .toList();
     }
 }

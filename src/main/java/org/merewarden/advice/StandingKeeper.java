@@ -1,5 +1,7 @@
 package org.merewarden.advice;
 
+import java.sql.ResultSet;
+import java.sql.SQLException;
 import java.sql.Types;
 import java.time.Clock;
 import java.time.OffsetDateTime;
@@ -113,33 +115,37 @@ class StandingKeeper implements Standings {
 
     @Override
     public List<StandingView> all() {
-        return select("").list();
+        return jdbc.sql("select * from stock_standing")
+                .query(StandingKeeper::view)
+                .list();
     }
 
     @Override
     public Optional<StandingView> of(long stockId) {
-        return select(" where stock_id = " + stockId).optional();
+        return jdbc.sql("select * from stock_standing where stock_id = ?")
+                .param(stockId)
+                .query(StandingKeeper::view)
+                .optional();
     }
 
-    private JdbcClient.MappedQuerySpec<StandingView> select(String where) {
-        return jdbc.sql("select * from stock_standing" + where)
-                .query((row, n) -> new StandingView(
-                        row.getLong("stock_id"),
-                        row.getLong("assessment_id"),
-                        row.getInt("season_year"),
-                        row.getDouble("removals_t"),
-                        row.getString("removals_basis"),
-                        row.getString("standing"),
-                        row.getBoolean("mainly_little_known"),
-                        row.getDouble("probability"),
-                        row.getDouble("collapse_probability"),
-                        row.getDouble("below_limit_probability"),
-                        row.getDouble("margin_low"),
-                        row.getDouble("margin"),
-                        row.getDouble("margin_high"),
-                        row.getDouble("margin_negative_probability"),
-                        row.getObject("tipping_biomass_t", Double.class),
-                        row.getObject("return_time_years", Double.class),
-                        row.getObject("computed_at", OffsetDateTime.class).toInstant()));
+    private static StandingView view(ResultSet row, int n) throws SQLException {
+        return new StandingView(
+                row.getLong("stock_id"),
+                row.getLong("assessment_id"),
+                row.getInt("season_year"),
+                row.getDouble("removals_t"),
+                row.getString("removals_basis"),
+                row.getString("standing"),
+                row.getBoolean("mainly_little_known"),
+                row.getDouble("probability"),
+                row.getDouble("collapse_probability"),
+                row.getDouble("below_limit_probability"),
+                row.getDouble("margin_low"),
+                row.getDouble("margin"),
+                row.getDouble("margin_high"),
+                row.getDouble("margin_negative_probability"),
+                row.getObject("tipping_biomass_t", Double.class),
+                row.getObject("return_time_years", Double.class),
+                row.getObject("computed_at", OffsetDateTime.class).toInstant());
     }
 }

@@ -7,25 +7,15 @@ package org.merewarden.core.policy;
  * @param watchFrom probability from which a stock is watched, in (0, 1)
  * @param strainedFrom probability from which it is strained: the risk tolerance
  * @param criticalFrom probability from which it is critical
- * @param roundingFraction step to which an amount is rounded down, as a fraction of it
- * @param roundingLeastKg least step, kg
  */
-public record Policy(
-        double limitFraction,
-        double watchFrom,
-        double strainedFrom,
-        double criticalFrom,
-        double roundingFraction,
-        double roundingLeastKg) {
+public record Policy(double limitFraction, double watchFrom, double strainedFrom, double criticalFrom) {
 
-    public static final Policy DEFAULT = new Policy(0.2, 0.05, 0.10, 0.50, 0.01, 10);
+    public static final Policy DEFAULT = new Policy(0.2, 0.05, 0.10, 0.50);
 
     public Policy {
         require(0 < limitFraction && limitFraction < 1, "0 < B lim / K < 1", limitFraction);
         require(0 < watchFrom && watchFrom < strainedFrom, "0 < watch < strained", watchFrom);
         require(strainedFrom < criticalFrom && criticalFrom < 1, "strained < critical < 1", criticalFrom);
-        require(0 <= roundingFraction && roundingFraction < 1, "0 <= rounding < 1", roundingFraction);
-        require(roundingLeastKg > 0, "0 < least step", roundingLeastKg);
     }
 
     private static void require(boolean holds, String rule, double value) {
