@@ -13,6 +13,7 @@ import java.util.Objects;
 import java.util.Optional;
 import org.jspecify.annotations.Nullable;
 import org.merewarden.core.evidence.Evidence;
+import org.merewarden.core.inference.Diagnostics;
 import org.merewarden.core.inference.EvidenceStrength;
 import org.merewarden.core.inference.Posterior;
 import org.merewarden.core.inference.Verdict;
@@ -65,11 +66,11 @@ class AssessmentStore implements Assessments {
                             evidence_text, method, first_year, last_year, settled, verdict, strength,
                             msy_low_t, msy_t, msy_high_t, fmsy, capacity_t, biomass_low_t, biomass_t, biomass_high_t,
                             b_over_bmsy_low, b_over_bmsy, b_over_bmsy_high, last_removals_t, closed_last_season,
-                            trend, estimates, draw_count, draws)
+                            trend, estimates, diagnostics, draw_count, draws)
                         values (:stock, :number, :job, :at, :by, :hash, :evidence, :method, :first, :last, :settled,
                             :verdict, :strength, :msyLow, :msy, :msyHigh, :fmsy, :capacity, :biomassLow, :biomass,
                             :biomassHigh, :ratioLow, :ratio, :ratioHigh, :removals, :closed, :trend, :estimates,
-                            :count, :draws)""")
+                            :diagnostics, :count, :draws)""")
                 .param("stock", stockId)
                 .param("number", number)
                 .param("job", jobId, Types.BIGINT)
@@ -89,6 +90,7 @@ class AssessmentStore implements Assessments {
                 .param("closed", closed(evidence, posterior.lastYear()))
                 .param("trend", summary.trend())
                 .param("estimates", json.writeValueAsString(posterior.estimates()))
+                .param("diagnostics", json.writeValueAsString(posterior.diagnostics()))
                 .param("count", posterior.draws())
                 .param("draws", DrawsCodec.encode(posterior));
         band(insert, "msy", summary.msy());
@@ -157,7 +159,7 @@ class AssessmentStore implements Assessments {
     @Override
     public Posterior posterior(long assessmentId) {
         return jdbc.sql(
-                        "select method, first_year, settled, verdict, strength, estimates, draws from assessment where id = ?")
+                        "select method, first_year, settled, verdict, strength, estimates, diagnostics, draws from assessment where id = ?")
                 .param(assessmentId)
                 .query((row, n) -> posterior(row))
                 .optional()
@@ -174,9 +176,16 @@ class AssessmentStore implements Assessments {
                 draws.shape(),
                 draws.biomass(),
                 draws.fishing(),
+                draws.removals(),
+                draws.parameters(),
                 json.readValue(row.getString("estimates"), ESTIMATES),
                 EvidenceStrength.valueOf(row.getString("strength")),
-                new Verdict(row.getBoolean("settled"), lines(row.getString("verdict"))));
+                new Verdict(row.getBoolean("settled"), lines(row.getString("verdict"))),
+                diagnostics(row.getString("diagnostics")));
+    }
+
+    private Diagnostics diagnostics(@Nullable String text) {
+        return text == null ? Diagnostics.NONE : json.readValue(text, Diagnostics.class);
     }
 
     @Override

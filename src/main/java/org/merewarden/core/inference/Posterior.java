@@ -15,9 +15,13 @@ import java.util.Map;
  * @param shape n by draw; 1 is Graham–Schaefer, 0 Fox
  * @param biomassTonnes [draw][T + 1], t at the season's start
  * @param fishingPerYear [draw][T], 1/yr
+ * @param removalsTonnes [draw][T], t in the season; no columns where the method does not estimate removals
+ * @param parameters what else was estimated, by draw: {@code process_sd, harvest_sd, observation_sd:SERIES,
+ *     catchability:SERIES}
  * @param estimates named point estimates with units in the name, e.g. {@code msy_t}, {@code catchability:nets}
  * @param strength how much the evidence says
  * @param verdict settled or not, in words
+ * @param diagnostics what to make of it
  */
 public record Posterior(
         String method,
@@ -27,21 +31,56 @@ public record Posterior(
         double[] shape,
         double[][] biomassTonnes,
         double[][] fishingPerYear,
+        double[][] removalsTonnes,
+        Map<String, double[]> parameters,
         Map<String, Double> estimates,
         EvidenceStrength strength,
-        Verdict verdict) {
+        Verdict verdict,
+        Diagnostics diagnostics) {
 
     public Posterior {
         int draws = msyTonnes.length;
-        if (fmsyPerYear.length != draws
-                || shape.length != draws
-                || biomassTonnes.length != draws
-                || fishingPerYear.length != draws) {
+        boolean asMany = fmsyPerYear.length == draws
+                && shape.length == draws
+                && biomassTonnes.length == draws
+                && fishingPerYear.length == draws
+                && removalsTonnes.length == draws
+                && parameters.values().stream().allMatch(values -> values.length == draws);
+        if (!asMany) {
             throw new IllegalArgumentException("needs as many draws of every quantity, got " + draws + ", "
                     + fmsyPerYear.length + ", " + shape.length + ", " + biomassTonnes.length + ", "
-                    + fishingPerYear.length);
+                    + fishingPerYear.length + ", " + removalsTonnes.length);
         }
+        parameters = Map.copyOf(parameters);
         estimates = Map.copyOf(estimates);
+    }
+
+    /** Of a method that estimates neither removals nor further parameters and makes no diagnostics. */
+    public Posterior(
+            String method,
+            int firstYear,
+            double[] msyTonnes,
+            double[] fmsyPerYear,
+            double[] shape,
+            double[][] biomassTonnes,
+            double[][] fishingPerYear,
+            Map<String, Double> estimates,
+            EvidenceStrength strength,
+            Verdict verdict) {
+        this(
+                method,
+                firstYear,
+                msyTonnes,
+                fmsyPerYear,
+                shape,
+                biomassTonnes,
+                fishingPerYear,
+                new double[msyTonnes.length][0],
+                Map.of(),
+                estimates,
+                strength,
+                verdict,
+                Diagnostics.NONE);
     }
 
     public int draws() {

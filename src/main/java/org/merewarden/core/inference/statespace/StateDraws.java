@@ -8,9 +8,11 @@ import java.util.random.RandomGenerator;
  * @param theta [draw][parameter] as {@link OuterParameters} orders them, MSY in the data's unit
  * @param biomassTonnes [draw][T + 1] at the season's start
  * @param fishing [draw][T], 1/yr; of a closed season the F that yields its known catch
+ * @param removals [draw][T], t in the season
  * @param logQ [draw][series] hidden ln q
  */
-record StateDraws(double[][] theta, double[][] biomassTonnes, double[][] fishing, double[][] logQ) {
+record StateDraws(
+        double[][] theta, double[][] biomassTonnes, double[][] fishing, double[][] removals, double[][] logQ) {
 
     /** {@code chosen}: indices of the sample in ascending order; one inner mode serves all draws of one index. */
     static StateDraws at(
@@ -21,6 +23,7 @@ record StateDraws(double[][] theta, double[][] biomassTonnes, double[][] fishing
         StateDraws result = new StateDraws(
                 new double[draws][outer.size()],
                 new double[draws][density.seasons + 1],
+                new double[draws][density.seasons],
                 new double[draws][density.seasons],
                 new double[draws][series]);
         StateMixture mixture = marginal.mixture();
@@ -44,8 +47,12 @@ record StateDraws(double[][] theta, double[][] biomassTonnes, double[][] fishing
         for (int t = 0; t <= last; t++) {
             biomassTonnes[k][t] = unit * Math.exp(z[2 * t] + density.logCapacity(t));
             fishing[k][t] = Math.exp(density.beginSeason(t, z[2 * t], z[2 * t + 1]));
+            density.step.biomassAt(1);
+            if (fishing[k][t] > 0) {
+                density.step.removals();
+                removals[k][t] = unit * Math.exp(density.step.c + density.logCapacity(t));
+            }
         }
-        density.step.biomassAt(1);
         double next = density.step.y + density.logCapacity(last) + noise * Math.sqrt(density.stepVariance(last));
         biomassTonnes[k][last + 1] = unit * Math.exp(next);
     }

@@ -8,6 +8,7 @@ import java.util.Map;
 import java.util.TreeMap;
 import org.merewarden.core.evidence.Evidence;
 import org.merewarden.core.inference.Assessor;
+import org.merewarden.core.inference.Diagnostics;
 import org.merewarden.core.inference.EvidenceStrength;
 import org.merewarden.core.inference.Posterior;
 import org.merewarden.core.inference.PriorOnlyAssessor;
@@ -83,9 +84,24 @@ public final class StateSpaceAssessor implements Assessor {
                 shape,
                 fit.draws().biomassTonnes(),
                 fit.draws().fishing(),
+                fit.draws().removals(),
+                parameters(fit),
                 estimates(fit, shape),
                 strength,
-                verdict);
+                verdict,
+                Diagnostics.NONE);
+    }
+
+    private static Map<String, double[]> parameters(StateSpaceFit fit) {
+        Map<String, double[]> parameters = new TreeMap<>();
+        parameters.put("process_sd", fit.parameter(OuterParameters.PROCESS_SD));
+        parameters.put("harvest_sd", fit.parameter(OuterParameters.HARVEST_SD));
+        for (int j = 0; j < fit.data().series().size(); j++) {
+            String name = fit.data().series().get(j).name();
+            parameters.put("observation_sd:" + name, fit.parameter(OuterParameters.FIRST_SCATTER + j));
+            parameters.put("catchability:" + name, fit.catchability(j));
+        }
+        return parameters;
     }
 
     private static Map<String, Double> estimates(StateSpaceFit fit, double[] shape) {
@@ -103,14 +119,7 @@ public final class StateSpaceAssessor implements Assessor {
         estimates.put("r", Quantiles.of(r, 0.5));
         estimates.put("k_t", Quantiles.of(k, 0.5));
         estimates.put("shape", Quantiles.of(shape, 0.5));
-        estimates.put("process_sd", Quantiles.of(fit.parameter(OuterParameters.PROCESS_SD), 0.5));
-        estimates.put("harvest_sd", Quantiles.of(fit.parameter(OuterParameters.HARVEST_SD), 0.5));
-        for (int j = 0; j < fit.data().series().size(); j++) {
-            String name = fit.data().series().get(j).name();
-            double[] scatter = fit.parameter(OuterParameters.FIRST_SCATTER + j);
-            estimates.put("observation_sd:" + name, Quantiles.of(scatter, 0.5));
-            estimates.put("catchability:" + name, Quantiles.of(fit.catchability(j), 0.5));
-        }
+        parameters(fit).forEach((name, values) -> estimates.put(name, Quantiles.of(values, 0.5)));
         ImportanceSample sample = fit.ladder().sample();
         estimates.put("log_evidence", sample.logEvidence());
         estimates.put("effective_draws", sample.effectiveSize());
