@@ -125,9 +125,9 @@ class PublishedSeriesTest {
     @Test
     void southAtlanticAlbacore() throws Exception {
         String page = page("series-c/WHF");
-        assertThat(value(page, "MSY, t a year")).isCloseTo(19_650, within(0.02 * 19_650));
-        assertThat(value(page, "r, 1/year")).isCloseTo(0.328, within(0.05 * 0.328));
-        assertThat(value(page, "K, t")).isCloseTo(239_600, within(0.05 * 239_600));
+        assertThat(value(page, "Difference equation: MSY, t a year")).isCloseTo(19_650, within(0.02 * 19_650));
+        assertThat(value(page, "Difference equation: r, 1/year")).isCloseTo(0.328, within(0.05 * 0.328));
+        assertThat(value(page, "Difference equation: K, t")).isCloseTo(239_600, within(0.05 * 239_600));
         assertThat(page).doesNotContain("not settled");
     }
 

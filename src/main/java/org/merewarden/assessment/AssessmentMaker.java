@@ -1,8 +1,11 @@
 package org.merewarden.assessment;
 
+import java.util.Map;
+import java.util.TreeMap;
 import org.merewarden.activity.ActivityLog;
 import org.merewarden.core.evidence.Evidence;
 import org.merewarden.core.inference.Assessor;
+import org.merewarden.core.inference.OlderEstimators;
 import org.merewarden.core.inference.Posterior;
 import org.merewarden.records.EvidenceReader;
 import org.merewarden.waterbody.Register;
@@ -11,7 +14,10 @@ import org.springframework.context.ApplicationEventPublisher;
 import org.springframework.stereotype.Service;
 import org.springframework.transaction.support.TransactionTemplate;
 
-/** Makes one assessment: reads one evidence version, runs the method outside any transaction, stores the result once. */
+/**
+ * Makes one assessment: reads one evidence version, runs the method outside any transaction, stores the result once, with
+ * the point estimates of the older estimators beside it.
+ */
 @Service
 class AssessmentMaker {
     private final EvidenceReader reader;
@@ -48,9 +54,12 @@ class AssessmentMaker {
             return;
         }
         Evidence evidence = reader.evidence(stockId);
-        Posterior posterior = assessor.assess(evidence, seasons.current() - 1, seed(evidence));
+        int lastClosed = seasons.current() - 1;
+        Posterior posterior = assessor.assess(evidence, lastClosed, seed(evidence));
+        Map<String, Double> estimates = new TreeMap<>(OlderEstimators.of(evidence, lastClosed));
+        estimates.putAll(posterior.estimates());
         transaction.executeWithoutResult(status -> {
-            long id = store.add(stockId, jobId, by, evidence, posterior);
+            long id = store.add(stockId, jobId, by, evidence, posterior, estimates);
             activity.record(
                     "assessed",
                     register.stock(stockId).orElseThrow().title(),

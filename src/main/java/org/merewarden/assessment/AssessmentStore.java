@@ -16,6 +16,7 @@ import org.merewarden.core.evidence.Evidence;
 import org.merewarden.core.inference.Diagnostics;
 import org.merewarden.core.inference.EvidenceStrength;
 import org.merewarden.core.inference.Posterior;
+import org.merewarden.core.inference.Quantiles;
 import org.merewarden.core.inference.Verdict;
 import org.merewarden.web.NotFound;
 import org.springframework.jdbc.core.simple.JdbcClient;
@@ -50,7 +51,13 @@ class AssessmentStore implements Assessments {
      * Stores the next assessment of the stock; returns its id. The stock's row is locked: of two runs over the same
      * stock the second waits for its number, and standings follow in the same order.
      */
-    long add(long stockId, @Nullable Long jobId, String by, Evidence evidence, Posterior posterior) {
+    long add(
+            long stockId,
+            @Nullable Long jobId,
+            String by,
+            Evidence evidence,
+            Posterior posterior,
+            Map<String, Double> estimates) {
         jdbc.sql("select id from stock where id = ? for update")
                 .param(stockId)
                 .query(Long.class)
@@ -89,7 +96,7 @@ class AssessmentStore implements Assessments {
                 .param("removals", lastRemovals(evidence, posterior), Types.DOUBLE)
                 .param("closed", closed(evidence, posterior.lastYear()))
                 .param("trend", summary.trend())
-                .param("estimates", json.writeValueAsString(posterior.estimates()))
+                .param("estimates", json.writeValueAsString(estimates))
                 .param("diagnostics", json.writeValueAsString(posterior.diagnostics()))
                 .param("count", posterior.draws())
                 .param("draws", DrawsCodec.encode(posterior));
@@ -107,7 +114,16 @@ class AssessmentStore implements Assessments {
                 .param(name + "High", band.high(), Types.DOUBLE);
     }
 
+    /** Estimated where the method does so, else as recorded. */
     private static @Nullable Double lastRemovals(Evidence evidence, Posterior posterior) {
+        if (posterior.draws() > 0 && posterior.removalsTonnes()[0].length > 0) {
+            int last = posterior.seasons() - 1;
+            return Quantiles.of(
+                    Arrays.stream(posterior.removalsTonnes())
+                            .mapToDouble(season -> season[last])
+                            .toArray(),
+                    0.5);
+        }
         var removals = evidence.removals(posterior.lastYear());
         return removals.isPresent() ? (Double) removals.getAsDouble() : null;
     }

@@ -1,7 +1,7 @@
 package org.merewarden.assessment;
 
 import org.merewarden.core.inference.Assessor;
-import org.merewarden.core.inference.FirstAssessor;
+import org.merewarden.core.inference.statespace.StateSpaceAssessor;
 import org.springframework.context.annotation.Bean;
 import org.springframework.context.annotation.Configuration;
 
@@ -10,6 +10,6 @@ import org.springframework.context.annotation.Configuration;
 class AssessorConfiguration {
     @Bean
     Assessor assessor() {
-        return new FirstAssessor();
+        return new StateSpaceAssessor();
     }
 }

@@ -6,6 +6,7 @@ import java.io.DataInputStream;
 import java.io.DataOutputStream;
 import java.io.IOException;
 import java.io.UncheckedIOException;
+import java.util.Arrays;
 import java.util.Map;
 import java.util.TreeMap;
 import java.util.zip.DeflaterOutputStream;
@@ -49,7 +50,7 @@ final class DrawsCodec {
                 out.writeDouble(posterior.msyTonnes()[i]);
                 out.writeDouble(posterior.fmsyPerYear()[i]);
                 out.writeDouble(posterior.shape()[i]);
-                writeFloats(out, posterior.biomassTonnes()[i]);
+                writeFloats(out, inRange(posterior.biomassTonnes()[i]));
                 writeFloats(out, posterior.fishingPerYear()[i]);
                 writeFloats(out, posterior.removalsTonnes()[i]);
             }
@@ -103,6 +104,13 @@ final class DrawsCodec {
         } catch (IOException e) {
             throw new UncheckedIOException(e);
         }
+    }
+
+    /** A biomass too small or too large for a float stays positive and finite. */
+    private static double[] inRange(double[] biomass) {
+        return Arrays.stream(biomass)
+                .map(b -> Math.max(Float.MIN_NORMAL, Math.min(Float.MAX_VALUE, b)))
+                .toArray();
     }
 
     private static void writeFloats(DataOutputStream out, double[] values) throws IOException {

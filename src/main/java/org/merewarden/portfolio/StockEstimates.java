@@ -4,7 +4,6 @@ import java.math.BigDecimal;
 import java.math.MathContext;
 import java.text.NumberFormat;
 import java.util.List;
-import java.util.Locale;
 import java.util.Map;
 import java.util.TreeMap;
 import org.springframework.context.i18n.LocaleContextHolder;
@@ -21,18 +20,17 @@ class StockEstimates {
         this.texts = texts;
     }
 
-    /** The estimates that are, or are not, of the regressions of catch per effort on effort; by name. */
-    List<StockPage.Term> terms(Map<String, Double> estimates, boolean regressions) {
+    /** The estimates that are, or are not, of the older estimators; by name. */
+    List<StockPage.Term> terms(Map<String, Double> estimates, boolean older) {
         return new TreeMap<>(estimates)
                 .entrySet().stream()
-                        .filter(e -> isRegression(e.getKey()) == regressions)
+                        .filter(e -> isOlder(e.getKey()) == older)
                         .map(e -> new StockPage.Term(name(e.getKey()), sixDigits(e.getValue())))
                         .toList();
     }
 
-    private static boolean isRegression(String key) {
-        String lower = key.toLowerCase(Locale.ROOT);
-        return lower.contains("schaefer") || lower.contains("fox") || lower.contains("regression");
+    private static boolean isOlder(String key) {
+        return key.startsWith("difference_") || key.startsWith("schaefer_") || key.startsWith("fox_");
     }
 
     /** The text for the key's first part, then the series; the key itself in words where no text is known. */

@@ -2,6 +2,7 @@ package org.merewarden.assessment;
 
 import org.merewarden.core.evidence.Evidence;
 import org.merewarden.core.inference.Assessor;
+import org.merewarden.core.inference.Posterior;
 import org.merewarden.records.EvidenceReader;
 import org.springframework.context.ApplicationEventPublisher;
 import org.springframework.stereotype.Component;
@@ -25,7 +26,8 @@ public class AssessForTests {
     @Transactional
     public void assess(long stockId, int lastClosedYear) {
         Evidence evidence = reader.evidence(stockId);
-        long id = store.add(stockId, null, "test", evidence, assessor.assess(evidence, lastClosedYear, 1));
+        Posterior posterior = assessor.assess(evidence, lastClosedYear, 1);
+        long id = store.add(stockId, null, "test", evidence, posterior, posterior.estimates());
         events.publishEvent(new AssessmentStored(stockId, id));
     }
 }

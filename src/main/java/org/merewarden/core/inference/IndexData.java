@@ -103,6 +103,11 @@ record IndexData(
         }
     }
 
+    /** Whether any value is of absolute biomass. */
+    boolean hasBiomass() {
+        return Arrays.stream(series).anyMatch(number -> number < 0);
+    }
+
     private static void dropSingles(Map<String, List<Point>> relative, List<String> notes) {
         relative.entrySet().removeIf(entry -> {
             boolean single = entry.getValue().size() < 2;

@@ -6,6 +6,7 @@ import java.util.Comparator;
 import java.util.List;
 import java.util.Locale;
 import java.util.Map;
+import java.util.Optional;
 import java.util.SplittableRandom;
 import java.util.TreeMap;
 import org.merewarden.core.inference.LeastSquares.Fit;
@@ -85,7 +86,17 @@ final class ObservationErrorFit {
         upper = new double[] {Math.log(AnnualStep.LARGEST_R), Math.log(Math.max(300 * catches, 20 * most))};
     }
 
-    /** The posterior; {@code opening} are sentences about the evidence that the verdict must carry. */
+    /** {@code r, k_t, msy_t, fmsy, sigma, catchability:SERIES} of the best fit, unless that did not settle. */
+    Optional<Map<String, Double>> settledEstimates() {
+        List<Fit> fits = fromStarts();
+        Fit best = best(fits);
+        return failure(best, fits).isEmpty() ? Optional.of(estimates(best)) : Optional.empty();
+    }
+
+    /**
+     * The refits as draws; {@code opening} are sentences about the evidence that the verdict must carry. Of no strength of
+     * its own: it is for comparison.
+     */
     Posterior assess(long seed, List<String> opening) {
         List<Fit> fits = fromStarts();
         Fit best = best(fits);
@@ -98,15 +109,6 @@ final class ObservationErrorFit {
             failure = bootstrapFailure();
         }
         double[] msy = column(2);
-        double edge = (failed + onBound) / (double) REFITS;
-        EvidenceStrength strength = StrengthRule.of(
-                failure.isEmpty(),
-                !data.fromEffort(),
-                data.seasonsSeen(),
-                contrast,
-                Math.sqrt(best.residualSumOfSquares() / data.count()),
-                spread(msy),
-                edge);
         double[] shapes = new double[msy.length];
         Arrays.fill(shapes, shape);
         return new Posterior(
@@ -118,7 +120,7 @@ final class ObservationErrorFit {
                 biomass.toArray(double[][]::new),
                 fishing.toArray(double[][]::new),
                 estimates,
-                strength,
+                EvidenceStrength.NONE,
                 new Verdict(failure.isEmpty(), sentences(failure, opening, contrast)));
     }
 
@@ -260,15 +262,6 @@ final class ObservationErrorFit {
 
     private double[] column(int j) {
         return draws.stream().mapToDouble(row -> row[j]).toArray();
-    }
-
-    /** Interquartile range over 1.349 medians: the standard deviation of a normal sample over its mean. */
-    private static double spread(double[] msy) {
-        if (msy.length == 0) {
-            return Double.POSITIVE_INFINITY;
-        }
-        double[] q = Quantiles.of(msy, new double[] {0.25, 0.5, 0.75});
-        return (q[2] - q[0]) / (1.349 * q[1]);
     }
 
     /** Largest over smallest fitted biomass among the seasons with an observation; the model must be at the fit. */

@@ -1,5 +1,7 @@
 package org.merewarden.core.prior;
 
+import java.util.Locale;
+
 /**
  * A lognormal prior of one parameter: ln p ~ N(ln median, logSd).
  *
@@ -18,5 +20,18 @@ public record Prior(String parameter, double median, double logSd, String source
         if (!(logSd >= 0 && logSd < Double.POSITIVE_INFINITY)) {
             throw new IllegalArgumentException("needs 0 <= log_sd < infinity, got " + logSd);
         }
+    }
+
+    /** The prior in a sentence. */
+    public String said(String name, String unit) {
+        return String.format(
+                Locale.ROOT,
+                "%s before the records: %.3g %s, within a factor of %.2g in two cases of three (%s). %s",
+                name,
+                median,
+                unit,
+                Math.exp(logSd),
+                source,
+                reason);
     }
 }

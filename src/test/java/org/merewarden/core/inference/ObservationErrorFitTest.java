@@ -11,7 +11,6 @@ import org.junit.jupiter.api.Test;
 import org.merewarden.core.evidence.Evidence;
 
 class ObservationErrorFitTest {
-    private final FirstAssessor assessor = new FirstAssessor();
 
     /**
      * Polacheck, Hilborn &amp; Punt 1993 (data published, results recalled: MSY within 2 %, r and K within 5 %) and an
@@ -19,7 +18,7 @@ class ObservationErrorFitTest {
      */
     @Test
     void southAtlanticAlbacore() {
-        Posterior posterior = assessor.assess(Reference.albacore().evidence(), 1989, 7);
+        Posterior posterior = fit(Reference.albacore().evidence(), 1989, 7);
         Map<String, Double> found = posterior.estimates();
 
         assertThat(found.get("msy_t")).isCloseTo(19.65, withPercentage(2));
@@ -37,7 +36,6 @@ class ObservationErrorFitTest {
         assertThat(posterior.verdict().settled())
                 .as(posterior.verdict().toString())
                 .isTrue();
-        assertThat(posterior.strength()).isIn(EvidenceStrength.STRONG, EvidenceStrength.FAIR);
         assertThat(posterior.seasons()).isEqualTo(23);
         assertThat(posterior.firstYear()).isEqualTo(1967);
     }
@@ -48,7 +46,7 @@ class ObservationErrorFitTest {
      */
     @Test
     void bootstrapDrawsSurroundTheEstimate() {
-        Posterior posterior = assessor.assess(Reference.albacore().evidence(), 1989, 7);
+        Posterior posterior = fit(Reference.albacore().evidence(), 1989, 7);
         double[] q = Quantiles.of(posterior.msyTonnes(), new double[] {0.025, 0.5, 0.975});
         assertThat(q[1]).isCloseTo(19.45, withPercentage(5));
         assertThat((q[2] - q[0]) / (23.74 - 14.26)).isBetween(1 / 3.0, 3.0);
@@ -67,7 +65,7 @@ class ObservationErrorFitTest {
             SplittableRandom random = new SplittableRandom(1000 + seed);
             double r = random.nextDouble(0.2, 0.8);
             Reference stock = Reference.noisy(r, 1000, random);
-            Posterior posterior = assessor.assess(stock.evidence(), 2024, seed);
+            Posterior posterior = fit(stock.evidence(), 2024, seed);
             double[] q = Quantiles.of(posterior.msyTonnes(), new double[] {0.05, 0.95});
             held += q[0] < r * 250 && r * 250 < q[1] ? 1 : 0;
         }
@@ -86,7 +84,7 @@ class ObservationErrorFitTest {
             fallen.index("nets", year, 0, 0.01 * biomass * Math.exp(0.15 * random.nextGaussian()));
             biomass += 0.6 * biomass * (1 - biomass / 1000) - removals;
         }
-        Posterior posterior = assessor.assess(fallen.evidence(), 2025, 3);
+        Posterior posterior = fit(fallen.evidence(), 2025, 3);
         double[] relative = IntStream.range(0, posterior.draws())
                 .mapToDouble(k -> posterior.presentBiomass(k) / posterior.capacity(k))
                 .toArray();
@@ -99,9 +97,9 @@ class ObservationErrorFitTest {
     @Test
     void theSameSeedGivesTheSameBits() {
         Evidence evidence = Reference.albacore().evidence();
-        Posterior once = assessor.assess(evidence, 1989, 11);
-        Posterior again = assessor.assess(evidence, 1989, 11);
-        Posterior other = assessor.assess(evidence, 1989, 12);
+        Posterior once = fit(evidence, 1989, 11);
+        Posterior again = fit(evidence, 1989, 11);
+        Posterior other = fit(evidence, 1989, 12);
         assertThat(again.msyTonnes()).isEqualTo(once.msyTonnes());
         assertThat(again.biomassTonnes()).isDeepEqualTo(once.biomassTonnes());
         assertThat(other.msyTonnes()).isNotEqualTo(once.msyTonnes());
@@ -117,7 +115,7 @@ class ObservationErrorFitTest {
         found(Reference.simulated(0.2, 0).kill(2000, 0.2), 500, 1000);
         found(Reference.simulated(0, 150).stocked(2005, 150), 500, 1000);
         // the check bites: without the event the truth is missed
-        Posterior missed = assessor.assess(Reference.simulated(0.2, 0).evidence(), 2019, 1);
+        Posterior missed = fit(Reference.simulated(0.2, 0).evidence(), 2019, 1);
         assertThat(Math.abs(missed.estimates().get("msy_t") / 125 - 1)).isGreaterThan(0.01);
     }
 
@@ -136,7 +134,7 @@ class ObservationErrorFitTest {
     }
 
     private Posterior found(Reference reference, double rTimes1000, double capacity) {
-        Posterior posterior = assessor.assess(reference.evidence(), 2019, 1);
+        Posterior posterior = fit(reference.evidence(), 2019, 1);
         assertThat(posterior.verdict().settled())
                 .as(posterior.verdict().toString())
                 .isTrue();
@@ -172,7 +170,7 @@ class ObservationErrorFitTest {
         reference.catches.removeIf(c -> c.year() == 1975 || c.year() == 1989);
         reference.surveys.removeIf(s -> s.year() == 1980);
         reference.index("longline", 1980, 0, 0);
-        Posterior posterior = assessor.assess(reference.evidence(), 1989, 1);
+        Posterior posterior = fit(reference.evidence(), 1989, 1);
         assertThat(posterior.verdict().settled())
                 .as(posterior.verdict().toString())
                 .isTrue();
@@ -187,18 +185,18 @@ class ObservationErrorFitTest {
     void aStatedStartingFractionIsUsed() {
         Evidence stated =
                 Reference.albacore().own("biomass_fraction_at_start", 0.7, 0.1).evidence();
-        Posterior posterior = assessor.assess(stated, 1989, 1);
+        Posterior posterior = fit(stated, 1989, 1);
         assertThat(posterior.biomassTonnes()[0][0] / posterior.capacity(0)).isEqualTo(0.7, offset(1e-9));
         assertThat(posterior.verdict().reasons()).anyMatch(s -> s.contains("fixed at 0.7 of capacity"));
     }
 
     @Test
     void recordsAfterTheLastClosedSeasonDoNotCount() {
-        Posterior before = assessor.assess(Reference.albacore().evidence(), 1985, 3);
+        Posterior before = fit(Reference.albacore().evidence(), 1985, 3);
         Reference cut = Reference.albacore();
         cut.catches.removeIf(c -> c.year() > 1985);
         cut.surveys.removeIf(s -> s.year() > 1985);
-        assertThat(assessor.assess(cut.evidence(), 1985, 3).estimates()).isEqualTo(before.estimates());
+        assertThat(fit(cut.evidence(), 1985, 3).estimates()).isEqualTo(before.estimates());
         assertThat(before.lastYear()).isEqualTo(1985);
     }
 
@@ -208,7 +206,7 @@ class ObservationErrorFitTest {
         for (int year = 2000; year < 2020; year++) {
             flat.caught(year, 10).index("nets", year, 0.5, 4);
         }
-        Posterior posterior = assessor.assess(flat.evidence(), 2019, 1);
+        Posterior posterior = fit(flat.evidence(), 2019, 1);
         assertThat(posterior.verdict().settled()).isFalse();
         assertThat(posterior.verdict().reasons().get(0)).contains("edge of what is possible");
     }
@@ -247,8 +245,13 @@ class ObservationErrorFitTest {
 
     @Test
     void fishingIsRemovalsOverMeanBiomass() {
-        Posterior posterior = assessor.assess(Reference.albacore().evidence(), 1989, 7);
+        Posterior posterior = fit(Reference.albacore().evidence(), 1989, 7);
         double[] b = posterior.biomassTonnes()[3];
         assertThat(posterior.fishingPerYear()[3][22]).isEqualTo(25.3 / (0.5 * (b[22] + b[23])), offset(1e-12));
+    }
+
+    private static Posterior fit(Evidence evidence, int lastClosedYear, long seed) {
+        return OlderEstimators.differenceEquation(evidence, lastClosedYear, seed)
+                .orElseThrow();
     }
 }

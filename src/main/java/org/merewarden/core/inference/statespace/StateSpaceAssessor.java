@@ -11,16 +11,14 @@ import org.merewarden.core.inference.Assessor;
 import org.merewarden.core.inference.Diagnostics;
 import org.merewarden.core.inference.EvidenceStrength;
 import org.merewarden.core.inference.Posterior;
-import org.merewarden.core.inference.PriorOnlyAssessor;
 import org.merewarden.core.inference.Quantiles;
 import org.merewarden.core.inference.Verdict;
-import org.merewarden.core.prior.Prior;
 
 /**
  * Surplus production with hidden biomass and harvest rate, fitted to whatever evidence a stock has.
  *
  * <p>The model: {@link StateDensity}; its priors: {@link ModelPriors}; the estimation: {@link Ladder}. A stock without any
- * record of a season gets the priors alone ({@link PriorOnlyAssessor}); a stock that lives from stocking alone gets no
+ * record of a season gets the priors alone ({@link PriorsAlone}); a stock that lives from stocking alone gets no
  * draws. Otherwise {@value StateSpaceFit#DRAWS} equally weighted draws, also where the estimation did not settle, as long
  * as any was possible. Estimates are posterior medians: {@code msy_t, fmsy, r, k_t, shape, process_sd, harvest_sd,
  * observation_sd:SERIES, catchability:SERIES} (index per t; F per unit of effort), and {@code
@@ -28,8 +26,6 @@ import org.merewarden.core.prior.Prior;
  */
 public final class StateSpaceAssessor implements Assessor {
     static final String METHOD = "state-space surplus production";
-
-    private final PriorOnlyAssessor priorOnly = new PriorOnlyAssessor();
 
     @Override
     public Posterior assess(Evidence evidence, int lastClosedYear, long seed) {
@@ -47,7 +43,7 @@ public final class StateSpaceAssessor implements Assessor {
             return nothing(lastClosedYear, EvidenceStrength.THIN, List.of(failure));
         }
         if (data.seasons() == 0) {
-            return priorOnly.assess(evidence, lastClosedYear, seed);
+            return PriorsAlone.of(priors, lastClosedYear, seed);
         }
         return posterior(StateSpaceFit.of(data, priors, seed), lastClosedYear);
     }
@@ -147,8 +143,8 @@ public final class StateSpaceAssessor implements Assessor {
                             + " held back.",
                     100 * cut));
         }
-        sentences.add(said("MSY", fit.priors().msy(), "t"));
-        sentences.add(said("FMSY", fit.priors().fmsy(), "per year"));
+        sentences.add(fit.priors().msy().said("MSY", "t"));
+        sentences.add(fit.priors().fmsy().said("FMSY", "per year"));
         return sentences;
     }
 
@@ -157,17 +153,5 @@ public final class StateSpaceAssessor implements Assessor {
         String removals = data.hasCatch() ? "recorded removals" : "no recorded removals";
         return "Rests on " + data.seasons() + (data.seasons() == 1 ? " season" : " seasons") + " with " + removals
                 + ", on abundance seen in " + seen + " of them, and on the priors.";
-    }
-
-    private static String said(String name, Prior prior, String unit) {
-        return String.format(
-                Locale.ROOT,
-                "%s before the records: %.3g %s, within a factor of %.2g in two cases of three (%s). %s",
-                name,
-                prior.median(),
-                unit,
-                Math.exp(prior.logSd()),
-                prior.source(),
-                prior.reason());
     }
 }

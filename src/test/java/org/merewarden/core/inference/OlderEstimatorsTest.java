@@ -18,29 +18,22 @@ import org.merewarden.core.evidence.Evidence;
 import org.merewarden.core.evidence.Habitat;
 import org.merewarden.core.evidence.Traits;
 
-class FirstAssessorTest {
-    private final FirstAssessor assessor = new FirstAssessor();
-
+class OlderEstimatorsTest {
     /** Arabian Sea shrimp, Cadima 2003 (a, b, r² published; MSY and effort computed). */
     @Test
-    void effortSeriesComeOutWithTheirRegressionsAndAWarning() {
-        Posterior posterior = assessor.assess(
-                Reference.effortSeries("series_arabian_sea_shrimp.csv").evidence(), 1978, 1);
-        assertThat(posterior.estimates().get("schaefer_msy_t")).isEqualTo(6130.92, offset(5e-3));
-        assertThat(posterior.estimates().get("schaefer_effort_msy")).isEqualTo(27.5886, offset(5e-5));
-        assertThat(posterior.estimates().get("schaefer_a")).isEqualTo(444.454, offset(5e-4));
-        assertThat(posterior.estimates().get("schaefer_b")).isEqualTo(-8.055, offset(5e-4));
-        assertThat(posterior.estimates().get("schaefer_r2")).isEqualTo(0.77, offset(5e-3));
-        assertThat(posterior.estimates().get("fox_msy_t")).isEqualTo(6159.16, offset(5e-3));
-        assertThat(posterior.estimates().get("fox_effort_msy")).isEqualTo(35.7210, offset(5e-5));
-        assertThat(posterior.verdict().reasons())
-                .contains(EffortYieldRegression.WARNING)
-                .anyMatch(s -> s.startsWith("No survey index: catch per unit of effort (boats)"));
-        assertThat(posterior.strength()).isNotEqualTo(EvidenceStrength.STRONG);
-        assertThat(posterior.draws()).isPositive();
-        Posterior java =
-                assessor.assess(Reference.effortSeries("series_java_trawl.csv").evidence(), 1977, 1);
-        assertThat(java.estimates().get("fox_msy_t")).isCloseTo(60.94, withPercentage(1));
+    void effortSeriesComeOutWithTheirRegressions() {
+        var estimates = OlderEstimators.of(
+                Reference.effortSeries("series_arabian_sea_shrimp.csv").evidence(), 1978);
+        assertThat(estimates.get("schaefer_msy_t")).isEqualTo(6130.92, offset(5e-3));
+        assertThat(estimates.get("schaefer_effort_msy")).isEqualTo(27.5886, offset(5e-5));
+        assertThat(estimates.get("schaefer_a")).isEqualTo(444.454, offset(5e-4));
+        assertThat(estimates.get("schaefer_b")).isEqualTo(-8.055, offset(5e-4));
+        assertThat(estimates.get("schaefer_r2")).isEqualTo(0.77, offset(5e-3));
+        assertThat(estimates.get("fox_msy_t")).isEqualTo(6159.16, offset(5e-3));
+        assertThat(estimates.get("fox_effort_msy")).isEqualTo(35.7210, offset(5e-5));
+        var java = OlderEstimators.of(
+                Reference.effortSeries("series_java_trawl.csv").evidence(), 1977);
+        assertThat(java.get("fox_msy_t")).isCloseTo(60.94, withPercentage(1));
     }
 
     @Test
@@ -49,19 +42,20 @@ class FirstAssessorTest {
         for (int year = 1967; year < 1990; year++) {
             both.effort.add(new EffortRecord(year, "boats", 10 + year % 7, null));
         }
-        Posterior posterior = assessor.assess(both.evidence(), 1989, 7);
-        assertThat(posterior.estimates()).containsKey("catchability:longline").doesNotContainKey("catchability:boats");
-        assertThat(posterior.estimates().get("msy_t")).isCloseTo(19.65, withPercentage(2));
+        var estimates = OlderEstimators.of(both.evidence(), 1989);
+        assertThat(estimates)
+                .containsKey("difference_catchability:longline")
+                .doesNotContainKey("difference_catchability:boats");
+        assertThat(estimates.get("difference_msy_t")).isCloseTo(19.65, withPercentage(2));
     }
 
     @Test
     void aStockedOnlyStockHasNoMsy() {
         Reference stocked = Reference.albacore();
         stocked.traits = new Traits("FPP", true, null, null, null, null, null);
-        Posterior posterior = assessor.assess(stocked.evidence(), 1989, 7);
-        assertThat(posterior.draws()).isZero();
-        assertThat(posterior.verdict().settled()).isFalse();
-        assertThat(posterior.verdict().reasons().get(0)).contains("no self-sustaining growth");
+        assertThat(OlderEstimators.of(stocked.evidence(), 1989)).isEmpty();
+        assertThat(OlderEstimators.differenceEquation(stocked.evidence(), 1989, 7))
+                .isEmpty();
     }
 
     @Test
@@ -76,18 +70,15 @@ class FirstAssessorTest {
                 e.events(),
                 List.of(new AreaRecord(1980, 2000)),
                 e.priors());
-        assertThat(assessor.assess(with, 1989, 7).verdict().reasons())
+        assertThat(fit(with, 1989).verdict().reasons())
                 .anyMatch(s -> s.startsWith("The lake's changing area is not followed"));
     }
 
     @Test
-    void tooFewIndexSeasonsFallBackToPriors() {
+    void twoIndexSeasonsAreTooFew() {
         Reference two = Reference.albacore();
         two.surveys.removeIf(s -> s.year() > 1968);
-        Posterior posterior = assessor.assess(two.evidence(), 1989, 7);
-        assertThat(posterior.method()).startsWith("priors");
-        assertThat(posterior.strength()).isEqualTo(EvidenceStrength.THIN);
-        assertThat(posterior.verdict().reasons()).anyMatch(s -> s.contains("speak of 2 seasons"));
+        assertThat(OlderEstimators.of(two.evidence(), 1989)).isEmpty();
     }
 
     @Test
@@ -104,8 +95,8 @@ class FirstAssessorTest {
     @Test
     void aSeriesWhoseCatchesEndedLongAgoIsAssessedToItsEndAndSaysSo() {
         Evidence evidence = Reference.albacore().evidence();
-        Posterior then = assessor.assess(evidence, 1989, 7);
-        Posterior now = assessor.assess(evidence, 2025, 7);
+        Posterior then = fit(evidence, 1989);
+        Posterior now = fit(evidence, 2025);
         assertThat(now.lastYear()).isEqualTo(1989);
         assertThat(now.estimates()).isEqualTo(then.estimates());
         assertThat(now.verdict().reasons())
@@ -116,7 +107,7 @@ class FirstAssessorTest {
 
     @Test
     void aCatchMissingForAFewLastSeasonsIsHeld() {
-        Posterior posterior = assessor.assess(Reference.albacore().evidence(), 1994, 7);
+        Posterior posterior = fit(Reference.albacore().evidence(), 1994);
         assertThat(posterior.lastYear()).isEqualTo(1994);
         assertThat(posterior.verdict().reasons()).anyMatch(s -> s.contains("its removals are held for 5 seasons"));
     }
@@ -140,7 +131,7 @@ class FirstAssessorTest {
             extreme.caught(1770 + t, tonnes)
                     .index("nets", 1770 + t, 0.5, unit * Math.exp(noise * random.nextGaussian()));
         }
-        sound(assessor.assess(extreme.evidence(), 1769 + seasons, 1));
+        sound(extreme.evidence(), 1769 + seasons, 1);
     }
 
     static LongStream seeds() {
@@ -151,7 +142,16 @@ class FirstAssessorTest {
     @ParameterizedTest
     @MethodSource("seeds")
     void anyEvidenceGivesAVerdictAndFiniteNumbers(long seed) {
-        sound(assessor.assess(random(new SplittableRandom(seed)), 2019, seed));
+        sound(random(new SplittableRandom(seed)), 2019, seed);
+    }
+
+    private static Posterior fit(Evidence evidence, int lastClosedYear) {
+        return OlderEstimators.differenceEquation(evidence, lastClosedYear, 7).orElseThrow();
+    }
+
+    private static void sound(Evidence evidence, int lastClosedYear, long seed) {
+        assertThat(OlderEstimators.of(evidence, lastClosedYear).values()).allMatch(Double::isFinite);
+        OlderEstimators.differenceEquation(evidence, lastClosedYear, seed).ifPresent(OlderEstimatorsTest::sound);
     }
 
     private static void sound(Posterior posterior) {
