@@ -131,6 +131,22 @@ class PublishedSeriesTest {
         assertThat(page).doesNotContain("not settled");
     }
 
+    /** The refits' middle 80 % holds the best fit; the same page says the same twice. */
+    @Test
+    void theRefitsStandBesideTheDifferenceEquation() throws Exception {
+        String page = page("series-c/WHF/assessments/1/older-estimators");
+        assertThat(value(page, "Difference equation: MSY, t a year")).isCloseTo(19_650, within(0.02 * 19_650));
+        Matcher range = Pattern.compile(
+                        "MSY, t a year</span></th>\\s*<td[^>]*>[^<]*</td>\\s*<td[^>]*>([0-9,]+)–([0-9,]+)<")
+                .matcher(page);
+        assertThat(range.find()).isTrue();
+        assertThat(Double.parseDouble(range.group(1).replace(",", ""))).isBetween(10_000.0, 19_500.0);
+        assertThat(Double.parseDouble(range.group(2).replace(",", ""))).isBetween(19_700.0, 30_000.0);
+        assertThat(page("series-c/WHF/assessments/1/older-estimators").replaceAll("_csrf[^>]*>", ""))
+                .isEqualTo(page.replaceAll("_csrf[^>]*>", ""));
+        assertThat(page("series-a/CRD/assessments/1/older-estimators")).contains("Effort–yield regressions");
+    }
+
     private String page(String stock) throws Exception {
         return mvc.perform(get("/stocks/" + stock).with(BIOLOGIST))
                 .andExpect(status().isOk())
@@ -141,7 +157,8 @@ class PublishedSeriesTest {
 
     /** The number in the table row with exactly that heading. */
     private static double value(String page, String heading) {
-        Matcher row = Pattern.compile(">" + Pattern.quote(heading) + "</th>\\s*<td[^>]*>\\s*([^<]+?)\\s*</td>")
+        Matcher row = Pattern.compile(
+                        ">" + Pattern.quote(heading) + "(?:</span>)?</th>\\s*<td[^>]*>\\s*([^<]+?)\\s*</td>")
                 .matcher(page);
         assertThat(row.find()).as("a row “" + heading + "”").isTrue();
         return Double.parseDouble(row.group(1).replace(",", "").replace("−", "-"));
