@@ -55,7 +55,7 @@ class AssessmentMaker {
         }
         Evidence evidence = reader.evidence(stockId);
         int lastClosed = seasons.current() - 1;
-        Posterior posterior = assessor.assess(evidence, lastClosed, seed(evidence));
+        Posterior posterior = assessor.assess(evidence, lastClosed, evidence.seed());
         Map<String, Double> estimates = new TreeMap<>(OlderEstimators.of(evidence, lastClosed));
         estimates.putAll(posterior.estimates());
         transaction.executeWithoutResult(status -> {
@@ -67,10 +67,5 @@ class AssessmentMaker {
                     posterior.method() + ", " + (posterior.verdict().settled() ? "settled" : "not settled"));
             events.publishEvent(new AssessmentStored(stockId, id));
         });
-    }
-
-    /** The first 15 hexadecimal digits of the content hash: the same evidence gives the same draws. */
-    static long seed(Evidence evidence) {
-        return Long.parseLong(evidence.contentHash().substring(0, 15), 16);
     }
 }

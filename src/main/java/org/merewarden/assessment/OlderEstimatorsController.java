@@ -59,7 +59,7 @@ class OlderEstimatorsController {
                         .filter(e -> !e.getKey().startsWith("difference_"))
                         .map(e -> new Row(e.getKey(), Figures.digits(e.getValue(), 6), ""))
                         .toList();
-        return OlderEstimators.differenceEquation(evidence, view.lastYear(), AssessmentMaker.seed(evidence))
+        return OlderEstimators.differenceEquation(evidence, view.lastYear(), evidence.seed())
                 .map(fit -> new Detail(
                         stock.title(),
                         stock.path(),

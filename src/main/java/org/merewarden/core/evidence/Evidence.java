@@ -84,4 +84,9 @@ public record Evidence(
     public String contentHash() {
         return ContentHash.of(this);
     }
+
+    /** The first 15 hexadecimal digits of the content hash: seeded with it, the same evidence gives the same draws. */
+    public long seed() {
+        return Long.parseLong(contentHash().substring(0, 15), 16);
+    }
 }
