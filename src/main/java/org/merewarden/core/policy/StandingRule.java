@@ -2,7 +2,6 @@ package org.merewarden.core.policy;
 
 import java.util.stream.IntStream;
 import org.jspecify.annotations.Nullable;
-import org.merewarden.core.dynamics.CatchBalance;
 import org.merewarden.core.dynamics.SurplusProduction;
 import org.merewarden.core.inference.EvidenceStrength;
 import org.merewarden.core.inference.Posterior;
@@ -62,12 +61,11 @@ public final class StandingRule {
         if (draws == 0) {
             throw new IllegalArgumentException("needs draws >= 1, got 0");
         }
-        double collapse =
-                share(draws, i -> collapseCourse(law(posterior, i), posterior.presentBiomass(i), removalsTonnes));
-        double below = share(draws, i -> posterior.presentBiomass(i) < policy.limitFraction() * posterior.capacity(i));
-        double[] margin = IntStream.range(0, draws)
-                .mapToDouble(i -> 1 - removalsTonnes / posterior.msyTonnes()[i])
-                .toArray();
+        HeldRemovals held = new HeldRemovals(posterior, removalsTonnes);
+        double collapse = held.collapseProbability();
+        double below = HeldRemovals.share(
+                draws, i -> posterior.presentBiomass(i) < policy.limitFraction() * posterior.capacity(i));
+        double[] margin = held.margin();
         double p = Math.max(collapse, below);
         Standing standing = standing(p, posterior.strength());
         return new Result(
@@ -79,9 +77,9 @@ public final class StandingRule {
                 Quantiles.of(margin, 0.1),
                 Quantiles.of(margin, 0.5),
                 Quantiles.of(margin, 0.9),
-                share(draws, i -> margin[i] < 0),
-                removalsTonnes == 0 ? null : median(posterior, (law, i) -> tipping(law, removalsTonnes)),
-                median(posterior, (law, i) -> returnTime(law, removalsTonnes)));
+                HeldRemovals.share(draws, i -> margin[i] < 0),
+                median(held.tippingBiomass()),
+                median(held.returnTime()));
     }
 
     Standing standing(double p, EvidenceStrength strength) {
@@ -94,11 +92,6 @@ public final class StandingRule {
         return p >= policy.watchFrom() || strength == EvidenceStrength.NONE ? Standing.WATCH : Standing.SECURE;
     }
 
-    /** Whether constant removals H from biomass B run the stock down to nothing. */
-    static boolean collapseCourse(SurplusProduction law, double biomass, double removals) {
-        return removals > law.msy() || (biomass < law.bmsy() && law.rate(biomass) < removals);
-    }
-
     /** Whether the medians of the draws, taken as one stock, are on no collapse course and above B lim. */
     private boolean middleIsSound(Posterior posterior, double removals) {
         var law = SurplusProduction.fromReferencePoints(
@@ -109,37 +102,13 @@ public final class StandingRule {
                 .mapToDouble(i -> posterior.presentBiomass(i) / posterior.capacity(i))
                 .toArray();
         double biomass = Quantiles.of(relative, 0.5) * law.capacityTonnes();
-        return !collapseCourse(law, biomass, removals) && biomass >= policy.limitFraction() * law.capacityTonnes();
+        return !HeldRemovals.collapseCourse(law, biomass, removals)
+                && biomass >= policy.limitFraction() * law.capacityTonnes();
     }
 
-    private interface OfDraw {
-        double value(SurplusProduction law, int draw);
-    }
-
-    private static @Nullable Double median(Posterior posterior, OfDraw ofDraw) {
-        double[] values = IntStream.range(0, posterior.draws())
-                .mapToDouble(i -> ofDraw.value(law(posterior, i), i))
-                .filter(Double::isFinite)
-                .toArray();
-        return values.length * 2 < posterior.draws() || values.length == 0 ? null : (Double) Quantiles.of(values, 0.5);
-    }
-
-    private static double tipping(SurplusProduction law, double removals) {
-        return removals < law.msy() ? new CatchBalance(law, removals).tippingBiomass() : Double.NaN;
-    }
-
-    private static double returnTime(SurplusProduction law, double removals) {
-        return removals < law.msy() ? -1 / law.slope(new CatchBalance(law, removals).stableBiomass()) : Double.NaN;
-    }
-
-    private static SurplusProduction law(Posterior posterior, int draw) {
-        return SurplusProduction.fromReferencePoints(
-                posterior.msyTonnes()[draw],
-                posterior.fmsyPerYear()[draw],
-                posterior.shape()[draw]);
-    }
-
-    private static double share(int draws, java.util.function.IntPredicate holds) {
-        return (double) IntStream.range(0, draws).filter(holds).count() / draws;
+    /** Over the draws that have the quantity; null where fewer than half do. */
+    private static @Nullable Double median(double[] ofDraws) {
+        double[] values = HeldRemovals.known(ofDraws);
+        return values.length == 0 ? null : (Double) Quantiles.of(values, 0.5);
     }
 }

@@ -107,6 +107,6 @@ class StandingRuleTest {
         // the closed-form flow under constant removals is another piece of code: it ends at zero or it does not
         var law = new SurplusProduction(0.4, 1000, 1);
         boolean ends = Double.isFinite(new ConstantRemovals(law, removals).extinctionTime(biomass));
-        assertThat(StandingRule.collapseCourse(law, biomass, removals)).isEqualTo(ends);
+        assertThat(HeldRemovals.collapseCourse(law, biomass, removals)).isEqualTo(ends);
     }
 }
