@@ -6,8 +6,6 @@ import java.util.Map;
 import java.util.Objects;
 import java.util.Optional;
 import java.util.stream.Collectors;
-import java.util.stream.Stream;
-import org.jspecify.annotations.Nullable;
 import org.merewarden.intake.Batch;
 import org.merewarden.intake.Fate;
 import org.merewarden.intake.Problem;
@@ -26,13 +24,11 @@ import org.merewarden.waterbody.WaterBodyView;
 /** A table of evidence in the importer, and behind the forms: both obey the same rules. */
 class RecordHandler implements TableHandler {
     private final RecordTable table;
-    private final RecordRules rules;
     private final RecordStore store;
     private final Register register;
 
-    RecordHandler(RecordTable table, RecordRules rules, RecordStore store, Register register) {
+    RecordHandler(RecordTable table, RecordStore store, Register register) {
         this.table = table;
-        this.rules = rules;
         this.store = store;
         this.register = register;
     }
@@ -58,9 +54,7 @@ class RecordHandler implements TableHandler {
     }
 
     private Fate fate(TableRow row, StockReferences references, Map<String, Owned> inForce, Batch batch) {
-        Problem[] problems = Stream.concat(
-                        Stream.ofNullable(referenceProblem(row, references, batch)), rules.problems(row))
-                .toArray(Problem[]::new);
+        Problem[] problems = table.problems(row, references, batch).toArray(Problem[]::new);
         if (problems.length > 0) {
             return Fate.refused(problems);
         }
@@ -104,19 +98,10 @@ class RecordHandler implements TableHandler {
                         .collect(Collectors.toSet()));
     }
 
-    private boolean ofStock() {
-        return table.ownerColumn().equals("stock_id");
-    }
-
     private Optional<Long> owner(TableRow row, StockReferences references) {
-        return ofStock()
+        return table.ofStock()
                 ? references.stock(row).map(StockView::id)
                 : references.lake(row).map(WaterBodyView::id);
-    }
-
-    private @Nullable Problem referenceProblem(TableRow row, StockReferences references, Batch batch) {
-        boolean oneStock = ofStock() || !row.textOrEmpty("species").isEmpty();
-        return oneStock ? references.stockProblem(row, batch) : references.lakeProblem(row, batch);
     }
 
     /** The rows' rule problems and changes, as the forms ask for them. */

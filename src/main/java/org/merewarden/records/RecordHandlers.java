@@ -17,31 +17,31 @@ class RecordHandlers {
 
     @Bean
     RecordHandler catchHandler() {
-        return new RecordHandler(RecordTables.CATCHES, RecordRules.NONE, store, register);
+        return new RecordHandler(RecordTables.CATCHES, store, register);
     }
 
     @Bean
     RecordHandler effortHandler() {
-        return new RecordHandler(RecordTables.EFFORT, RecordRules.NONE, store, register);
+        return new RecordHandler(RecordTables.EFFORT, store, register);
     }
 
     @Bean
     RecordHandler surveyHandler() {
-        return new RecordHandler(RecordTables.SURVEYS, RecordRules::survey, store, register);
+        return new RecordHandler(RecordTables.SURVEYS, store, register);
     }
 
     @Bean
     RecordHandler eventHandler() {
-        return new RecordHandler(RecordTables.EVENTS, RecordRules::event, store, register);
+        return new RecordHandler(RecordTables.EVENTS, store, register);
     }
 
     @Bean
     RecordHandler areaHandler() {
-        return new RecordHandler(RecordTables.AREAS, RecordRules.NONE, store, register);
+        return new RecordHandler(RecordTables.AREAS, store, register);
     }
 
     @Bean
     RecordHandler priorHandler() {
-        return new RecordHandler(RecordTables.PRIORS, RecordRules.NONE, store, register);
+        return new RecordHandler(RecordTables.PRIORS, store, register);
     }
 }

@@ -3,15 +3,19 @@ package org.merewarden.records;
 import java.sql.ResultSet;
 import java.sql.SQLException;
 import java.time.LocalDate;
+import java.util.HashMap;
 import java.util.LinkedHashMap;
 import java.util.List;
 import java.util.Map;
 import java.util.stream.Collectors;
 import java.util.stream.Stream;
 import org.jspecify.annotations.Nullable;
+import org.merewarden.intake.Batch;
 import org.merewarden.intake.Column;
+import org.merewarden.intake.Problem;
 import org.merewarden.intake.TableDefinition;
 import org.merewarden.intake.TableRow;
+import org.merewarden.waterbody.StockReferences;
 
 /**
  * How a table of the import formats is kept: which stored columns hold its cells, and whose rows they are. Columns that
@@ -21,6 +25,7 @@ import org.merewarden.intake.TableRow;
  * @param sqlName stored table
  * @param ownerColumn stock_id or water_body_id
  * @param reference columns of the format that name the owner
+ * @param rules between the cells of one row
  */
 record RecordTable(
         String name,
@@ -29,7 +34,8 @@ record RecordTable(
         String sqlName,
         String ownerColumn,
         List<Column> reference,
-        List<Field> fields) {
+        List<Field> fields,
+        RecordRules rules) {
 
     /** @param sqlName stored column; its kind of value follows from the import column */
     record Field(Column column, String sqlName) {}
@@ -73,6 +79,28 @@ record RecordTable(
                     row.getObject(field.sqlName(), type(field.column().kind())));
         }
         return cells;
+    }
+
+    /** The stored row as the importer would have read it. */
+    TableRow row(ResultSet row) throws SQLException {
+        Map<String, Object> known = new HashMap<>();
+        cells(row).forEach((column, value) -> {
+            if (value != null) {
+                known.put(column, value);
+            }
+        });
+        return new TableRow(0, known);
+    }
+
+    boolean ofStock() {
+        return ownerColumn.equals("stock_id");
+    }
+
+    /** What speaks against the row: its owner is unknown, or a rule is broken. */
+    Stream<Problem> problems(TableRow row, StockReferences references, Batch batch) {
+        boolean oneStock = ofStock() || !row.textOrEmpty("species").isEmpty();
+        Problem unknown = oneStock ? references.stockProblem(row, batch) : references.lakeProblem(row, batch);
+        return Stream.concat(Stream.ofNullable(unknown), rules.problems(row));
     }
 
     private static Class<?> type(Column.Kind kind) {

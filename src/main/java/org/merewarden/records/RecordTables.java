@@ -46,7 +46,8 @@ final class RecordTables {
                     field(CV),
                     field(number("reported_fraction", "part of the true catch that was reported, 0 to 1; empty: all")
                             .between(0.001, 1)),
-                    field(SOURCE)));
+                    field(SOURCE)),
+            RecordRules.NONE);
 
     static final RecordTable EFFORT = new RecordTable(
             "effort",
@@ -62,7 +63,8 @@ final class RecordTables {
                             .mandatory()
                             .between(0, 1e12)),
                     field(text("unit", "unit of the effort").between(0, 60)),
-                    field(SOURCE)));
+                    field(SOURCE)),
+            RecordRules.NONE);
 
     static final RecordTable SURVEYS = new RecordTable(
             "surveys",
@@ -88,7 +90,8 @@ final class RecordTables {
                     field(number("nets", "units of effort behind the value").between(0.001, 1e7)),
                     field(text("design", "gear and mesh set").between(0, 200)),
                     field(text("unit", "unit of the value").between(0, 60)),
-                    field(SOURCE)));
+                    field(SOURCE)),
+            RecordRules::survey);
 
     static final RecordTable EVENTS = new RecordTable(
             "events",
@@ -126,7 +129,8 @@ final class RecordTables {
                             .between(0, 50)),
                     field(number("recruit_weight_kg", "stocking: mean weight at recruitment in kg")
                             .between(0.00001, 1000)),
-                    field(SOURCE)));
+                    field(SOURCE)),
+            RecordRules::event);
 
     static final RecordTable AREAS = new RecordTable(
             "areas",
@@ -137,7 +141,8 @@ final class RecordTables {
             List.of(WATER.asKey()),
             List.of(
                     field(YEAR.asKey(), "season_year"),
-                    field(number("area_ha", "surface in hectares").mandatory().between(0.001, 1e8))));
+                    field(number("area_ha", "surface in hectares").mandatory().between(0.001, 1e8))),
+            RecordRules.NONE);
 
     static final RecordTable PRIORS = new RecordTable(
             "priors",
@@ -163,13 +168,18 @@ final class RecordTables {
                             .between(0, 60)
                             .asKey()
                             .orElse("")),
-                    field(number("median", "median in the parameter's unit")
+                    field(number(
+                                    "median",
+                                    "median in the parameter's unit; a shape fixed under 0.001 is Gompertz growth")
                             .mandatory()
                             .between(1e-9, 1e9)),
                     field(number("log_sd", "standard deviation of the logarithm; 0 fixes the parameter")
                             .mandatory()
                             .between(0, 10)),
-                    field(text("reason", "why the office knows this").between(0, 2000))));
+                    field(text("reason", "why the office knows this").between(0, 2000))),
+            RecordRules.NONE);
+
+    static final List<RecordTable> ALL = List.of(CATCHES, EFFORT, SURVEYS, EVENTS, AREAS, PRIORS);
 
     private RecordTables() {}
 }

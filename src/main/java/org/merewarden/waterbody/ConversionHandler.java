@@ -36,10 +36,12 @@ class ConversionHandler extends RegisterHandler<WeightConversion> {
                     number("factor", "live weight / landed weight").mandatory().between(1, 10)));
 
     private final WeightConversions conversions;
+    private final Register register;
 
     ConversionHandler(WeightConversions conversions, Register register, ActivityLog log) {
         super(conversions, register, log);
         this.conversions = conversions;
+        this.register = register;
     }
 
     @Override
@@ -69,7 +71,8 @@ class ConversionHandler extends RegisterHandler<WeightConversion> {
 
     @Override
     Stream<@Nullable Problem> problems(TableRow row, StockReferences references, Batch batch) {
-        return Stream.of(speciesProblem(row), population(row), whole(row));
+        return Stream.of(
+                RegisterRules.species(row, code -> register.species(code).isPresent()), population(row), whole(row));
     }
 
     private static @Nullable Problem population(TableRow row) {

@@ -105,15 +105,4 @@ abstract class RegisterHandler<E> implements TableHandler {
                 Cells.describe(before),
                 Cells.describe(cells(row)));
     }
-
-    /** Why the species is unknown, or null. */
-    final @Nullable Problem speciesProblem(TableRow row) {
-        String code = row.textOrEmpty("species");
-        return register.species(code).isPresent()
-                ? null
-                : new Problem(
-                        "species",
-                        code,
-                        "no species has the code “" + code + "”; use a three-letter code of the FAO list, in capitals");
-    }
 }

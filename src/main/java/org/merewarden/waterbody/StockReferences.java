@@ -16,6 +16,9 @@ import org.merewarden.intake.TableRow;
  * the register as it stood when this was made (two statements), together with what the same import brings.
  */
 public final class StockReferences {
+    /** Nothing is registered: only what the same import brings. */
+    public static final StockReferences NONE = new StockReferences(Map.of(), Map.of());
+
     private final Map<String, WaterBodyView> lakes;
     private final Map<String, StockView> stocks;
 

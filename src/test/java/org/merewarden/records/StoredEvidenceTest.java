@@ -104,7 +104,7 @@ class StoredEvidenceTest {
         // 40,000 fish × 0.05 × 0.3 kg = 600 kg
         assertThat(stocking.recruitedTonnes()).isCloseTo(0.6, within(1e-12));
         assertThat(stocking.recruitYear()).isEqualTo(2020);
-        assertThat(StoredEvidence.recruitedTonnes(40000.0, null, 0.3)).isNull();
+        assertThat(EvidenceMapping.recruitedTonnes(40000.0, null, 0.3)).isNull();
     }
 
     @Test

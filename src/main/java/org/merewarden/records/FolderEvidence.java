@@ -1,0 +1,148 @@
+package org.merewarden.records;
+
+import java.nio.file.Files;
+import java.nio.file.Path;
+import java.util.ArrayList;
+import java.util.Comparator;
+import java.util.HashMap;
+import java.util.List;
+import java.util.Map;
+import java.util.OptionalInt;
+import java.util.function.Predicate;
+import org.merewarden.core.evidence.Evidence;
+import org.merewarden.intake.Batch;
+import org.merewarden.intake.CheckedTable;
+import org.merewarden.intake.FolderTables;
+import org.merewarden.intake.RefusedImport;
+import org.merewarden.intake.TableRow;
+import org.merewarden.waterbody.RegisterTables;
+import org.merewarden.waterbody.StockReferences;
+
+/**
+ * The tables of a folder as evidence, without a store: what importing the folder into an empty store would give.
+ *
+ * <p>Only {@code stocks.csv} is needed. Without {@code water-bodies.csv} the water bodies are those that the stocks name:
+ * lakes of which nothing is known but the area, taken as the latest season's in {@code areas.csv}, else as {@value
+ * #UNKNOWN_AREA_HECTARES} ha. That area counts only for a stock with neither a catch nor a stated {@code msy_t}, whose
+ * prior of MSY rests on it.
+ */
+public final class FolderEvidence {
+    static final double UNKNOWN_AREA_HECTARES = 1000;
+    private static final String WATER_BODIES = "water-bodies";
+    private static final String STOCKS = "stocks";
+
+    private final FolderTables.Content content;
+    private final Map<String, TableRow> waterBodies = new HashMap<>();
+
+    private FolderEvidence(FolderTables.Content content) {
+        this.content = content;
+        content.of(WATER_BODIES).forEach(row -> waterBodies.put(row.need("code"), row));
+    }
+
+    /** @param speciesKey species code, or code.population */
+    public record StockEvidence(String waterBody, String speciesKey, Evidence evidence) {}
+
+    /** @throws RefusedImport with every reason: file, line, column, value and rule */
+    public static FolderEvidence read(Path folder) {
+        if (Files.isDirectory(folder) && !Files.exists(folder.resolve(STOCKS + ".csv"))) {
+            throw new RefusedImport(List.of(
+                    folder.resolve(STOCKS + ".csv") + ": there is no such file; it names the stocks to assess"));
+        }
+        boolean registered = Files.exists(folder.resolve(WATER_BODIES + ".csv"));
+        List<CheckedTable> tables = new ArrayList<>();
+        RegisterTables.withoutStore().forEach(t -> tables.add(registered ? t : withoutRegister(t)));
+        for (RecordTable table : RecordTables.ALL) {
+            CheckedTable checked = new CheckedTable(
+                    table.definition(), (row, batch) -> table.problems(row, StockReferences.NONE, batch));
+            tables.add(registered ? checked : withoutRegister(checked));
+        }
+        FolderTables.Content content = FolderTables.read(folder, tables);
+        if (content.of(STOCKS).isEmpty()) {
+            throw new RefusedImport(List.of(folder.resolve(STOCKS + ".csv")
+                    + ": there is no row below the header; each names a stock to assess"));
+        }
+        return new FolderEvidence(content);
+    }
+
+    private static CheckedTable withoutRegister(CheckedTable table) {
+        return new CheckedTable(
+                table.definition(), (row, batch) -> table.rules().problems(row, new NamedByStocks(batch)));
+    }
+
+    /** Any water body that a stock names is there; while the stocks themselves are examined, any is. */
+    private record NamedByStocks(Batch batch) implements Batch {
+        @Override
+        public boolean brings(String table, String... keys) {
+            if (!table.equals(WATER_BODIES)) {
+                return batch.brings(table, keys);
+            }
+            List<TableRow> stocks = batch.rows(STOCKS);
+            return stocks.isEmpty()
+                    || stocks.stream().anyMatch(s -> s.need("water_body").equals(keys[0]));
+        }
+    }
+
+    /** What was passed over. */
+    public List<String> remarks() {
+        return content.remarks();
+    }
+
+    /** The last season with a catch, an effort or a survey of any stock; empty where there is none. */
+    public OptionalInt lastSeason() {
+        return List.of(RecordTables.CATCHES, RecordTables.EFFORT, RecordTables.SURVEYS).stream()
+                .flatMap(table -> content.of(table.name()).stream())
+                .mapToInt(EvidenceMapping::year)
+                .max();
+    }
+
+    /** Every stock, by water body, species and population. */
+    public List<StockEvidence> stocks() {
+        return content.of(STOCKS).stream()
+                .sorted(Comparator.comparing((TableRow row) -> row.need("water_body"))
+                        .thenComparing(FolderEvidence::speciesKey))
+                .map(row -> new StockEvidence(row.need("water_body"), speciesKey(row), evidence(row)))
+                .toList();
+    }
+
+    private static String speciesKey(TableRow row) {
+        String population = row.textOrEmpty("population");
+        return population.isEmpty() ? row.need("species") : row.need("species") + "." + population;
+    }
+
+    private Evidence evidence(TableRow stock) {
+        String water = stock.need("water_body");
+        Map<String, Object> subject = new HashMap<>(waterBody(water).values());
+        subject.putAll(stock.values());
+        int stocksInLake =
+                rows(STOCKS, row -> row.need("water_body").equals(water)).size();
+        return EvidenceMapping.evidence(
+                new TableRow(stock.line(), subject),
+                stocksInLake,
+                table -> rows(table.name(), row -> about(row, stock)));
+    }
+
+    /** Whether the row is about the stock, its water body, or all stocks of that. */
+    private static boolean about(TableRow row, TableRow stock) {
+        String species = row.textOrEmpty("species");
+        return row.need("water_body").equals(stock.need("water_body"))
+                && (species.isEmpty()
+                        || species.equals(stock.need("species"))
+                                && row.textOrEmpty("population").equals(stock.textOrEmpty("population")));
+    }
+
+    private List<TableRow> rows(String table, Predicate<TableRow> wanted) {
+        return content.of(table).stream().filter(wanted).toList();
+    }
+
+    private TableRow waterBody(String code) {
+        TableRow registered = waterBodies.get(code);
+        return registered != null ? registered : new TableRow(0, Map.of("kind", "lake", "area_ha", lastArea(code)));
+    }
+
+    private double lastArea(String waterBody) {
+        return rows("areas", row -> row.need("water_body").equals(waterBody)).stream()
+                .max(Comparator.comparing(EvidenceMapping::year))
+                .map(row -> row.number("area_ha"))
+                .orElse(UNKNOWN_AREA_HECTARES);
+    }
+}
