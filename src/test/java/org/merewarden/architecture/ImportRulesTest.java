@@ -42,6 +42,7 @@ class ImportRulesTest {
             Map.entry("season", BASE + " waterbody records assessment advice " + CORE),
             Map.entry("portfolio", BASE + " waterbody records assessment advice season " + CORE),
             Map.entry("sharing", BASE + " waterbody records assessment advice season " + CORE),
+            Map.entry("command", "intake records " + CORE),
             Map.entry("core.dynamics", ""),
             Map.entry("core.evidence", ""),
             Map.entry("core.prior", "core.dynamics core.evidence"),

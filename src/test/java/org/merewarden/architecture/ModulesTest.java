@@ -15,7 +15,11 @@ class ModulesTest {
     void featuresKeepToEachOthersPublicTypes() {
         var modules = ApplicationModules.of(Merewarden.class);
         assertThat(modules.stream().map(m -> m.getBasePackage().getName()))
-                .contains("org.merewarden.core.dynamics", "org.merewarden.records", "org.merewarden.sharing");
+                .contains(
+                        "org.merewarden.core.dynamics",
+                        "org.merewarden.records",
+                        "org.merewarden.sharing",
+                        "org.merewarden.command");
         modules.verify();
     }
 
