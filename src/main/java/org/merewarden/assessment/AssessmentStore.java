@@ -11,12 +11,12 @@ import java.util.List;
 import java.util.Map;
 import java.util.Objects;
 import java.util.Optional;
+import java.util.OptionalDouble;
 import org.jspecify.annotations.Nullable;
 import org.merewarden.core.evidence.Evidence;
 import org.merewarden.core.inference.Diagnostics;
 import org.merewarden.core.inference.EvidenceStrength;
 import org.merewarden.core.inference.Posterior;
-import org.merewarden.core.inference.Quantiles;
 import org.merewarden.core.inference.Verdict;
 import org.merewarden.web.NotFound;
 import org.springframework.jdbc.core.simple.JdbcClient;
@@ -116,13 +116,9 @@ class AssessmentStore implements Assessments {
 
     /** Estimated where the method does so, else as recorded. */
     private static @Nullable Double lastRemovals(Evidence evidence, Posterior posterior) {
-        if (posterior.draws() > 0 && posterior.removalsTonnes()[0].length > 0) {
-            int last = posterior.seasons() - 1;
-            return Quantiles.of(
-                    Arrays.stream(posterior.removalsTonnes())
-                            .mapToDouble(season -> season[last])
-                            .toArray(),
-                    0.5);
+        OptionalDouble estimated = posterior.lastRemovals();
+        if (estimated.isPresent()) {
+            return estimated.getAsDouble();
         }
         var removals = evidence.removals(posterior.lastYear());
         return removals.isPresent() ? (Double) removals.getAsDouble() : null;

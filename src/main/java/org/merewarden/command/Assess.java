@@ -81,7 +81,7 @@ final class Assess {
         StockResult result = new StockResult(
                 stock.waterBody(),
                 stock.speciesKey(),
-                Quantities.of(evidence, posterior),
+                Quantities.of(posterior),
                 posterior.draws() == 0
                         ? null
                         : posterior.estimates().getOrDefault("effective_draws", (double) posterior.draws()),

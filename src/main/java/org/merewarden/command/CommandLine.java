@@ -36,12 +36,12 @@ public final class CommandLine {
               --threads  stocks assessed at the same time; default: as many as there are processors. It changes no result
               --seed     another sample of draws; default 0, with which the server draws
               --growth   shape of growth where priors.csv states none: logistic (default, n = 1), gompertz (n -> 0) or fitted
-                         (n estimated, ln n ~ N(0, 0.4)). A stock without any catch, effort or survey keeps n = 1
+                         (n estimated, ln n ~ N(0, 0.4))
 
             RESULTS.csv: species is the code, or code.population. ess is the number of independent draws that the stock's weighted
             sample is worth, the same in all its rows. collapse_course (a probability) and log_evidence are single numbers, in the
-            column mean. fold_margin, tipping_biomass_t and collapse_course hold the last season's recorded removals, or where none
-            is recorded the median of the estimated ones, for ever. A stock that could not be assessed has rows without numbers.
+            column mean. fold_margin, tipping_biomass_t and collapse_course hold the median of the last season's estimated removals
+            for ever (0 where none are estimated). A stock that could not be assessed has rows without numbers.
 
             Exit status: 0 all stocks settled, 3 some not, 2 the input is unusable (nothing written), 1 the program failed.
             The figures are model estimates, to be reviewed by a qualified fisheries scientist.

@@ -4,14 +4,11 @@ import java.util.ArrayList;
 import java.util.List;
 import java.util.Map;
 import java.util.Objects;
-import java.util.OptionalDouble;
 import java.util.TreeMap;
 import java.util.function.IntToDoubleFunction;
 import java.util.stream.IntStream;
 import java.util.stream.Stream;
-import org.merewarden.core.evidence.Evidence;
 import org.merewarden.core.inference.Posterior;
-import org.merewarden.core.inference.Quantiles;
 import org.merewarden.core.policy.HeldRemovals;
 
 /**
@@ -26,7 +23,7 @@ import org.merewarden.core.policy.HeldRemovals;
  *   log_evidence
  * </pre>
  *
- * <p>The last season's removals are the recorded ones (catch / reported fraction), else the median of the estimated ones.
+ * <p>The last season's removals are the median of the estimated ones; without any, zero.
  * The tipping biomass is spread over the draws that have one, and empty where fewer than half do. collapse_course and
  * log_evidence are single numbers. Without draws the headline quantities stand without numbers.
  */
@@ -38,17 +35,15 @@ final class Quantities {
     private static final String TIPPING_BIOMASS = "tipping_biomass_t";
     private static final String LOG_EVIDENCE = "log_evidence";
 
-    private final Evidence evidence;
     private final Posterior posterior;
     private final List<Line> lines = new ArrayList<>();
 
-    private Quantities(Evidence evidence, Posterior posterior) {
-        this.evidence = evidence;
+    private Quantities(Posterior posterior) {
         this.posterior = posterior;
     }
 
-    static List<Line> of(Evidence evidence, Posterior posterior) {
-        Quantities quantities = new Quantities(evidence, posterior);
+    static List<Line> of(Posterior posterior) {
+        Quantities quantities = new Quantities(posterior);
         if (posterior.draws() == 0) {
             quantities.headlines();
         } else {
@@ -101,24 +96,11 @@ final class Quantities {
 
     private void heldRemovals() {
         int last = posterior.lastYear();
-        OptionalDouble removals = lastRemovals();
-        if (removals.isPresent()) {
-            HeldRemovals held = new HeldRemovals(posterior, removals.getAsDouble());
-            lines.add(Line.of(FOLD_MARGIN, last, held.margin()));
-            lines.add(Line.of(TIPPING_BIOMASS, last, HeldRemovals.known(held.tippingBiomass())));
-            lines.add(Line.single(COLLAPSE_COURSE, last, held.collapseProbability()));
-        } else {
-            List.of(FOLD_MARGIN, TIPPING_BIOMASS, COLLAPSE_COURSE).forEach(q -> lines.add(Line.unknown(q, last)));
-        }
+        HeldRemovals held = new HeldRemovals(posterior, posterior.lastRemovals().orElse(0));
+        lines.add(Line.of(FOLD_MARGIN, last, held.margin()));
+        lines.add(Line.of(TIPPING_BIOMASS, last, HeldRemovals.known(held.tippingBiomass())));
+        lines.add(Line.single(COLLAPSE_COURSE, last, held.collapseProbability()));
         lines.add(Line.single(LOG_EVIDENCE, null, posterior.estimates().get(LOG_EVIDENCE)));
-    }
-
-    private OptionalDouble lastRemovals() {
-        OptionalDouble recorded = evidence.removals(posterior.lastYear());
-        int estimated = posterior.removalsTonnes()[0].length;
-        return recorded.isPresent() || estimated == 0
-                ? recorded
-                : OptionalDouble.of(Quantiles.of(byDraw(draw -> posterior.removalsTonnes()[draw][estimated - 1]), 0.5));
     }
 
     private interface OfDrawAndSeason {

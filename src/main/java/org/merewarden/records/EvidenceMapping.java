@@ -36,11 +36,16 @@ final class EvidenceMapping {
     /**
      * @param subject the stock's cells together with its water body's
      * @param stocksInLake number of stocks of the water body, at least 1
+     * @param shareOfRecordedCatch {@link RecordedShare}
      * @param rows the rows of each table that are about the stock
      */
-    static Evidence evidence(TableRow subject, int stocksInLake, Function<RecordTable, List<TableRow>> rows) {
+    static Evidence evidence(
+            TableRow subject,
+            int stocksInLake,
+            @Nullable Double shareOfRecordedCatch,
+            Function<RecordTable, List<TableRow>> rows) {
         return new Evidence(
-                habitat(subject, stocksInLake),
+                habitat(subject, stocksInLake, shareOfRecordedCatch),
                 traits(subject),
                 mapped(rows.apply(RecordTables.CATCHES), EvidenceMapping::catchRecord),
                 mapped(rows.apply(RecordTables.EFFORT), EvidenceMapping::effort),
@@ -54,7 +59,7 @@ final class EvidenceMapping {
         return rows.stream().map(record).toList();
     }
 
-    private static Habitat habitat(TableRow water, int stocksInLake) {
+    private static Habitat habitat(TableRow water, int stocksInLake, @Nullable Double shareOfRecordedCatch) {
         return new Habitat(
                 water.need("kind"),
                 number(water, "area_ha"),
@@ -62,7 +67,8 @@ final class EvidenceMapping {
                 water.number("dissolved_solids_mg_l"),
                 water.number("conductivity_us_cm"),
                 water.number("mean_air_temperature_c"),
-                stocksInLake);
+                stocksInLake,
+                shareOfRecordedCatch);
     }
 
     private static Traits traits(TableRow stock) {
@@ -76,7 +82,7 @@ final class EvidenceMapping {
                 stock.number("share_of_lake_yield"));
     }
 
-    private static CatchRecord catchRecord(TableRow row) {
+    static CatchRecord catchRecord(TableRow row) {
         return new CatchRecord(
                 year(row),
                 row.need("sector"),

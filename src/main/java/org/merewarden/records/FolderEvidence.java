@@ -118,7 +118,17 @@ public final class FolderEvidence {
         return EvidenceMapping.evidence(
                 new TableRow(stock.line(), subject),
                 stocksInLake,
+                RecordedShare.of(speciesKey(stock), stocksInLake, taken(water)),
                 table -> rows(table.name(), row -> about(row, stock)));
+    }
+
+    private List<RecordedShare.Taken> taken(String water) {
+        return rows(RecordTables.CATCHES.name(), row -> row.need("water_body").equals(water)).stream()
+                .map(row -> new RecordedShare.Taken(
+                        speciesKey(row),
+                        EvidenceMapping.year(row),
+                        EvidenceMapping.catchRecord(row).removalsTonnes()))
+                .toList();
     }
 
     /** Whether the row is about the stock, its water body, or all stocks of that. */

@@ -5,6 +5,7 @@ import java.sql.SQLException;
 import java.util.HashMap;
 import java.util.List;
 import java.util.Map;
+import org.jspecify.annotations.Nullable;
 import org.merewarden.core.evidence.Evidence;
 import org.merewarden.intake.TableRow;
 import org.merewarden.web.NotFound;
@@ -12,7 +13,7 @@ import org.springframework.jdbc.core.simple.JdbcClient;
 import org.springframework.stereotype.Service;
 import org.springframework.transaction.annotation.Transactional;
 
-/** Reads the rows in force of one stock as the core's evidence, in seven statements. */
+/** Reads the rows in force of one stock as the core's evidence, in eight statements. */
 @Service
 class StoredEvidence implements EvidenceReader {
     private record Subject(long stockId, long waterBodyId, String population, int stocksInLake, TableRow cells) {}
@@ -27,7 +28,20 @@ class StoredEvidence implements EvidenceReader {
     @Transactional(readOnly = true)
     public Evidence evidence(long stockId) {
         Subject subject = subject(stockId);
-        return EvidenceMapping.evidence(subject.cells(), subject.stocksInLake(), table -> rows(table, subject));
+        return EvidenceMapping.evidence(
+                subject.cells(), subject.stocksInLake(), recordedShare(subject), table -> rows(table, subject));
+    }
+
+    private @Nullable Double recordedShare(Subject subject) {
+        List<RecordedShare.Taken> taken = jdbc.sql("""
+                        select c.stock_id, c.season_year, c.catch_t / coalesce(c.reported_fraction, 1) as removals_t
+                        from catch_record c join stock s on s.id = c.stock_id
+                        where s.water_body_id = :water and c.current_mark = true and c.provisional = false""")
+                .param("water", subject.waterBodyId())
+                .query((row, number) -> new RecordedShare.Taken(
+                        row.getString("stock_id"), row.getInt("season_year"), row.getDouble("removals_t")))
+                .list();
+        return RecordedShare.of(Long.toString(subject.stockId()), subject.stocksInLake(), taken);
     }
 
     private Subject subject(long stockId) {

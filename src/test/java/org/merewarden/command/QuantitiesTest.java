@@ -6,10 +6,6 @@ import static org.assertj.core.api.Assertions.within;
 import java.util.List;
 import java.util.Map;
 import org.junit.jupiter.api.Test;
-import org.merewarden.core.evidence.CatchRecord;
-import org.merewarden.core.evidence.Evidence;
-import org.merewarden.core.evidence.Habitat;
-import org.merewarden.core.evidence.Traits;
 import org.merewarden.core.inference.Diagnostics;
 import org.merewarden.core.inference.EvidenceStrength;
 import org.merewarden.core.inference.Posterior;
@@ -40,18 +36,6 @@ class QuantitiesTest {
                 Diagnostics.NONE);
     }
 
-    private static Evidence evidence(CatchRecord... catches) {
-        return new Evidence(
-                new Habitat("lake", 100, null, null, null, null, 1),
-                new Traits("FPE", false, null, null, null, null, null),
-                List.of(catches),
-                List.of(),
-                List.of(),
-                List.of(),
-                List.of(),
-                List.of());
-    }
-
     private static Line line(List<Line> lines, String quantity, Integer year) {
         return lines.stream()
                 .filter(l -> l.quantity().equals(quantity) && java.util.Objects.equals(l.year(), year))
@@ -61,7 +45,7 @@ class QuantitiesTest {
 
     @Test
     void everyQuantityHasItsLineInTheDescribedOrder() {
-        List<Line> lines = Quantities.of(evidence(), posterior(REMOVALS));
+        List<Line> lines = Quantities.of(posterior(REMOVALS));
         assertThat(lines.stream().map(l -> l.quantity() + (l.year() == null ? "" : " " + l.year())))
                 .containsExactly(
                         "msy_t",
@@ -86,7 +70,7 @@ class QuantitiesTest {
 
     @Test
     void drawsBecomeMeanDeviationAndQuantiles() {
-        List<Line> lines = Quantities.of(evidence(), posterior(REMOVALS));
+        List<Line> lines = Quantities.of(posterior(REMOVALS));
         // mean 90, deviations −30, 10, 20: sd √(1400/2); type 7: h = 2p, so q05 = 60 + 0.1·40, q90 = 100 + 0.8·10
         assertThat(line(lines, "msy_t", null).numbers())
                 .containsExactly(new double[] {90, Math.sqrt(700), 64, 68, 80, 100, 105, 108, 109}, within(1e-12));
@@ -98,10 +82,8 @@ class QuantitiesTest {
     }
 
     @Test
-    void recordedRemovalsAreHeldForEver() {
-        // 60 t at a reported fraction of 0.8 are 75 t
-        List<Line> lines =
-                Quantities.of(evidence(new CatchRecord(2025, "commercial", 60, null, 0.8)), posterior(REMOVALS));
+    void theMedianOfTheEstimatedRemovalsIsHeldForEver() {
+        List<Line> lines = Quantities.of(posterior(REMOVALS));
         assertThat(line(lines, "fold_margin", 2025).quantile(0.5)).isCloseTo(0.25, within(1e-12));
         assertThat(line(lines, "fold_margin", 2025).numbers()[0])
                 .isCloseTo((-0.25 + 0.25 + 35.0 / 110) / 3, within(1e-12));
@@ -115,24 +97,18 @@ class QuantitiesTest {
     }
 
     @Test
-    void unrecordedRemovalsAreTheEstimatedOnes() {
-        List<Line> lines = Quantities.of(evidence(), posterior(REMOVALS));
-        assertThat(line(lines, "fold_margin", 2025).quantile(0.5)).isCloseTo(0.25, within(1e-12));
-        List<Line> none = Quantities.of(evidence(), posterior(new double[3][0]));
+    void withoutEstimatedRemovalsNothingIsHeld() {
+        List<Line> none = Quantities.of(posterior(new double[3][0]));
         assertThat(none).noneMatch(l -> l.quantity().equals("catch_t"));
-        assertThat(line(none, "fold_margin", 2025).numbers()).isEmpty();
-        assertThat(line(none, "collapse_course", 2025).numbers()).isEmpty();
+        assertThat(line(none, "fold_margin", 2025).quantile(0.5)).isEqualTo(1);
+        assertThat(line(none, "tipping_biomass_t", 2025).numbers()).isEmpty();
+        assertThat(line(none, "collapse_course", 2025).numbers()).containsExactly(0);
     }
 
     @Test
     void aTippingBiomassThatFewDrawsHaveIsLeftEmpty() {
-        List<Line> lines =
-                Quantities.of(evidence(new CatchRecord(2025, "commercial", 105, null, 1)), posterior(REMOVALS));
+        List<Line> lines = Quantities.of(posterior(new double[][] {{105}, {105}, {105}}));
         assertThat(line(lines, "tipping_biomass_t", 2025).numbers()).isEmpty();
-        List<Line> closed =
-                Quantities.of(evidence(new CatchRecord(2025, "commercial", 0, null, 1)), posterior(REMOVALS));
-        assertThat(line(closed, "tipping_biomass_t", 2025).numbers()).isEmpty();
-        assertThat(line(closed, "fold_margin", 2025).quantile(0.5)).isEqualTo(1);
     }
 
     @Test
@@ -148,7 +124,7 @@ class QuantitiesTest {
                 Map.of(),
                 EvidenceStrength.NONE,
                 new Verdict(false, List.of("stocked only")));
-        List<Line> lines = Quantities.of(evidence(), nothing);
+        List<Line> lines = Quantities.of(nothing);
         assertThat(lines.stream().map(Line::quantity))
                 .containsExactly(
                         "msy_t",

@@ -1,6 +1,8 @@
 package org.merewarden.core.inference;
 
+import java.util.Arrays;
 import java.util.Map;
+import java.util.OptionalDouble;
 
 /**
  * What every assessment yields, whatever its method: equally weighted draws of the parameters and of the states.
@@ -95,6 +97,18 @@ public record Posterior(
     /** The last assessed (closed) season. */
     public int lastYear() {
         return firstYear + seasons() - 1;
+    }
+
+    /** Median of the removals of the last assessed season, t; empty where the method estimates none. */
+    public OptionalDouble lastRemovals() {
+        int estimated = draws() == 0 ? 0 : removalsTonnes[0].length;
+        return estimated == 0
+                ? OptionalDouble.empty()
+                : OptionalDouble.of(Quantiles.of(
+                        Arrays.stream(removalsTonnes)
+                                .mapToDouble(bySeason -> bySeason[estimated - 1])
+                                .toArray(),
+                        0.5));
     }
 
     /** Biomass at the start of the season after the last, of one draw, t. */

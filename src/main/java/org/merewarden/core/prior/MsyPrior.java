@@ -2,7 +2,6 @@ package org.merewarden.core.prior;
 
 import java.util.List;
 import java.util.Locale;
-import org.jspecify.annotations.Nullable;
 import org.merewarden.core.evidence.CatchRecord;
 import org.merewarden.core.evidence.Evidence;
 
@@ -18,7 +17,8 @@ import org.merewarden.core.evidence.Evidence;
  * <table>
  * <caption>Symbols</caption>
  * <tr><td>Y</td><td>yield of the lake, all species, t/yr: {@link LakeYield}, several formulas combined by widening</td></tr>
- * <tr><td>s</td><td>this stock's share: as stated (log-sd 0.3), else 1/number of stocks (log-sd 0.7)</td></tr>
+ * <tr><td>s</td><td>this stock's share: as stated (log-sd 0.3), else of the recorded catch where every stock of the lake
+ * has one (log-sd 0.5), else 1/number of stocks (log-sd 0.7; a lake's only stock 0.3)</td></tr>
  * <tr><td>A</td><td>area, ha</td></tr>
  * </table>
  *
@@ -26,6 +26,7 @@ import org.merewarden.core.evidence.Evidence;
  */
 final class MsyPrior {
     private static final double STATED_SHARE_LOG_SD = 0.3;
+    private static final double RECORDED_SHARE_LOG_SD = 0.5;
     private static final double EQUAL_SHARE_LOG_SD = 0.7;
     private static final double CATCHES_LOG_SD = 0.8;
     private static final double NOTHING_LOG_SD = 1.5;
@@ -49,7 +50,10 @@ final class MsyPrior {
                     "Nothing is known of the lake's water: a wide prior around the larger catches.",
                     "our judgement; catches tell what was taken, not what can be");
         }
-        double guess = NOTHING_KG_PER_HECTARE * evidence.habitat().areaHectares() / 1000 * share(evidence);
+        double guess = NOTHING_KG_PER_HECTARE
+                * evidence.habitat().areaHectares()
+                / 1000
+                * share(evidence).value();
         return prior(
                 guess,
                 NOTHING_LOG_SD,
@@ -59,31 +63,42 @@ final class MsyPrior {
     }
 
     private static Prior fromLake(Estimate lake, Evidence evidence) {
-        boolean stated = isStated(evidence.traits().shareOfLakeYield());
-        double shareLogSd = stated || evidence.habitat().stocksInLake() == 1 ? STATED_SHARE_LOG_SD : EQUAL_SHARE_LOG_SD;
+        Share share = share(evidence);
         String reason = String.format(
                 Locale.ROOT,
                 "The lake's yield of all species (%.3g t) times this stock's share (%.2g, %s).",
                 lake.value(),
-                share(evidence),
-                stated ? "as stated" : "equal shares, for want of a stated one");
+                share.value(),
+                share.words());
         return prior(
-                lake.value() * share(evidence),
-                Math.hypot(lake.logSd(), shareLogSd),
+                lake.value() * share.value(),
+                Math.hypot(lake.logSd(), share.logSd()),
                 lake.source(),
                 reason,
                 lake.validity() + "; prediction error our judgement");
     }
 
-    private static double share(Evidence evidence) {
+    /** The stock's share of the lake's yield, how far off it may be, and where it comes from. */
+    private record Share(double value, double logSd, String words) {}
+
+    private static Share share(Evidence evidence) {
         Double stated = evidence.traits().shareOfLakeYield();
-        return stated != null && isStated(stated)
-                ? stated
-                : 1.0 / evidence.habitat().stocksInLake();
+        Double recorded = evidence.habitat().shareOfRecordedCatch();
+        int stocks = evidence.habitat().stocksInLake();
+        if (stated != null && isShare(stated)) {
+            return new Share(stated, STATED_SHARE_LOG_SD, "as stated");
+        }
+        if (stocks == 1) {
+            return new Share(1, STATED_SHARE_LOG_SD, "the only stock of the lake");
+        }
+        if (recorded != null && isShare(recorded)) {
+            return new Share(recorded, RECORDED_SHARE_LOG_SD, "its share of the recorded catch");
+        }
+        return new Share(1.0 / stocks, EQUAL_SHARE_LOG_SD, "equal shares, for want of a stated one");
     }
 
-    private static boolean isStated(@Nullable Double share) {
-        return share != null && share > 0 && share <= 1;
+    private static boolean isShare(double value) {
+        return value > 0 && value <= 1;
     }
 
     private static double largeCatch(Evidence evidence) {

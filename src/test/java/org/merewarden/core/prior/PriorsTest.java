@@ -46,6 +46,15 @@ class PriorsTest {
     }
 
     @Test
+    void withoutAStatedShareTheRecordedCatchTellsIt() {
+        Habitat lake = new Habitat("lake", 2000, 4.0, 100.0, null, null, 4, 0.6);
+        Prior msy = Priors.forStock(evidence(lake, UNKNOWN, List.of())).msy();
+        assertThat(msy.median()).isEqualTo(12.376 * 0.6, offset(1e-9));
+        assertThat(msy.logSd()).isEqualTo(Math.hypot(0.8, 0.5), offset(1e-12));
+        assertThat(msy.reason()).contains("share of the recorded catch");
+    }
+
+    @Test
     void severalFormulasWidenAndNeverNarrow() {
         Prior one = Priors.forStock(evidence(lake(4.0, 100.0, null, null, 1), UNKNOWN, List.of()))
                 .msy();
