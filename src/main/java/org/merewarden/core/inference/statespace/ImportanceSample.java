@@ -40,6 +40,8 @@ final class ImportanceSample {
     private double[][] states = new double[0][];
     private double[] logMixture = new double[0];
     private double best = Double.NEGATIVE_INFINITY;
+    private double worth = 1;
+    private boolean evidenceKnown = true;
     private final List<StudentT> proposals = new ArrayList<>();
     private final List<Integer> counts = new ArrayList<>();
 
@@ -47,6 +49,32 @@ final class ImportanceSample {
         this.marginal = marginal;
         this.seed = seed;
         dimension = marginal.dimension();
+    }
+
+    /**
+     * Draws u that already follow Laplace's p, so that weights are corrections alone; the evidence stays unknown.
+     *
+     * @param independent how many independent draws they are worth
+     */
+    static ImportanceSample following(Marginal marginal, long seed, double[][] u, double independent) {
+        ImportanceSample sample = new ImportanceSample(marginal, seed);
+        sample.resize(u.length);
+        for (int i = 0; i < u.length; i++) {
+            sample.draws[i] = u[i];
+            sample.evaluate(i);
+            sample.logMixture[i] = sample.logTarget[i] == Double.NEGATIVE_INFINITY ? 0 : sample.logTarget[i];
+        }
+        sample.worth = Math.min(1, independent / Math.max(1, u.length));
+        sample.evidenceKnown = false;
+        return sample;
+    }
+
+    private void resize(int total) {
+        draws = Arrays.copyOf(draws, total);
+        logTarget = Arrays.copyOf(logTarget, total);
+        correction = Arrays.copyOf(correction, total);
+        states = Arrays.copyOf(states, total);
+        logMixture = Arrays.copyOf(logMixture, total);
     }
 
     int size() {
@@ -60,11 +88,7 @@ final class ImportanceSample {
     void add(StudentT proposal, int count, RandomGenerator random) {
         int old = draws.length;
         int total = old + count;
-        draws = Arrays.copyOf(draws, total);
-        logTarget = Arrays.copyOf(logTarget, total);
-        correction = Arrays.copyOf(correction, total);
-        states = Arrays.copyOf(states, total);
-        logMixture = Arrays.copyOf(logMixture, total);
+        resize(total);
         for (int i = 0; i < old; i++) {
             logMixture[i] = logSum(logMixture[i], Math.log(count) + proposal.logDensity(draws[i]));
         }
@@ -168,13 +192,9 @@ final class ImportanceSample {
         return w;
     }
 
-    /** ESS by Laplace's weights: how well the proposals fit, whatever the states add. */
-    double smoothEffectiveSize() {
-        return effectiveSize(smoothWeights());
-    }
-
+    /** ESS of the corrected weights, times what a draw is worth where draws are not independent. */
     double effectiveSize() {
-        return effectiveSize(weights());
+        return worth * effectiveSize(weights());
     }
 
     private static double effectiveSize(double[] weights) {
@@ -189,7 +209,11 @@ final class ImportanceSample {
         return ParetoTail.shape(logWeights());
     }
 
+    /** NaN where unknown. */
     double logEvidence() {
+        if (!evidenceKnown) {
+            return Double.NaN;
+        }
         double[] w = logWeights();
         double largest = Arrays.stream(w).max().orElse(Double.NEGATIVE_INFINITY);
         double sum = 0;
@@ -207,6 +231,13 @@ final class ImportanceSample {
             }
         }
         return mean;
+    }
+
+    /** Weighted covariance, mixed with another by how far the weights can be trusted. */
+    double[][] covariance(double[][] other) {
+        double[] weights = smoothWeights();
+        double trust = effectiveSize(weights);
+        return covariance(weights, mean(weights), other, trust / (trust + PRIOR_COUNT), 1);
     }
 
     /** A proposal from the weighted mean and covariance, which few effective draws hardly move from the given one. */
