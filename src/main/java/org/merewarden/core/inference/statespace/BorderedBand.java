@@ -27,7 +27,7 @@ final class BorderedBand {
     final double[][] border;
     final double[][] corner;
 
-    private final double[] d;
+    private final double[] perPivot;
     private final double[] l1;
     private final double[] l2;
     private final double[][] v;
@@ -42,7 +42,7 @@ final class BorderedBand {
         below2 = new double[band];
         border = new double[borders][band];
         corner = new double[borders][borders];
-        d = new double[band];
+        perPivot = new double[band];
         l1 = new double[band];
         l2 = new double[band];
         v = new double[borders][band];
@@ -62,22 +62,23 @@ final class BorderedBand {
 
     /** False where the matrix is not positive definite to rounding. */
     boolean factor() {
-        double d1 = 1;
-        double d2 = 1;
+        double per1 = 1;
+        double per2 = 1;
         double previous = 0;
         for (int i = 0; i < band; i++) {
-            double second = below2[i] / d2;
-            double first = (below[i] - below2[i] * previous) / d1;
-            double pivot = diagonal[i] - second * below2[i] - first * first * d1;
+            double second = below2[i] * per2;
+            double rest = below[i] - below2[i] * previous;
+            double first = rest * per1;
+            double pivot = diagonal[i] - second * below2[i] - first * rest;
             if (!(pivot > 1e-13 * diagonal[i])) {
                 return false;
             }
             l2[i] = second;
             l1[i] = first;
-            d[i] = pivot;
             previous = first;
-            d2 = d1;
-            d1 = pivot;
+            per2 = per1;
+            per1 = 1 / pivot;
+            perPivot[i] = per1;
         }
         return factorCorner();
     }
@@ -115,7 +116,7 @@ final class BorderedBand {
     private double weighted(double[] a, double[] b) {
         double sum = 0;
         for (int i = 0; i < band; i++) {
-            sum += a[i] * b[i] / d[i];
+            sum += a[i] * b[i] * perPivot[i];
         }
         return sum;
     }
@@ -125,16 +126,16 @@ final class BorderedBand {
         double sum = 0;
         double product = 1;
         for (int i = 0; i < band; i++) {
-            product *= d[i];
+            product *= perPivot[i];
             if (product > 1e100 || product < 1e-100) {
-                sum += Math.log(product);
+                sum -= Math.log(product);
                 product = 1;
             }
         }
         for (int j = 0; j < borders; j++) {
             sum += 2 * Math.log(c[j][j]);
         }
-        return sum + Math.log(product);
+        return sum - Math.log(product);
     }
 
     /** Solves H out = rhs by the last factor; both have N + J entries and may be the same array. */
@@ -148,7 +149,7 @@ final class BorderedBand {
             half[j] = sum / c[j][j];
         }
         for (int i = 0; i < band; i++) {
-            out[i] /= d[i];
+            out[i] *= perPivot[i];
         }
         backward(out);
     }
@@ -159,7 +160,7 @@ final class BorderedBand {
         for (int i = 0; i < band; i++) {
             double g = random.nextGaussian();
             squares += g * g;
-            out[i] = g / Math.sqrt(d[i]);
+            out[i] = g * Math.sqrt(perPivot[i]);
         }
         for (int j = 0; j < borders; j++) {
             half[j] = random.nextGaussian();
@@ -192,15 +193,24 @@ final class BorderedBand {
         }
     }
 
-    /** Takes over the entries of another matrix of the same size, not its factor. */
+    /** Takes over the entries of another matrix of the same size and its last factor. */
     void copy(BorderedBand other) {
-        System.arraycopy(other.diagonal, 0, diagonal, 0, band);
-        System.arraycopy(other.below, 0, below, 0, band);
-        System.arraycopy(other.below2, 0, below2, 0, band);
+        copy(other.diagonal, diagonal);
+        copy(other.below, below);
+        copy(other.below2, below2);
+        copy(other.perPivot, perPivot);
+        copy(other.l1, l1);
+        copy(other.l2, l2);
         for (int j = 0; j < borders; j++) {
-            System.arraycopy(other.border[j], 0, border[j], 0, band);
-            System.arraycopy(other.corner[j], 0, corner[j], 0, borders);
+            copy(other.border[j], border[j]);
+            copy(other.corner[j], corner[j]);
+            copy(other.v[j], v[j]);
+            copy(other.c[j], c[j]);
         }
+    }
+
+    private static void copy(double[] from, double[] to) {
+        System.arraycopy(from, 0, to, 0, to.length);
     }
 
     /** Corner by Cᵀ, then the band by Lᵀ, from {@code half} and out[0 … N − 1]. */
@@ -213,7 +223,7 @@ final class BorderedBand {
             double q = sum / c[j][j];
             out[band + j] = q;
             for (int i = 0; i < band; i++) {
-                out[i] -= v[j][i] / d[i] * q;
+                out[i] -= v[j][i] * perPivot[i] * q;
             }
         }
         double t1 = 0;

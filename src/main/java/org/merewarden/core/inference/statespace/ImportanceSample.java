@@ -18,8 +18,8 @@ import java.util.random.RandomGenerator;
  * {@link StateMixture}, ρ̄ its weighted geometric mean. Where no ρ is cut the weights are exact; cutting (truncated
  * importance sampling, Ionides 2008, J. Comput. Graph. Stat. 17: 295–311; the bound our judgement) trades the tails that
  * the states' proposals cannot reach for a bounded variance, and {@link #truncatedShare()} tells how often it was needed.
- * Draws more than {@value #NEGLIGIBLE} below the best in ln p keep Laplace's. The states of draw i come from a generator seeded with the sample's seed and i, so that they can
- * be made again.
+ * Draws more than {@value #NEGLIGIBLE} below the best in ln p are taken as impossible. Each other draw keeps one path of
+ * its hidden states, from a generator seeded with the sample's seed and the draw's number.
  *
  * <p>Adaptive multiple importance sampling with deterministic-mixture weights: Cornuet et al. 2012, Scand. J. Stat. 39:
  * 798–812. Adding a proposal re-weights all earlier draws.
@@ -37,8 +37,11 @@ final class ImportanceSample {
     private double[][] draws = new double[0][];
     private double[] logTarget = new double[0];
     private double[] correction = new double[0];
+    private double[][] states = new double[0][];
     private double[] logMixture = new double[0];
     private double best = Double.NEGATIVE_INFINITY;
+    private double worth = 1;
+    private boolean evidenceKnown = true;
     private final List<StudentT> proposals = new ArrayList<>();
     private final List<Integer> counts = new ArrayList<>();
 
@@ -46,6 +49,32 @@ final class ImportanceSample {
         this.marginal = marginal;
         this.seed = seed;
         dimension = marginal.dimension();
+    }
+
+    /**
+     * Draws u that already follow Laplace's p, so that weights are corrections alone; the evidence stays unknown.
+     *
+     * @param independent how many independent draws they are worth
+     */
+    static ImportanceSample following(Marginal marginal, long seed, double[][] u, double independent) {
+        ImportanceSample sample = new ImportanceSample(marginal, seed);
+        sample.resize(u.length);
+        for (int i = 0; i < u.length; i++) {
+            sample.draws[i] = u[i];
+            sample.evaluate(i);
+            sample.logMixture[i] = sample.logTarget[i] == Double.NEGATIVE_INFINITY ? 0 : sample.logTarget[i];
+        }
+        sample.worth = Math.min(1, independent / Math.max(1, u.length));
+        sample.evidenceKnown = false;
+        return sample;
+    }
+
+    private void resize(int total) {
+        draws = Arrays.copyOf(draws, total);
+        logTarget = Arrays.copyOf(logTarget, total);
+        correction = Arrays.copyOf(correction, total);
+        states = Arrays.copyOf(states, total);
+        logMixture = Arrays.copyOf(logMixture, total);
     }
 
     int size() {
@@ -59,10 +88,7 @@ final class ImportanceSample {
     void add(StudentT proposal, int count, RandomGenerator random) {
         int old = draws.length;
         int total = old + count;
-        draws = Arrays.copyOf(draws, total);
-        logTarget = Arrays.copyOf(logTarget, total);
-        correction = Arrays.copyOf(correction, total);
-        logMixture = Arrays.copyOf(logMixture, total);
+        resize(total);
         for (int i = 0; i < old; i++) {
             logMixture[i] = logSum(logMixture[i], Math.log(count) + proposal.logDensity(draws[i]));
         }
@@ -83,21 +109,22 @@ final class ImportanceSample {
     }
 
     private void evaluate(int i) {
-        double value = marginal.evaluate(draws[i]);
-        logTarget[i] = Double.isNaN(value) ? Double.NEGATIVE_INFINITY : value;
-        best = Math.max(best, logTarget[i]);
-        boolean negligible = best == Double.NEGATIVE_INFINITY || logTarget[i] < best - NEGLIGIBLE;
-        double exact = negligible
-                ? logTarget[i]
-                : marginal.logPrior(draws[i]) + states(i).logLikelihood();
-        correction[i] = negligible ? 0 : Math.max(LOWEST_CORRECTION, exact - logTarget[i]);
+        double value = marginal.evaluate(draws[i], InnerMode.COARSE);
+        best = Double.isNaN(value) ? best : Math.max(best, value);
+        if (!(value > best - NEGLIGIBLE)) {
+            logTarget[i] = Double.NEGATIVE_INFINITY;
+            return;
+        }
+        RandomGenerator random = new SplittableRandom(seed + i);
+        double exact = marginal.logPrior(draws[i]) + marginal.mixture().draw(random);
+        logTarget[i] = value;
+        correction[i] = Math.max(LOWEST_CORRECTION, exact - value);
+        states[i] = marginal.mixture().choose(random).clone();
     }
 
-    /** The states of draw i, right after the marginal's evaluation there. */
-    StateMixture states(int i) {
-        StateMixture mixture = marginal.mixture();
-        mixture.draw(new SplittableRandom(seed + i));
-        return mixture;
+    /** One path of the hidden states of draw i; not to be changed. */
+    double[] states(int i) {
+        return states[i];
     }
 
     private static double logSum(double a, double b) {
@@ -165,13 +192,9 @@ final class ImportanceSample {
         return w;
     }
 
-    /** ESS by Laplace's weights: how well the proposals fit, whatever the states add. */
-    double smoothEffectiveSize() {
-        return effectiveSize(smoothWeights());
-    }
-
+    /** ESS of the corrected weights, times what a draw is worth where draws are not independent. */
     double effectiveSize() {
-        return effectiveSize(weights());
+        return worth * effectiveSize(weights());
     }
 
     private static double effectiveSize(double[] weights) {
@@ -186,7 +209,11 @@ final class ImportanceSample {
         return ParetoTail.shape(logWeights());
     }
 
+    /** NaN where unknown. */
     double logEvidence() {
+        if (!evidenceKnown) {
+            return Double.NaN;
+        }
         double[] w = logWeights();
         double largest = Arrays.stream(w).max().orElse(Double.NEGATIVE_INFINITY);
         double sum = 0;
@@ -204,6 +231,13 @@ final class ImportanceSample {
             }
         }
         return mean;
+    }
+
+    /** Weighted covariance, mixed with another by how far the weights can be trusted. */
+    double[][] covariance(double[][] other) {
+        double[] weights = smoothWeights();
+        double trust = effectiveSize(weights);
+        return covariance(weights, mean(weights), other, trust / (trust + PRIOR_COUNT), 1);
     }
 
     /** A proposal from the weighted mean and covariance, which few effective draws hardly move from the given one. */

@@ -10,10 +10,16 @@ package org.merewarden.core.inference.statespace;
  *
  * <p>H: exact Hessian of U ({@link StateDensity}), the Gauss–Newton matrix where the exact one is not positive definite;
  * N: number of states. A step moves no biomass or harvest state by more than {@value #LONGEST_STEP}, and is halved until
- * U falls. Without a mode after {@value #MOST_STEPS} steps the result is "not found", never an exception.
+ * U falls (or stays, to the {@value #SLACK} by which a change of {@link Quadrature} may move it). Without a mode after {@value #MOST_STEPS} steps the result is "not found", never an exception.
  */
 final class InnerMode {
-    static final double TOLERANCE = 1e-5;
+    /** Of λ², for values whose differences matter. */
+    static final double SHARP = 1e-6;
+
+    /** Of λ², for draws: their weights are made exact afterwards. */
+    static final double COARSE = 1e-3;
+
+    private static final double SLACK = 1e-6;
     private static final double LONGEST_STEP = 2;
     private static final int MOST_STEPS = 50;
     private static final int MOST_HALVINGS = 20;
@@ -102,7 +108,7 @@ final class InnerMode {
                 trial[i] = z[i] - share * step[i];
             }
             double next = evaluate(trial);
-            if (next <= u - 1e-4 * share * decrement) {
+            if (next <= u - 1e-4 * share * decrement + SLACK) {
                 System.arraycopy(trial, 0, z, 0, z.length);
                 return next;
             }

@@ -49,9 +49,12 @@ final class KnownCatch {
     }
 
     private void at(double x, double l) {
+        boolean kept = step.slopes;
+        step.slopes = true;
         step.start(x, l, true);
         step.biomassAt(1);
         step.removals();
+        step.slopes = kept;
     }
 
     /** Replaces the step's derivatives of y by those of f. */

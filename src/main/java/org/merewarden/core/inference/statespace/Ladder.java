@@ -12,25 +12,33 @@ import java.util.random.RandomGenerator;
  *   <li>modes of the hidden states looked for at a few draws of the prior and around the outer mode; then draws from the
  *       prior as a multivariate t (the defensive round), around the mode, and adapted;
  *   <li>more rounds, each from the whole sample widened and from its two halves along the longest axis;
- *   <li>not settled.
+ *   <li>{@link Chains}, whose draws are weighted by p̂/Laplace;
+ *   <li>not settled: the draws with the larger ESS are kept.
  * </ol>
  *
- * <p>Accepted when ESS ≥ {@value #LEAST_EFFECTIVE} and k̂ &lt; {@value #LARGEST_SHAPE}; a rung goes on to
- * {@value #WANTED_EFFECTIVE} effective draws while that is cheap. Each rung leaves a sentence.
+ * <p>Weighting is accepted when ESS ≥ {@value #LEAST_EFFECTIVE} and k̂ &lt; {@value #LARGEST_SHAPE}, chains when R̂ &lt;
+ * 1.01 and bulk ESS ≥ {@value #LEAST_EFFECTIVE}, also after weighting; a rung goes on to {@value #WANTED_EFFECTIVE}
+ * effective draws while that is cheap. Each rung leaves a sentence. No more than {@value #MOST_EVALUATIONS} evaluations of
+ * the marginal density in all, and none of them waits for a clock: the same seed gives the same bits.
  */
 final class Ladder {
     static final double LEAST_EFFECTIVE = 400;
     static final double LARGEST_SHAPE = 0.7;
     static final double WANTED_EFFECTIVE = 1000;
     private static final int PROBES = 6;
-    private static final int DEFENSIVE = 500;
-    private static final int ROUND = 900;
-    private static final int ROUNDS = 3;
+    private static final int DEFENSIVE = 300;
+    private static final int FIRST_ROUND = 500;
+    private static final int LEAST_ROUND = 200;
+    private static final int MOST_ROUND = 800;
+    private static final int ROUNDS = 5;
+    private static final double EFFICIENCY = 0.6;
     private static final int MORE_ROUNDS = 5;
     private static final int PART = 600;
     private static final double WHOLE_WIDENED = 2;
     private static final double HALF_WIDENED = 1.5;
     private static final int MOST_RESTARTS = 2;
+
+    static final int MOST_EVALUATIONS = 100_000;
 
     private final Marginal marginal;
     private final RandomGenerator random;
@@ -40,10 +48,17 @@ final class Ladder {
     private double[][] covariance;
     private ImportanceSample sample;
     private final long stateSeed;
+    private final int leastRung;
     private int rung;
     private boolean settled;
 
     Ladder(Marginal marginal, RandomGenerator random) {
+        this(marginal, random, 1);
+    }
+
+    /** {@code leastRung}: rungs below it are climbed but never accepted. */
+    Ladder(Marginal marginal, RandomGenerator random, int leastRung) {
+        this.leastRung = leastRung;
         this.marginal = marginal;
         this.random = random;
         stateSeed = random.nextLong();
@@ -87,7 +102,7 @@ final class Ladder {
             secondRung();
         }
         if (!settled) {
-            rung = 3;
+            thirdRung();
         }
     }
 
@@ -135,10 +150,10 @@ final class Ladder {
     private void firstRung() {
         rung = 1;
         sample = new ImportanceSample(marginal, stateSeed);
-        sample.add(new StudentT(mode, covariance), ROUND, random);
+        sample.add(new StudentT(mode, covariance), FIRST_ROUND, random);
         sample.add(prior, DEFENSIVE, random);
         for (int round = 1; round < ROUNDS && !good(WANTED_EFFECTIVE); round++) {
-            sample.add(sample.adapted(mode, covariance), ROUND, random);
+            sample.add(sample.adapted(mode, covariance), needed(), random);
         }
         record("Draws around the most likely parameters");
     }
@@ -169,8 +184,33 @@ final class Ladder {
         record("More rounds, split and widened");
     }
 
+    /** Size of the next round, so that none is drawn in vain. */
+    private int needed() {
+        double missing = WANTED_EFFECTIVE - sample.effectiveSize();
+        return (int) Math.max(LEAST_ROUND, Math.min(MOST_ROUND, missing / EFFICIENCY));
+    }
+
+    private void thirdRung() {
+        rung = 3;
+        double[][] spread = sample.covariance(covariance);
+        Chains chains = new Chains(marginal, sample.widened(mode, covariance, WHOLE_WIDENED), spread, random);
+        ImportanceSample followed =
+                ImportanceSample.following(marginal, stateSeed, chains.draws(), chains.effectiveSize());
+        double effective = Math.min(chains.effectiveSize(), followed.effectiveSize());
+        settled = chains.rHat() < Chains.LARGEST_R_HAT && effective >= LEAST_EFFECTIVE;
+        rungs.add(String.format(
+                Locale.ROOT,
+                "Four Markov chains of %d steps in all: they differ by a factor of %.3f (R̂), worth %.0f independent"
+                        + " draws; %s.",
+                chains.steps(),
+                chains.rHat(),
+                effective,
+                settled ? "accepted" : "not accepted (needs under 1.01 and 400)"));
+        sample = settled || followed.effectiveSize() > sample.effectiveSize() ? followed : sample;
+    }
+
     private boolean good(double effective) {
-        return sample.effectiveSize() >= effective && sample.paretoShape() < LARGEST_SHAPE;
+        return leastRung <= rung && sample.effectiveSize() >= effective && sample.paretoShape() < LARGEST_SHAPE;
     }
 
     private void record(String what) {

@@ -67,21 +67,32 @@ final class Marginal {
         return density;
     }
 
+    /** ln p(u, data); sharp enough for differences. */
     double evaluate(double[] u) {
+        return evaluate(u, InnerMode.SHARP);
+    }
+
+    /** ln p(u, data) with Newton's method stopped at a decrement λ² below {@code tolerance}. */
+    double evaluate(double[] u, double tolerance) {
         calls++;
-        modes = 0;
+        clear();
         if (!ready(u)) {
             return Double.NEGATIVE_INFINITY;
         }
         for (int a = 0; a < anchors.size(); a++) {
             anchors.get(a).predict(u, found[modes]);
-            accept();
+            accept(tolerance);
         }
         if (modes == 0 && rescues > 0) {
             rescues--;
             fromStarts();
         }
         return total(u);
+    }
+
+    private void clear() {
+        modes = 0;
+        mixture.clear();
     }
 
     private boolean ready(double[] u) {
@@ -96,8 +107,8 @@ final class Marginal {
     }
 
     /** Newton from found[modes]; keeps the result if it is a new mode. */
-    private void accept() {
-        if (!inner.find(found[modes], InnerMode.TOLERANCE) || !Double.isFinite(inner.logTerm())) {
+    private void accept(double tolerance) {
+        if (!inner.find(found[modes], tolerance) || !Double.isFinite(inner.logTerm())) {
             return;
         }
         for (int m = 0; m < modes; m++) {
@@ -105,6 +116,7 @@ final class Marginal {
                 return;
             }
         }
+        mixture.add(found[modes], inner.logTerm());
         terms[modes++] = inner.logTerm();
     }
 
@@ -128,7 +140,7 @@ final class Marginal {
                 }
             }
             density.parameters(theta, 0);
-            accept();
+            accept(InnerMode.SHARP);
         }
     }
 
@@ -159,7 +171,9 @@ final class Marginal {
             return false;
         }
         int known = anchors.isEmpty() ? 0 : modes;
-        modes = known;
+        if (known == 0) {
+            clear();
+        }
         fromStarts();
         int kept = anchors.size();
         double best = modes == 0 ? 0 : best();
@@ -188,7 +202,7 @@ final class Marginal {
         }
         int others = modes;
         candidate.predict(u, found[modes]);
-        accept();
+        accept(InnerMode.SHARP);
         return modes > others && terms[others] > best() - NEGLIGIBLE;
     }
 
@@ -203,13 +217,14 @@ final class Marginal {
         }
     }
 
-    /** The states at the u of the last {@link #evaluate}. */
+    /** The states at the u of the last {@link #evaluate}, until the next. */
     StateMixture mixture() {
-        mixture.begin(theta);
-        for (int m = 0; m < modes; m++) {
-            mixture.add(found[m], terms[m]);
-        }
         return mixture;
+    }
+
+    /** Sets the density's parameters to those of u. */
+    void parameters(double[] u) {
+        ready(u);
     }
 
     double logPrior(double[] u) {

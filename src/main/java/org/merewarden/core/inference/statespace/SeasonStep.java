@@ -1,16 +1,12 @@
 package org.merewarden.core.inference.statespace;
 
-import java.util.stream.IntStream;
-import org.apache.commons.math3.analysis.integration.gauss.GaussIntegrator;
-import org.apache.commons.math3.analysis.integration.gauss.GaussIntegratorFactory;
-
 /**
  * One season under a constant F, with first and second derivatives by x = ln b and l = ln F.
  *
  * <pre>
  *   a = r − nF,  z = aτ,  φ(z) = (e^z − 1)/z,  w = ln(1 + r τ φ e^(nx)),  p = 1 − e^(−w)
  *   ln b(τ) = x + (z − w)/n                              n → 0:  (x + F/r) e^(−rτ) − F/r
- *   n = 1:  ln C/K = l − ln r + ln w(1);   else  ln C/K = l + ln Σ ω_k b(τ_k),   Gauss–Legendre, {@value #NODES} points
+ *   n = 1:  ln C/K = l − ln r + ln w(1);   else  ln C/K = l + ln Σ ω_k b(τ_k),   Gauss–Legendre
  * </pre>
  *
  * <table>
@@ -21,23 +17,17 @@ import org.apache.commons.math3.analysis.integration.gauss.GaussIntegratorFactor
  * </table>
  *
  * <p>With h = ln φ as a function of l, w depends on nx + h alone; that gives every derivative below. n under
- * {@value #LEAST_SHAPE} is taken as 0, which changes ln b by about as much. Accuracy: 1e-12 for ln b, 1e-10 for ln C with n = 1;
- * the quadrature of ln C errs by up to 1e-7 where m = r max(1, b^n) + nF ≤ 4, by 3e-6 where m ≤ 10, by 3e-5 where m ≤ 20
- * (worst of 300,000 random cases, n ≤ 4, r and F ≤ 3). Results are left in fields, so that an evaluation allocates nothing.
+ * {@value #LEAST_SHAPE} is taken as 0, which changes ln b by about as much. Accuracy: 1e-12 for ln b, 1e-10 for ln C with
+ * n = 1; otherwise by {@link Quadrature}. Results are left in fields, so that an evaluation allocates nothing.
  */
 final class SeasonStep {
-    static final int NODES = 8;
     static final double LEAST_SHAPE = 1e-3;
-    private static final double SMALL = 0.3;
-    private static final GaussIntegrator RULE = new GaussIntegratorFactory().legendre(NODES, 0, 1);
-    private static final double[] TIMES =
-            IntStream.range(0, NODES).mapToDouble(RULE::getPoint).toArray();
-    private static final double[] WEIGHTS =
-            IntStream.range(0, NODES).mapToDouble(RULE::getWeight).toArray();
+    private static final double SMALL = 0.05;
 
     private double r;
     private double logR;
     private double n;
+    private double perN;
     private double x;
     private double l;
     private double mortality;
@@ -46,6 +36,9 @@ final class SeasonStep {
     private double h2;
     private double w;
     private double p;
+
+    /** Whether derivatives are wanted; without them y and c alone are set. */
+    boolean slopes = true;
 
     /** ln b(τ) and its derivatives. */
     double y;
@@ -68,6 +61,7 @@ final class SeasonStep {
     /** The law for the coming steps: FMSY in 1/yr, n ≥ 0. Returns ln(K · FMSY/MSY) = ln(1 + n)/n. */
     double law(double fmsy, double shape) {
         n = shape < LEAST_SHAPE ? 0 : shape;
+        perN = n == 0 ? 0 : 1 / n;
         r = fmsy * (1 + n);
         logR = Math.log(r);
         return n == 0 ? 1 : Math.log1p(n) / n;
@@ -88,59 +82,43 @@ final class SeasonStep {
             return;
         }
         double z = (r - n * mortality) * tau;
-        logMean(z, n * mortality * tau, tau);
-        double q = p * (1 - p);
-        double byFishing = mortality * tau;
-        y = x + (z - w) / n;
-        yX = 1 - p;
-        yL = -byFishing - p * h1 / n;
-        yXX = -n * q;
-        yXL = -q * h1;
-        yLL = -byFishing - (q * h1 * h1 + p * h2) / n;
+        double e = Math.exp(z);
+        double f0 = Math.abs(z) < SMALL ? e - z * firstMoment(e, z) : (e - 1) / z;
+        double u = r * growing * tau * f0;
+        w = logOnePlus(u);
+        y = x + (z - w) * perN;
+        if (slopes) {
+            p = u / (1 + u);
+            derive(z, e, f0, tau);
+        }
     }
 
-    /** Sets w, p and the derivatives of h by l; v = nFτ. */
-    private void logMean(double z, double v, double tau) {
-        double f0;
-        double f1;
-        double f2;
-        double e = Math.exp(z);
-        if (Math.abs(z) < SMALL) {
-            f2 = 1 / 3.0
-                    + z
-                            * (0.25
-                                    + z
-                                            * (0.1
-                                                    + z
-                                                            * (1 / 36.0
-                                                                    + z
-                                                                            * (1 / 168.0
-                                                                                    + z
-                                                                                            * (1 / 960.0
-                                                                                                    + z
-                                                                                                            * (1
-                                                                                                                            / 6480.0
-                                                                                                                    + z
-                                                                                                                            * (1
-                                                                                                                                            / 50400.0
-                                                                                                                                    + z
-                                                                                                                                            * (1
-                                                                                                                                                            / 443520.0
-                                                                                                                                                    + z
-                                                                                                                                                            / 4354560.0))))))));
-            f1 = (e - z * f2) / 2;
-            f0 = e - z * f1;
-        } else {
-            f0 = (e - 1) / z;
-            f1 = (e - f0) / z;
-            f2 = (e - 2 * f1) / z;
-        }
+    private void derive(double z, double e, double f0, double tau) {
+        boolean small = Math.abs(z) < SMALL;
+        double f1 = small ? firstMoment(e, z) : (e - f0) / z;
+        double f2 = small ? secondMoment(z) : (e - 2 * f1) / z;
+        double v = n * mortality * tau;
         double rho = f1 / f0;
         h1 = -v * rho;
         h2 = v * (v * (f2 / f0 - rho * rho) - rho);
-        double u = r * growing * tau * f0;
-        p = u / (1 + u);
-        w = logOnePlus(u);
+        double q = p * (1 - p);
+        double byFishing = mortality * tau;
+        yX = 1 - p;
+        yL = -byFishing - p * h1 * perN;
+        yXX = -n * q;
+        yXL = -q * h1;
+        yLL = -byFishing - (q * h1 * h1 + p * h2) * perN;
+    }
+
+    /** φ′ = ∫₀¹ t e^(zt) dt for small z. */
+    private static double firstMoment(double e, double z) {
+        return (e - z * secondMoment(z)) / 2;
+    }
+
+    /** φ″ = ∫₀¹ t² e^(zt) dt = Σ z^k/(k! (k + 3)) for small z; the next term is below 1e-12. */
+    private static double secondMoment(double z) {
+        double high = 1 / 36.0 + z * (1 / 168.0 + z * (1 / 960.0 + z / 6480.0));
+        return 1 / 3.0 + z * (0.25 + z * (0.1 + z * high));
     }
 
     /** ln(1 + u), u ≥ 0; faster than log1p and as good where it matters. */
@@ -150,7 +128,7 @@ final class SeasonStep {
 
     private void foxBiomassAt(double tau) {
         double decay = Math.exp(-r * tau);
-        double lost = mortality / r * -Math.expm1(-r * tau);
+        double lost = mortality / r * (1 - decay);
         y = x * decay - lost;
         yX = decay;
         yL = -lost;
@@ -165,26 +143,35 @@ final class SeasonStep {
             quadrature();
             return;
         }
-        double s = p / w;
-        double sX = s * (1 - p - s);
         c = l - logR + Math.log(w);
-        cX = s;
-        cL = 1 + s * h1;
-        cXX = sX;
-        cXL = sX * h1;
-        cLL = sX * h1 * h1 + s * h2;
+        if (slopes) {
+            double s = p / w;
+            double sX = s * (1 - p - s);
+            cX = s;
+            cL = 1 + s * h1;
+            cXX = sX;
+            cXL = sX * h1;
+            cLL = sX * h1 * h1 + s * h2;
+        }
+    }
+
+    /** Spread of the season's rates, which the nodes must follow: r max(1, bⁿ) + nF + |d ln b/dt at its start|. */
+    private double liveliness() {
+        double rate = n == 0 ? -r * x : r * perN * (1 - growing);
+        return r * Math.max(1, growing) + n * mortality + Math.abs(rate - mortality);
     }
 
     private void quadrature() {
+        Quadrature rule = Quadrature.of(liveliness());
         double sum = 0;
         double mX = 0;
         double mL = 0;
         double mXX = 0;
         double mXL = 0;
         double mLL = 0;
-        for (int k = 0; k < NODES; k++) {
-            biomassAt(TIMES[k]);
-            double weight = WEIGHTS[k] * Math.exp(y - x);
+        for (int k = 0; k < rule.nodes(); k++) {
+            biomassAt(rule.time(k));
+            double weight = rule.weight(k) * Math.exp(y - x);
             sum += weight;
             mX += weight * yX;
             mL += weight * yL;

@@ -24,7 +24,7 @@ import java.util.Arrays;
 final class StateDensity {
     static final double STOCKING_CV = 0.3;
     static final double LARGEST_MORTALITY = 3;
-    private static final double HALF_LOG_TWO_PI = 0.5 * Math.log(2 * Math.PI);
+    private static final double LEAST_SD = 1e-3;
 
     final SeasonData data;
     final int seasons;
@@ -38,15 +38,14 @@ final class StateDensity {
     private final double[] curveXL;
     private final double[] curveLL;
     private final double startMean;
-    private final double startSd;
     private final double harvestMean;
-    private final double harvestSd;
+    private final Precisions weights;
     private final double[] scatterVariance;
     private double logCapacity;
     private double capacity;
-    private double walkVariance;
     private double processVariance;
     private double value;
+    private boolean slopes = true;
 
     StateDensity(SeasonData data, ModelPriors priors) {
         this.data = data;
@@ -60,9 +59,11 @@ final class StateDensity {
         curveLL = new double[seasons];
         scatterVariance = new double[series];
         startMean = Math.log(priors.initialFraction().median());
-        startSd = Math.max(1e-3, priors.initialFraction().logSd());
         harvestMean = Math.log(priors.firstHarvestRate().median());
-        harvestSd = Math.max(1e-3, priors.firstHarvestRate().logSd());
+        weights = new Precisions(
+                data,
+                Math.max(LEAST_SD, priors.initialFraction().logSd()),
+                Math.max(LEAST_SD, priors.firstHarvestRate().logSd()));
     }
 
     double startMean() {
@@ -80,6 +81,9 @@ final class StateDensity {
 
     /** Variance of the step after season t. */
     double stepVariance(int t) {
+        if (data.stocked()[t] == 0) {
+            return processVariance + data.killVariance()[t];
+        }
         double share = data.stocked()[t] / capacity(t);
         double stocking = STOCKING_CV * share / (share + 0.5);
         return processVariance + stocking * stocking + data.killVariance()[t];
@@ -97,49 +101,58 @@ final class StateDensity {
         capacity = Math.exp(logCapacity);
         double process = Math.max(leastProcessSd, Math.exp(theta[OuterParameters.PROCESS_SD]));
         processVariance = process * process;
-        walkVariance = Math.exp(2 * theta[OuterParameters.HARVEST_SD]);
         for (int j = 0; j < scatterVariance.length; j++) {
             scatterVariance[j] = Math.exp(2 * theta[OuterParameters.FIRST_SCATTER + j]);
         }
+        weights.at(this, theta[OuterParameters.HARVEST_SD], processVariance, scatterVariance);
     }
 
     /** U at z; leaves gradient, Gauss–Newton matrix and curvature. Not finite where z is beyond the arithmetic. */
     double evaluate(double[] z) {
-        value = 0;
+        slopes = true;
         Arrays.fill(gradient, 0);
         matrix.clear();
+        return sum(z);
+    }
+
+    /** U at z alone, at half the cost; the gradient and the matrix keep what they hold. */
+    double value(double[] z) {
+        slopes = false;
+        return sum(z);
+    }
+
+    private double sum(double[] z) {
+        step.slopes = slopes;
+        value = weights.constant;
         hiddenStarts(z);
         for (int t = 0; t < seasons; t++) {
-            curveXX[t] = 0;
-            curveXL[t] = 0;
-            curveLL[t] = 0;
             season(z, t);
         }
+        step.slopes = true;
         return value;
     }
 
     private void hiddenStarts(double[] z) {
-        single(0, z[0] - startMean, startSd * startSd);
-        single(1, z[1] - harvestMean, harvestSd * harvestSd);
+        single(0, z[0] - startMean, weights.start);
+        single(1, z[1] - harvestMean, weights.firstHarvest);
         int band = 2 * seasons;
         for (int j = 0; j < matrix.borders; j++) {
-            Series series = data.series().get(j);
-            double variance = series.qSd() * series.qSd();
-            double e = z[band + j] - series.qMean();
-            value += penalty(e, variance);
-            gradient[band + j] += e / variance;
-            matrix.corner[j][j] += 1 / variance;
+            double weight = weights.catchability[j];
+            double e = z[band + j] - data.series().get(j).qMean();
+            value += 0.5 * weight * e * e;
+            if (slopes) {
+                gradient[band + j] += weight * e;
+                matrix.corner[j][j] += weight;
+            }
         }
     }
 
-    private static double penalty(double e, double variance) {
-        return 0.5 * (e * e / variance + Math.log(variance)) + HALF_LOG_TWO_PI;
-    }
-
-    private void single(int i, double e, double variance) {
-        value += penalty(e, variance);
-        gradient[i] += e / variance;
-        matrix.diagonal[i] += 1 / variance;
+    private void single(int i, double e, double weight) {
+        value += 0.5 * weight * e * e;
+        if (slopes) {
+            gradient[i] += weight * e;
+            matrix.diagonal[i] += weight;
+        }
     }
 
     /** x⁺ from x; e^x/(e^x + S/K) is its derivative. */
@@ -163,34 +176,36 @@ final class StateDensity {
 
     private void season(double[] z, int t) {
         double x = z[2 * t];
-        double l = z[2 * t + 1];
         double plus = afterEvents(t, x);
         double kept = data.stocked()[t] == 0 ? 1 : Math.exp(x - plus + data.logSurvival()[t]);
-        boolean closed = data.removals().closed()[t];
-        beginSeason(t, x, l);
-        wholeSeason(z, t, kept, closed);
+        beginSeason(t, x, z[2 * t + 1]);
+        curveXX[t] = slopes ? 0 : curveXX[t];
+        curveXL[t] = slopes ? 0 : curveXL[t];
+        curveLL[t] = slopes ? 0 : curveLL[t];
+        wholeSeason(z, t, kept);
         Observations o = data.observations();
         for (int i = o.firstOf()[t]; i < o.firstOf()[t + 1]; i++) {
             observe(z, t, i, plus, kept);
         }
         if (t + 1 < seasons) {
-            walk(t, z[2 * t + 3] - l);
+            walk(t, z[2 * t + 3] - z[2 * t + 1]);
         }
     }
 
     private void walk(int t, double e) {
-        value += penalty(e, walkVariance);
-        double weight = 1 / walkVariance;
-        gradient[2 * t + 1] -= weight * e;
-        gradient[2 * t + 3] += weight * e;
-        matrix.diagonal[2 * t + 1] += weight;
-        matrix.diagonal[2 * t + 3] += weight;
-        matrix.below2[2 * t + 3] -= weight;
+        double weight = weights.walk;
+        value += 0.5 * weight * e * e;
+        if (slopes) {
+            gradient[2 * t + 1] -= weight * e;
+            gradient[2 * t + 3] += weight * e;
+            matrix.diagonal[2 * t + 1] += weight;
+            matrix.diagonal[2 * t + 3] += weight;
+            matrix.below2[2 * t + 3] -= weight;
+        }
     }
 
-    private void wholeSeason(double[] z, int t, double kept, boolean closed) {
-        double logCatch = data.removals().logCatch()[t];
-        boolean caught = !closed && !Double.isNaN(logCatch);
+    private void wholeSeason(double[] z, int t, double kept) {
+        boolean caught = weights.taken[t] > 0;
         if (t + 1 >= seasons && !caught) {
             return;
         }
@@ -201,27 +216,29 @@ final class StateDensity {
         }
         if (caught) {
             step.removals();
-            double sd = data.removals().sd()[t];
-            double e = step.c + logCapacity(t) - logCatch;
-            value += penalty(e, sd * sd);
-            double weight = 1 / (sd * sd);
-            onSeason(t, kept, weight, weight * e, step.cX, step.cL);
-            bend(t, kept, weight * e, step.cX, step.cXX, step.cXL, step.cLL);
+            double e = step.c + logCapacity(t) - data.removals().logCatch()[t];
+            double weight = weights.taken[t];
+            value += 0.5 * weight * e * e;
+            if (slopes) {
+                onSeason(t, kept, weight, weight * e, step.cX, step.cL);
+                bend(t, kept, weight * e, step.cX, step.cXX, step.cXL, step.cLL);
+            }
         }
     }
 
     private void transition(double next, int t, double kept) {
-        double variance = stepVariance(t);
-        double weight = 1 / variance;
+        double weight = weights.step[t];
         double e = next - step.y - data.logArea()[t] + data.logArea()[t + 1];
-        value += penalty(e, variance);
-        int i = 2 * t;
-        gradient[i + 2] += weight * e;
-        matrix.diagonal[i + 2] += weight;
-        matrix.below[i + 2] -= weight * step.yL;
-        matrix.below2[i + 2] -= weight * step.yX * kept;
-        onSeason(t, kept, weight, -weight * e, step.yX, step.yL);
-        bend(t, kept, -weight * e, step.yX, step.yXX, step.yXL, step.yLL);
+        value += 0.5 * weight * e * e;
+        if (slopes) {
+            int i = 2 * t;
+            gradient[i + 2] += weight * e;
+            matrix.diagonal[i + 2] += weight;
+            matrix.below[i + 2] -= weight * step.yL;
+            matrix.below2[i + 2] -= weight * step.yX * kept;
+            onSeason(t, kept, weight, -weight * e, step.yX, step.yL);
+            bend(t, kept, -weight * e, step.yX, step.yXX, step.yXL, step.yLL);
+        }
     }
 
     /** A term of weight and slope (derivative of U by the mean m) whose m depends on x⁺ and l of season t. */
@@ -242,38 +259,47 @@ final class StateDensity {
     }
 
     private void observe(double[] z, int t, int i, double plus, double kept) {
-        Observations o = data.observations();
-        int j = o.series()[i];
-        int kind = o.kind()[i];
-        double q = j < 0 ? 0 : z[2 * seasons + j];
-        double variance = o.variance()[i] + (j < 0 ? 0 : scatterVariance[j]);
+        int kind = data.observations().kind()[i];
         if (kind == Observations.EFFORT) {
-            if (!data.removals().closed()[t]) {
-                double e = z[2 * t + 1] - q - o.value()[i];
-                value += penalty(e, variance);
-                onSeason(t, 1, 1 / variance, e / variance, 0, 1);
-                onSeries(t, j, 1 / variance, e / variance, 0, 1, -1);
-            }
+            observeEffort(z, t, i);
             return;
         }
-        biomassAt(o.time()[i], plus);
-        double e = q + step.y + logCapacity(t) - o.value()[i];
-        double weight = 1 / variance;
+        int j = data.observations().series()[i];
+        double q = j < 0 ? 0 : z[2 * seasons + j];
+        biomassAt(data.observations().time()[i], plus);
+        double e = q + step.y + logCapacity(t) - data.observations().value()[i];
+        double weight = weights.observed[i];
         double slope = weight * e;
         if (kind == Observations.BELOW_DETECTION) {
-            double sd = Math.sqrt(variance);
-            double u = -e / sd;
-            double mills = NormalTail.mills(u);
+            double perSd = Math.sqrt(weight);
+            double u = -e * perSd;
+            double mills = slopes ? NormalTail.mills(u) : 0;
             value -= NormalTail.logCdf(u);
-            slope = mills / sd;
-            weight = mills * (mills + u) / variance;
+            slope = mills * perSd;
+            weight = mills * (mills + u) * weight;
         } else {
-            value += penalty(e, variance);
+            value += 0.5 * weight * e * e;
         }
-        onSeason(t, kept, weight, slope, step.yX, step.yL);
-        bend(t, kept, slope, step.yX, step.yXX, step.yXL, step.yLL);
-        if (j >= 0) {
-            onSeries(t, j, weight, slope, step.yX * kept, step.yL, 1);
+        if (slopes) {
+            onSeason(t, kept, weight, slope, step.yX, step.yL);
+            bend(t, kept, slope, step.yX, step.yXX, step.yXL, step.yLL);
+            if (j >= 0) {
+                onSeries(t, j, weight, slope, step.yX * kept, step.yL, 1);
+            }
+        }
+    }
+
+    private void observeEffort(double[] z, int t, int i) {
+        if (data.removals().closed()[t]) {
+            return;
+        }
+        int j = data.observations().series()[i];
+        double e = z[2 * t + 1] - z[2 * seasons + j] - data.observations().value()[i];
+        double weight = weights.observed[i];
+        value += 0.5 * weight * e * e;
+        if (slopes) {
+            onSeason(t, 1, weight, weight * e, 0, 1);
+            onSeries(t, j, weight, weight * e, 0, 1, -1);
         }
     }
 

@@ -14,7 +14,7 @@ import java.util.random.RandomGenerator;
 record StateDraws(
         double[][] theta, double[][] biomassTonnes, double[][] fishing, double[][] removals, double[][] logQ) {
 
-    /** {@code chosen}: indices of the sample in ascending order; one inner mode serves all draws of one index. */
+    /** {@code chosen}: indices of the sample. */
     static StateDraws at(
             int[] chosen, ImportanceSample sample, Marginal marginal, OuterParameters outer, RandomGenerator random) {
         StateDensity density = marginal.density();
@@ -26,14 +26,10 @@ record StateDraws(
                 new double[draws][density.seasons],
                 new double[draws][density.seasons],
                 new double[draws][series]);
-        StateMixture mixture = marginal.mixture();
         for (int k = 0; k < draws; k++) {
             double[] u = sample.draw(chosen[k]);
-            if (k == 0 || chosen[k] != chosen[k - 1]) {
-                marginal.evaluate(u);
-                mixture = sample.states(chosen[k]);
-            }
-            double[] z = mixture.choose(random);
+            double[] z = sample.states(chosen[k]);
+            marginal.parameters(u);
             outer.natural(u, result.theta[k]);
             result.put(k, z, density, random.nextGaussian());
             System.arraycopy(z, 2 * density.seasons, result.logQ[k], 0, series);

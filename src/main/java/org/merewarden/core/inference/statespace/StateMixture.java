@@ -18,11 +18,11 @@ import java.util.random.RandomGenerator;
 final class StateMixture {
     private final StateDensity density;
     private final StateProposal[] proposals;
+    private final double[] logTerms;
     private final double[] logShare;
     private final double[][] draws;
     private final double[] logWeights;
     private int modes;
-    private double logLikelihood;
 
     StateMixture(StateDensity density, int mostModes) {
         this.density = density;
@@ -30,54 +30,47 @@ final class StateMixture {
         for (int m = 0; m < mostModes; m++) {
             proposals[m] = new StateProposal(density.matrix.band, density.matrix.borders);
         }
+        logTerms = new double[mostModes];
         logShare = new double[mostModes];
         draws = new double[2 * mostModes][density.size];
         logWeights = new double[2 * mostModes];
     }
 
-    void begin(double[] theta) {
-        density.parameters(theta, 0);
+    void clear() {
         modes = 0;
     }
 
-    /** A mode with its Laplace term; left out where its Hessian is not positive definite after all. */
+    /** A mode with its Laplace term; the density's matrix holds the factored Hessian next to it. */
     void add(double[] centre, double logTerm) {
-        density.evaluate(centre);
-        density.addCurvature(1);
-        if (proposals[modes].at(centre, density.matrix)) {
-            logShare[modes++] = logTerm;
-        }
+        proposals[modes].keep(centre, density.matrix);
+        logTerms[modes++] = logTerm;
     }
 
-    /** Draws one pair per mode; returns ln p̂(data | θ), −∞ without modes. */
+    /** Draws one pair per mode for the density's present parameters; returns ln p̂(data | θ), −∞ without modes. */
     double draw(RandomGenerator random) {
         normalise();
+        for (int m = 0; m < modes; m++) {
+            proposals[m].prepare();
+        }
         double total = Double.NEGATIVE_INFINITY;
         for (int m = 0; m < modes; m++) {
             proposals[m].draw(random, draws[2 * m], draws[2 * m + 1]);
             for (int side = 2 * m; side <= 2 * m + 1; side++) {
-                double weight =
-                        logShare[m] + Math.log(0.5) - logMixture(draws[side], m) - density.evaluate(draws[side]);
+                double weight = logShare[m] + Math.log(0.5) - logMixture(draws[side], m) - density.value(draws[side]);
                 logWeights[side] = Double.isNaN(weight) ? Double.NEGATIVE_INFINITY : weight;
                 total = logSum(total, logWeights[side]);
             }
         }
-        logLikelihood = total;
         return total;
-    }
-
-    /** ln p̂(data | θ) of the last draw. */
-    double logLikelihood() {
-        return logLikelihood;
     }
 
     private void normalise() {
         double sum = Double.NEGATIVE_INFINITY;
         for (int m = 0; m < modes; m++) {
-            sum = logSum(sum, logShare[m]);
+            sum = logSum(sum, logTerms[m]);
         }
         for (int m = 0; m < modes; m++) {
-            logShare[m] -= sum;
+            logShare[m] = logTerms[m] - sum;
         }
     }
 

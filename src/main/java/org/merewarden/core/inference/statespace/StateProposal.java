@@ -14,11 +14,11 @@ import org.apache.commons.math3.special.Gamma;
  *
  * <p>Along the widest directions (the level of the biomass path, the level of the harvest path) a posterior can be much
  * heavier than its curvature at the mode tells; elsewhere the seasons' own records hold it. The directions are the
- * leading eigenvectors of H⁻¹ by {@value #ITERATIONS} power iterations: they need not be exact.
+ * leading eigenvectors of H⁻¹ after one power iteration from a shift of all biomass and of all harvest: they need not be
+ * exact.
  */
 final class StateProposal {
     static final int FREEDOM = 4;
-    private static final int ITERATIONS = 3;
     private static final int DIRECTIONS = 2;
     private static final double HALF_LOG_TWO_PI = 0.5 * Math.log(2 * Math.PI);
     private static final double LOG_T =
@@ -42,25 +42,23 @@ final class StateProposal {
         product = new double[size];
     }
 
-    /** Takes a mode and the exact Hessian there; false where that is not positive definite. */
-    boolean at(double[] mode, BorderedBand exact) {
+    /** Takes a mode, not to be changed afterwards, and the factored Hessian next to it. */
+    void keep(double[] mode, BorderedBand factored) {
         centre = mode;
-        hessian.copy(exact);
-        if (!hessian.factor()) {
-            return false;
-        }
+        hessian.copy(factored);
+    }
+
+    /** Makes what was kept last ready for draws. */
+    void prepare() {
         halfLogDeterminant = 0.5 * hessian.logDeterminant();
         for (int k = 0; k < DIRECTIONS; k++) {
-            for (int i = 0; i < mode.length; i++) {
+            for (int i = 0; i < centre.length; i++) {
                 boolean biomass = i < hessian.band && i % 2 == 0;
                 direction[k][i] = biomass ? 1 - k : i < hessian.band ? 2 * k - 1 : k - 1;
             }
-            for (int iteration = 0; iteration < ITERATIONS; iteration++) {
-                hessian.solve(direction[k], direction[k]);
-                orthonormal(k);
-            }
+            hessian.solve(direction[k], direction[k]);
+            orthonormal(k);
         }
-        return true;
     }
 
     /** Makes direction k H-orthogonal to the earlier ones and of unit length, and sets its dual H d. */
