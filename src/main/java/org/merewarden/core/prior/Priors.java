@@ -31,8 +31,13 @@ public record Priors(Prior msy, Prior fmsy, Prior initialFraction) {
 
     /** The office's own prior of a parameter, for all series; empty where it stated none. */
     public static Optional<Prior> own(Evidence evidence, String parameter) {
+        return own(evidence, parameter, "");
+    }
+
+    /** The office's own prior of a parameter for one series alone; empty where it stated none. */
+    public static Optional<Prior> own(Evidence evidence, String parameter, String series) {
         return evidence.priors().stream()
-                .filter(p -> p.parameter().equals(parameter) && p.series().isEmpty())
+                .filter(p -> p.parameter().equals(parameter) && p.series().equals(series))
                 .findFirst()
                 .map(Priors::stated);
     }

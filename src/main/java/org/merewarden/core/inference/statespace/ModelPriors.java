@@ -1,8 +1,8 @@
 package org.merewarden.core.inference.statespace;
 
+import java.util.List;
 import java.util.Optional;
 import org.merewarden.core.evidence.Evidence;
-import org.merewarden.core.evidence.PriorRecord;
 import org.merewarden.core.prior.Prior;
 import org.merewarden.core.prior.Priors;
 
@@ -28,11 +28,14 @@ record ModelPriors(
         Prior harvestSd,
         Prior firstHarvestRate,
         Prior shape) {
-    private static final Prior PROCESS = standard("process_sd", 0.1, 0.4);
-    private static final Prior HARVEST = standard("harvest_sd", 0.3, 0.5);
-    private static final Prior FIRST_RATE = standard("first_harvest_rate", 0.15, 1);
-    private static final Prior SCHAEFER = standard("shape", 1, 0);
-    private static final Prior OBSERVATION = standard("observation_sd", 0.2, 0.4);
+    private static final String SCATTER = "The usual size of this scatter.";
+    private static final Prior PROCESS = standard("process_sd", 0.1, 0.4, SCATTER);
+    private static final Prior HARVEST = standard("harvest_sd", 0.3, 0.5, SCATTER);
+    private static final Prior FIRST_RATE =
+            standard("first_harvest_rate", 0.15, 1, "A moderate rate, known to a factor of three.");
+    private static final Prior SCHAEFER =
+            standard("shape", 1, 0, "Fixed at Graham–Schaefer: few records tell the shape of growth.");
+    private static final Prior OBSERVATION = standard("observation_sd", 0.2, 0.4, SCATTER);
 
     static ModelPriors of(Evidence evidence) {
         Priors priors = Priors.forStock(evidence);
@@ -46,24 +49,25 @@ record ModelPriors(
                 ownElse(evidence, SCHAEFER));
     }
 
+    /** Those that belong to no series, in the order in which they are shown. */
+    List<Prior> ofAllSeries() {
+        return List.of(msy, fmsy, initialFraction, firstHarvestRate, processSd, harvestSd, shape);
+    }
+
     static Prior observationSd(Evidence evidence, String series) {
         return own(evidence, "observation_sd", series).orElse(OBSERVATION);
     }
 
     /** The statement for this series, else the one for all series. */
     static Optional<Prior> own(Evidence evidence, String parameter, String series) {
-        Optional<PriorRecord> ofSeries = evidence.priors().stream()
-                .filter(p -> p.parameter().equals(parameter) && p.series().equals(series))
-                .findFirst();
-        return ofSeries.map(p -> new Prior(parameter, p.median(), p.logSd(), "stated by the office", "", ""))
-                .or(() -> Priors.own(evidence, parameter));
+        return Priors.own(evidence, parameter, series).or(() -> Priors.own(evidence, parameter));
     }
 
     private static Prior ownElse(Evidence evidence, Prior other) {
         return Priors.own(evidence, other.parameter()).orElse(other);
     }
 
-    private static Prior standard(String parameter, double median, double logSd) {
-        return new Prior(parameter, median, logSd, "default", "The usual size of this scatter.", "our judgement");
+    private static Prior standard(String parameter, double median, double logSd, String reason) {
+        return new Prior(parameter, median, logSd, "default", reason, "our judgement");
     }
 }
