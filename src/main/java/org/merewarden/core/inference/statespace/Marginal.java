@@ -2,6 +2,7 @@ package org.merewarden.core.inference.statespace;
 
 import java.util.ArrayList;
 import java.util.List;
+import java.util.Optional;
 
 /**
  * ln p(θ, data) of the outer parameters with the hidden states integrated out by Laplace, summed over distinct modes.
@@ -215,6 +216,15 @@ final class Marginal {
                 anchors.add(Anchor.at(u, found[m], density, outer));
             }
         }
+    }
+
+    /** The best mode of the states at the u of the last {@link #evaluate}; none where it found none. */
+    Optional<double[]> likeliestStates() {
+        int best = 0;
+        for (int m = 1; m < modes; m++) {
+            best = terms[m] > terms[best] ? m : best;
+        }
+        return modes == 0 ? Optional.empty() : Optional.of(found[best].clone());
     }
 
     /** The states at the u of the last {@link #evaluate}, until the next. */

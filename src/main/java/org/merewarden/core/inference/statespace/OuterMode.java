@@ -28,16 +28,26 @@ final class OuterMode {
     private final double[][] inverse;
 
     OuterMode(ToDoubleFunction<double[]> logDensity, double[] start) {
+        this(logDensity, start, halfUnit(start.length));
+    }
+
+    /** {@code inverse}: a positive definite guess of the inverse curvature; it is overwritten. */
+    OuterMode(ToDoubleFunction<double[]> logDensity, double[] start, double[][] inverse) {
         this.logDensity = logDensity;
+        this.inverse = inverse;
         d = start.length;
         mode = start.clone();
-        inverse = new double[d][d];
-        for (int k = 0; k < d; k++) {
-            inverse[k][k] = 0.5;
-        }
         value = cost(mode);
         gradient = gradient();
         for (int step = 0; step < MOST_STEPS && norm(gradient) > FLAT && advance(); step++) {}
+    }
+
+    private static double[][] halfUnit(int d) {
+        double[][] result = new double[d][d];
+        for (int k = 0; k < d; k++) {
+            result[k][k] = 0.5;
+        }
+        return result;
     }
 
     double[] mode() {

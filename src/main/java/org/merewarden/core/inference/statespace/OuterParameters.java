@@ -59,6 +59,15 @@ final class OuterParameters {
         }
     }
 
+    /** The u of these θ; what is fixed does not matter. */
+    double[] standard(double[] theta) {
+        double[] u = new double[free.length];
+        for (int k = 0; k < free.length; k++) {
+            u[k] = (theta[free[k]] - middle[free[k]]) / spread[free[k]];
+        }
+        return u;
+    }
+
     /** ln of the prior density of u. */
     double logPrior(double[] u) {
         double sum = 0;

@@ -3,6 +3,7 @@ package org.merewarden.core.inference.statespace;
 import java.util.ArrayList;
 import java.util.Arrays;
 import java.util.List;
+import java.util.Set;
 import java.util.stream.IntStream;
 import java.util.stream.Stream;
 import org.jspecify.annotations.Nullable;
@@ -142,6 +143,27 @@ record SeasonData(
             notes.add("No catch is recorded for " + String.join(", ", missing)
                     + "; the harvest there is inferred from its neighbours.");
         }
+    }
+
+    /** The same seasons without some values and, where {@code gone} is not negative, that index or effort series. */
+    SeasonData without(Set<Integer> values, int gone) {
+        List<Series> kept = new ArrayList<>(series);
+        if (gone >= 0) {
+            kept.remove(gone);
+        }
+        return new SeasonData(
+                firstYear,
+                seasons,
+                unitTonnes,
+                removals,
+                stocked,
+                logSurvival,
+                killVariance,
+                logArea,
+                observations.without(values, gone),
+                kept,
+                notes,
+                failure);
     }
 
     /** Whether a season has an index or biomass value, one below detection included. */

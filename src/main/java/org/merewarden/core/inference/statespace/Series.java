@@ -10,6 +10,8 @@ import org.merewarden.core.prior.Prior;
  * @param logMean mean of the logarithms of its values; observations are kept relative to it
  * @param qMean prior mean of the hidden ln q
  * @param qSd prior standard deviation of it
+ * @param catchability the same prior in the series' own units: index per t; F per unit of effort
  * @param scatter prior of the series' standard deviation
  */
-record Series(String name, boolean effort, double logMean, double qMean, double qSd, Prior scatter) {}
+record Series(
+        String name, boolean effort, double logMean, double qMean, double qSd, Prior catchability, Prior scatter) {}

@@ -25,6 +25,7 @@ import org.merewarden.core.prior.Prior;
 final class SurveysAndEffort {
     private static final double WIDE = 5;
     private static final double LEAST_SD = 1e-3;
+    private static final double LARGEST_LOG = 700;
     private static final double DEFAULT_BIOMASS_CV = 0.3;
     private static final double LEAST_BIOMASS_CV = 0.01;
 
@@ -85,7 +86,8 @@ final class SurveysAndEffort {
                 survey.timeOfYear(),
                 Math.log(survey.value() / unit),
                 sd * sd,
-                -1));
+                -1,
+                survey.series()));
     }
 
     private void index(String name, List<SurveyRecord> records) {
@@ -115,7 +117,8 @@ final class SurveysAndEffort {
                     r.timeOfYear(),
                     Math.log(value) - mean,
                     cv * cv,
-                    series.size() - 1));
+                    series.size() - 1,
+                    name));
         }
     }
 
@@ -147,7 +150,7 @@ final class SurveysAndEffort {
                 series.add(series(name, true, mean, rate, 0));
                 for (int i = 0; i < logs.length; i++) {
                     int season = records.get(i).year() - first;
-                    points.add(new Point(season, Observations.EFFORT, 0, logs[i] - mean, 0, series.size() - 1));
+                    points.add(new Point(season, Observations.EFFORT, 0, logs[i] - mean, 0, series.size() - 1, name));
                 }
             }
         });
@@ -155,13 +158,28 @@ final class SurveysAndEffort {
 
     /** Hidden ln q of an index is ln(q · unit) − mean ln I; of an effort series ln q + mean ln E. */
     private Series series(String name, boolean effort, double mean, double usualQ, double logUnit) {
+        double shift = effort ? -mean : mean - logUnit;
         Prior scatter = ModelPriors.observationSd(evidence, name);
         return ModelPriors.own(evidence, "catchability", name)
-                .map(own -> {
-                    double hidden = effort ? Math.log(own.median()) + mean : Math.log(own.median()) + logUnit - mean;
-                    return new Series(name, effort, mean, hidden, Math.max(LEAST_SD, own.logSd()), scatter);
-                })
-                .orElse(new Series(name, effort, mean, usualQ, WIDE, scatter));
+                .map(own -> new Series(
+                        name,
+                        effort,
+                        mean,
+                        Math.log(own.median()) - shift,
+                        Math.max(LEAST_SD, own.logSd()),
+                        own,
+                        scatter))
+                .orElseGet(() -> new Series(name, effort, mean, usualQ, WIDE, wide(usualQ + shift), scatter));
+    }
+
+    private static Prior wide(double logMedian) {
+        return new Prior(
+                "catchability",
+                Math.exp(Math.max(-LARGEST_LOG, Math.min(LARGEST_LOG, logMedian))),
+                WIDE,
+                "default",
+                "So wide that the records alone decide; its middle takes the stock as half its capacity.",
+                "our judgement");
     }
 
     private boolean usable(String name, int values, double[] logs) {
