@@ -5,6 +5,7 @@ import java.util.Map;
 import java.util.SplittableRandom;
 import java.util.random.RandomGenerator;
 import org.merewarden.core.dynamics.SurplusProduction;
+import org.merewarden.core.evidence.Evidence;
 import org.merewarden.core.inference.Diagnostics;
 import org.merewarden.core.inference.EvidenceStrength;
 import org.merewarden.core.inference.Posterior;
@@ -21,7 +22,7 @@ import org.merewarden.core.prior.Prior;
 final class PriorsAlone {
     private PriorsAlone() {}
 
-    static Posterior of(ModelPriors priors, int lastClosedYear, long seed) {
+    static Posterior of(ModelPriors priors, Evidence evidence, int lastClosedYear, long seed) {
         int draws = StateSpaceFit.DRAWS;
         double[] msy = new double[draws];
         double[] fmsy = new double[draws];
@@ -50,7 +51,17 @@ final class PriorsAlone {
                 Map.of("msy_t", Quantiles.of(msy, 0.5), "fmsy", Quantiles.of(fmsy, 0.5)),
                 EvidenceStrength.NONE,
                 new Verdict(true, sentences(priors)),
-                Diagnostics.NONE);
+                diagnostics(priors, evidence, fmsy, biomass));
+    }
+
+    /** Nothing is learned, so every overlap is 1. */
+    private static Diagnostics diagnostics(ModelPriors priors, Evidence evidence, double[] fmsy, double[][] biomass) {
+        return new Diagnostics(
+                priors.ofAllSeries().stream().map(Learning::untaught).toList(),
+                List.of(),
+                List.of(),
+                null,
+                NextEvidence.ofPriors(priors, evidence, fmsy, biomass));
     }
 
     private static double draw(Prior prior, RandomGenerator random) {

@@ -43,7 +43,7 @@ public final class StateSpaceAssessor implements Assessor {
             return nothing(lastClosedYear, EvidenceStrength.THIN, List.of(failure));
         }
         if (data.seasons() == 0) {
-            return PriorsAlone.of(priors, lastClosedYear, seed);
+            return PriorsAlone.of(priors, evidence, lastClosedYear, seed);
         }
         return posterior(StateSpaceFit.of(data, priors, seed), lastClosedYear);
     }
