@@ -12,7 +12,7 @@ import org.merewarden.core.prior.Prior;
  * @param learned each parameter before and after the data; fixed ones included
  * @param series each index and effort series and each kind of absolute biomass
  * @param residuals standardised one by one, in order of series, season and time
- * @param retrospective the same estimate with the last seasons taken away; null without at least two peels
+ * @param retrospective the same estimate with the last seasons taken away; null without at least two peels (too few seasons)
  * @param helps what further evidence would narrow the result, most helpful first
  */
 public record Diagnostics(
@@ -64,12 +64,13 @@ public record Diagnostics(
      * @param values how many entered
      * @param contrast largest over smallest value above zero
      * @param meanResidual of the standardised residuals
-     * @param residualSd their standard deviation; 1 is expected
+     * @param residualSd their standard deviation; somewhat under 1 is expected, since states lean towards the values
      * @param runsProbability two-sided probability of so few or so many runs of sign if residuals were independent
      * @param lagOne their lag-1 correlation
-     * @param scaledError one-year-ahead hindcast error over that of "same as last time" (mean absolute scaled error)
+     * @param scaledError one-year-ahead hindcast error over the usual error of "same as last time" (mean absolute scaled
+     *     error); null with fewer than three predictions
      * @param hindcasts how many predictions that rests on
-     * @param msyWithout MSY without the series, t/yr, at the most likely parameters
+     * @param msyWithout MSY without the series, t/yr, at the most likely parameters; null where no other series remains
      * @param msyWith the same with it
      * @param relativeBiomassWithout present B/BMSY without the series, at the most likely parameters
      * @param relativeBiomassWith the same with it
@@ -96,14 +97,14 @@ public record Diagnostics(
      * @param series its name
      * @param year season
      * @param timeOfYear 0–1
-     * @param standardised (ln observed − ln expected)/sd
+     * @param standardised (ln observed − ln expected)/sd, mean over draws
      */
     public record Residual(String series, int year, double timeOfYear, double standardised) {}
 
     /**
      * Retrospective peels: the assessment as it would have been made some seasons ago, at the most likely parameters.
      *
-     * @param peels the full data first, then one season less each
+     * @param peels the full data first, then one season less each, counted from the last season with a record
      * @param rhoBiomass Mohn's ρ of biomass at the start of each peel's last season: mean of (peel − full)/full
      * @param rhoRelativeBiomass the same of B/BMSY
      * @param rhoFishing the same of F in each peel's last season
@@ -115,6 +116,8 @@ public record Diagnostics(
     }
 
     /**
+     * The most likely course of the stock by the records up to one season.
+     *
      * @param lastYear last season whose records count
      * @param msyTonnes MSY, t/yr
      * @param biomassTonnes from the assessment's first season to lastYear, at the season's start, t

@@ -20,7 +20,7 @@ import org.merewarden.core.inference.Verdict;
  * <p>The model: {@link StateDensity}; its priors: {@link ModelPriors}; the estimation: {@link Ladder}. A stock without any
  * record of a season gets the priors alone ({@link PriorsAlone}); a stock that lives from stocking alone gets no
  * draws. Otherwise {@value StateSpaceFit#DRAWS} equally weighted draws, also where the estimation did not settle, as long
- * as any was possible. Estimates are posterior medians: {@code msy_t, fmsy, r, k_t, shape, process_sd, harvest_sd,
+ * as any was possible; with {@link StateSpaceDiagnostics} and, from them, the {@link StateSpaceStrength strength}. Estimates are posterior medians: {@code msy_t, fmsy, r, k_t, shape, process_sd, harvest_sd,
  * observation_sd:SERIES, catchability:SERIES} (index per t; F per unit of effort), and {@code
  * log_evidence, effective_draws, pareto_k, rung, cut_share}. Never throws on valid records and never yields NaN.
  */
@@ -45,7 +45,7 @@ public final class StateSpaceAssessor implements Assessor {
         if (data.seasons() == 0) {
             return PriorsAlone.of(priors, evidence, lastClosedYear, seed);
         }
-        return posterior(StateSpaceFit.of(data, priors, seed), lastClosedYear);
+        return posterior(StateSpaceFit.of(data, priors, seed), evidence, lastClosedYear);
     }
 
     private static Posterior nothing(int lastClosedYear, EvidenceStrength strength, List<String> reasons) {
@@ -62,12 +62,13 @@ public final class StateSpaceAssessor implements Assessor {
                 new Verdict(false, reasons));
     }
 
-    private static Posterior posterior(StateSpaceFit fit, int lastClosedYear) {
-        EvidenceStrength strength = StateSpaceStrength.of(fit);
-        Verdict verdict = new Verdict(fit.ladder().settled(), reasons(fit));
+    private static Posterior posterior(StateSpaceFit fit, Evidence evidence, int lastClosedYear) {
+        Diagnostics diagnostics = StateSpaceDiagnostics.of(fit, evidence);
+        StateSpaceStrength judged = StateSpaceStrength.of(fit, diagnostics);
+        Verdict verdict = new Verdict(fit.ladder().settled(), reasons(fit, judged));
         double[] msy = fit.parameter(OuterParameters.MSY);
         if (msy.length == 0) {
-            return nothing(lastClosedYear, strength, verdict.reasons());
+            return nothing(lastClosedYear, judged.strength(), verdict.reasons());
         }
         double[] shape = Arrays.stream(fit.parameter(OuterParameters.SHAPE))
                 .map(n -> n < SeasonStep.LEAST_SHAPE ? 0 : n)
@@ -83,9 +84,9 @@ public final class StateSpaceAssessor implements Assessor {
                 fit.draws().removals(),
                 parameters(fit),
                 estimates(fit, shape),
-                strength,
+                judged.strength(),
                 verdict,
-                Diagnostics.NONE);
+                diagnostics);
     }
 
     private static Map<String, double[]> parameters(StateSpaceFit fit) {
@@ -126,13 +127,14 @@ public final class StateSpaceAssessor implements Assessor {
         return estimates;
     }
 
-    private static List<String> reasons(StateSpaceFit fit) {
+    private static List<String> reasons(StateSpaceFit fit, StateSpaceStrength judged) {
         List<String> sentences = new ArrayList<>();
         List<String> rungs = fit.ladder().rungs();
         if (!fit.ladder().settled()) {
             sentences.add("Not settled. " + rungs.get(0));
         }
         sentences.add(restsOn(fit.data()));
+        sentences.addAll(judged.reasons());
         sentences.addAll(fit.data().notes());
         sentences.addAll(fit.ladder().settled() ? rungs : rungs.subList(1, rungs.size()));
         double cut = fit.ladder().sample().truncatedShare();

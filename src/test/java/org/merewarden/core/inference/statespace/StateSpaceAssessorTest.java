@@ -153,9 +153,6 @@ class StateSpaceAssessorTest {
 
     @Test
     void strengthFollowsTheRule() {
-        assertThat(StateSpaceStrength.of(20, 2.5, 0.2, 0.4)).isEqualTo(EvidenceStrength.STRONG);
-        assertThat(StateSpaceStrength.of(14, 2.5, 0.2, 0.4)).isEqualTo(EvidenceStrength.FAIR);
-        assertThat(StateSpaceStrength.of(20, 1.3, 0.2, 0.4)).isEqualTo(EvidenceStrength.THIN);
         assertThat(assessor.assess(Cases.albacoreReference().evidence(), 1989, 1)
                         .strength())
                 .isIn(EvidenceStrength.STRONG, EvidenceStrength.FAIR);
