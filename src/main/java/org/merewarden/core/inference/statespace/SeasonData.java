@@ -18,7 +18,9 @@ import org.merewarden.core.evidence.SurveyRecord;
  * One stock's evidence in arrays by season t = 0 … T − 1, the last one closed; tonnes in units of the prior median of
  * MSY and indices relative to their series' mean, so that nothing depends on units.
  *
- * <p>Season 0 is the first with a catch, an effort or a survey; without any, T = 0. At most {@value #MOST_SEASONS}.
+ * <p>Season 0 is the first with a catch, an effort or a survey; without any, T = 0. At most {@value #MOST_SEASONS}. Where
+ * records (a closure counts as one) ended more than {@value #LONGEST_TAIL} seasons before the last closed season, the data
+ * end with them, and a sentence says so.
  *
  * @param firstYear year of season 0
  * @param seasons T
@@ -48,6 +50,7 @@ record SeasonData(
         @Nullable String failure) {
 
     static final int MOST_SEASONS = 300;
+    static final int LONGEST_TAIL = 5;
     private static final double LARGEST_KILL = 0.99;
     private static final double LARGEST_TONNES = 1e12;
 
@@ -61,12 +64,31 @@ record SeasonData(
                 .filter(year -> year <= lastClosedYear)
                 .toArray();
         int first = IntStream.of(years).min().orElse(lastClosedYear + 1);
-        long length = (long) lastClosedYear - first + 1;
+        List<String> notes = new ArrayList<>();
+        int last = last(evidence, years, lastClosedYear, notes);
+        long length = (long) last - first + 1;
         String failure = length > MOST_SEASONS
-                ? "Records from " + first + " to " + lastClosedYear + " span more than " + MOST_SEASONS
+                ? "Records from " + first + " to " + last + " span more than " + MOST_SEASONS
                         + " seasons; a year may be mistyped."
                 : tooLarge(evidence);
-        return build(evidence, first, failure == null ? (int) length : 0, priors, failure);
+        return build(evidence, first, failure == null ? (int) length : 0, priors, notes, failure);
+    }
+
+    private static int last(Evidence evidence, int[] years, int lastClosedYear, List<String> notes) {
+        int first = IntStream.of(years).min().orElse(lastClosedYear);
+        IntStream closures = evidence.events().stream()
+                .filter(e -> e.kind().equals("closure"))
+                .mapToInt(EventRecord::year);
+        int known = IntStream.concat(IntStream.of(years), closures)
+                .filter(year -> first <= year && year <= lastClosedYear)
+                .max()
+                .orElse(lastClosedYear);
+        if ((long) lastClosedYear - known <= LONGEST_TAIL) {
+            return lastClosedYear;
+        }
+        notes.add("Records end with " + known + ": all of this speaks of the start of " + (known + 1)
+                + ", not of the present.");
+        return known;
     }
 
     private static @Nullable String tooLarge(Evidence evidence) {
@@ -76,8 +98,12 @@ record SeasonData(
     }
 
     private static SeasonData build(
-            Evidence evidence, int first, int seasons, ModelPriors priors, @Nullable String failure) {
-        List<String> notes = new ArrayList<>();
+            Evidence evidence,
+            int first,
+            int seasons,
+            ModelPriors priors,
+            List<String> notes,
+            @Nullable String failure) {
         double unit = priors.msy().median();
         SurveysAndEffort values = new SurveysAndEffort(evidence, first, seasons, unit, priors, notes);
         SeasonData data = new SeasonData(

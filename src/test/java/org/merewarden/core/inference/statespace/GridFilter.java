@@ -4,7 +4,7 @@ import org.merewarden.core.dynamics.ConstantMortality;
 import org.merewarden.core.dynamics.SurplusProduction;
 
 /**
- * ln p(data | θ) of a stock with catches and absolute biomass by filtering on a fine grid of (x, l), exact up to the grid;
+ * ln p(data | θ) and mean biomass of a stock with catches and absolute biomass by filtering on a fine grid of (x, l), exact up to the grid;
  * written from the model's equations and the dynamics package alone.
  */
 final class GridFilter {
@@ -51,6 +51,15 @@ final class GridFilter {
     }
 
     double logLikelihood() {
+        return Math.log(integral(-1));
+    }
+
+    /** E(B_t | data, θ), t; 0 the first season: the filter once more with every point weighted by its biomass at t. */
+    double meanBiomass(int season) {
+        return integral(season) / integral(-1);
+    }
+
+    private double integral(int weightedAt) {
         SurplusProduction law = SurplusProduction.fromReferencePoints(msy, fmsy, 1);
         double[][] next = new double[SIZE_X][SIZE_L];
         double[][] taken = new double[SIZE_X][SIZE_L];
@@ -73,6 +82,9 @@ final class GridFilter {
                 density = move(density, next);
             }
             observe(density, taken, t, Math.log(law.capacity()));
+            if (t == weightedAt) {
+                weighByBiomass(density, law.capacity());
+            }
         }
         double sum = 0;
         for (double[] row : density) {
@@ -80,7 +92,15 @@ final class GridFilter {
                 sum += each * STEP_X * STEP_L;
             }
         }
-        return Math.log(sum);
+        return sum;
+    }
+
+    private static void weighByBiomass(double[][] density, double capacity) {
+        for (int i = 0; i < SIZE_X; i++) {
+            for (int j = 0; j < SIZE_L; j++) {
+                density[i][j] *= capacity * Math.exp(x(i));
+            }
+        }
     }
 
     private void observe(double[][] density, double[][] taken, int t, double logCapacity) {

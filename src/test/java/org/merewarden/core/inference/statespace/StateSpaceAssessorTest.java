@@ -223,6 +223,27 @@ class StateSpaceAssessorTest {
                 Arguments.of("400 years", new Cases().caught(1600, 3, null).caught(2000, 3, null), 2000));
     }
 
+    /** As the difference-equation fit does: more than five seasons without any record are not bridged. */
+    @Test
+    void recordsThatEndedLongAgoAreAssessedToTheirOwnEnd() {
+        Evidence evidence = Cases.albacoreReference().evidence();
+        Posterior recent = assessor.assess(evidence, 1994, 1);
+        assertThat(recent.lastYear()).isEqualTo(1994);
+        assertThat(recent.verdict().reasons()).noneMatch(s -> s.contains("not of the present"));
+        Posterior past = assessor.assess(evidence, 1995, 1);
+        assertThat(past.lastYear()).isEqualTo(1989);
+        assertThat(past.verdict().reasons()).anyMatch(s -> s.contains("start of 1990, not of the present"));
+        assertThat(past.msyTonnes())
+                .containsExactly(assessor.assess(evidence, 1989, 1).msyTonnes());
+        Cases closed = Cases.albacoreReference();
+        closed.events.add(new EventRecord("c", 1993, "closure", null, null, null, null, null));
+        assertThat(assessor.assess(closed.evidence(), 1997, 1).lastYear()).isEqualTo(1997);
+        Cases surveyed = Cases.albacoreReference();
+        surveyed.catches.removeIf(c -> c.year() > 1980);
+        assertThat(assessor.assess(surveyed.evidence(), 1992, 1).lastYear()).isEqualTo(1992);
+        assertThat(assessor.assess(surveyed.evidence(), 2000, 1).lastYear()).isEqualTo(1989);
+    }
+
     private static Cases scaledCatches(double factor) {
         Cases cases = Cases.albacore(0.2);
         cases.catches.replaceAll(
