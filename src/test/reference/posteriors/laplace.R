@@ -2,8 +2,7 @@
 # Hessians by automatic differentiation (Kristensen et al. 2016, J. Stat. Softw. 70(5)), at fixed theta: the prior
 # medians, about the posterior medians of reference.csv, these with single parameters moved by one posterior log-sd, and
 # six random points around them.
-# The states' mode is looked for from several starts and the highest is taken; where two modes differ, both are
-# summed (two_modes says how many were found and ln_p is the sum, ln_p_best the highest alone).
+# The states' modes are looked for from twelve starts; ln_p sums over the distinct ones, ln_p_best is the highest alone.
 # Also the mode of ln p(u) + ln p(data | u) over the outer parameters.
 #   Rscript laplace.R CASE...
 source("tables.R"); source("joint.R")
