@@ -32,7 +32,9 @@ class StateSpaceAssessorTest {
 
     /**
      * Long general-purpose MCMC on the same model and data (computed). The reference states its medians as good to about
-     * 3 % (r) and 1 % (MSY); 3 % is taken for the others. The medians of r and MSY must lie within that and 2 standard
+     * 3 % (r) and 1 % (MSY); runs with thirty times its effective size ({@code src/test/reference/posteriors/albacore})
+     * bear that out: it lies up to 1.5 of these errors below them in r and MSY (MSY 2.5 %: 14.70 against 15.3), and within
+     * 0.7 % in everything else, for which 1 % is taken. The medians of r and MSY must lie within that and 2 standard
      * errors of ours. For every quantile the stated error counts as the standard error of the median and grows with
      * √(p(1 − p))/φ(z_p) and with the local spread, read from the reference's nearest two quantiles: all 25 within 2
      * joint standard errors. Ours, eight seeds averaged, counts as 5,000 effective draws.
@@ -81,7 +83,7 @@ class StateSpaceAssessorTest {
                 double sharpness =
                         Math.sqrt(p[i] * (1 - p[i])) / normal.density(normal.inverseCumulativeProbability(p[i]));
                 double own = spread * sharpness / Math.sqrt(OWN_EFFECTIVE);
-                double stated = q == 1 ? 0.01 : 0.03;
+                double stated = q == 0 ? 0.03 : 0.01;
                 double middle = Math.log(reference[q][3] / reference[q][1]) / 1.349;
                 double theirs = stated * sharpness / Math.sqrt(Math.PI / 2) * spread / middle;
                 double difference = Math.log(mean[q][i] / reference[q][i]);
