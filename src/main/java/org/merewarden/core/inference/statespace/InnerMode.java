@@ -10,7 +10,7 @@ package org.merewarden.core.inference.statespace;
  *
  * <p>H: exact Hessian of U ({@link StateDensity}), the Gauss–Newton matrix where the exact one is not positive definite;
  * N: number of states. A step moves no biomass or harvest state by more than {@value #LONGEST_STEP}, and is halved until
- * U falls (or stays, to the {@value #SLACK} by which a change of {@link Quadrature} may move it). Without a mode after {@value #MOST_STEPS} steps the result is "not found", never an exception.
+ * U falls (or stays, to the {@value #SLACK} by which a change of {@link Quadrature} may move it). Without a mode after the given number of steps the result is "not found", never an exception.
  */
 final class InnerMode {
     /** Of λ², for values whose differences matter. */
@@ -21,7 +21,11 @@ final class InnerMode {
 
     private static final double SLACK = 1e-6;
     private static final double LONGEST_STEP = 2;
-    private static final int MOST_STEPS = 50;
+
+    /** From a start that may be far, and from an anchor, whose prediction is near or useless. */
+    static final int MANY_STEPS = 50;
+
+    static final int FEW_STEPS = 20;
     private static final int MOST_HALVINGS = 20;
     private static final double HALF_LOG_TWO_PI = 0.5 * Math.log(2 * Math.PI);
 
@@ -51,10 +55,11 @@ final class InnerMode {
      * Moves z to a mode. On success the density's matrix holds the factor of the exact Hessian next to the mode.
      *
      * @param tolerance of λ²
+     * @param mostSteps of Newton's method
      */
-    boolean find(double[] z, double tolerance) {
+    boolean find(double[] z, double tolerance, int mostSteps) {
         double u = evaluate(z);
-        for (int k = 0; k < MOST_STEPS && Double.isFinite(u); k++) {
+        for (int k = 0; k < mostSteps && Double.isFinite(u); k++) {
             density.addCurvature(1);
             boolean exact = density.matrix.factor();
             if (!exact) {

@@ -18,8 +18,11 @@ import java.util.random.RandomGenerator;
  *
  * <p>Weighting is accepted when ESS ≥ {@value #LEAST_EFFECTIVE} and k̂ &lt; {@value #LARGEST_SHAPE}, chains when R̂ &lt;
  * 1.01 and bulk ESS ≥ {@value #LEAST_EFFECTIVE}, also after weighting; a rung goes on to {@value #WANTED_EFFECTIVE}
- * effective draws while that is cheap. Each rung leaves a sentence. No more than {@value #MOST_EVALUATIONS} evaluations of
- * the marginal density in all, and none of them waits for a clock: the same seed gives the same bits.
+ * effective draws while that is cheap. Each rung leaves a sentence.
+ *
+ * <p>Bounded: at most {@value #MOST_EVALUATIONS} evaluations of the marginal density, and no further round of weighting
+ * once {@value #MOST_WORK} evaluations × hidden states of the inner density are spent, about two seconds. No clock is
+ * asked: the same seed gives the same bits.
  */
 final class Ladder {
     static final double LEAST_EFFECTIVE = 400;
@@ -39,6 +42,7 @@ final class Ladder {
     private static final int MOST_RESTARTS = 2;
 
     static final int MOST_EVALUATIONS = 100_000;
+    static final long MOST_WORK = 20_000_000;
 
     private final Marginal marginal;
     private final RandomGenerator random;
@@ -94,10 +98,11 @@ final class Ladder {
         }
         for (int restart = 0; restart <= MOST_RESTARTS; restart++) {
             firstRung();
-            if (restart == MOST_RESTARTS || !furtherModes()) {
+            if (restart == MOST_RESTARTS || !work() || !furtherModes()) {
                 break;
             }
         }
+        record("Draws around the most likely parameters");
         if (!settled) {
             secondRung();
         }
@@ -152,10 +157,13 @@ final class Ladder {
         sample = new ImportanceSample(marginal, stateSeed);
         sample.add(new StudentT(mode, covariance), FIRST_ROUND, random);
         sample.add(prior, DEFENSIVE, random);
-        for (int round = 1; round < ROUNDS && !good(WANTED_EFFECTIVE); round++) {
+        for (int round = 1; round < ROUNDS && work() && !good(WANTED_EFFECTIVE); round++) {
             sample.add(sample.adapted(mode, covariance), needed(), random);
         }
-        record("Draws around the most likely parameters");
+    }
+
+    private boolean work() {
+        return marginal.innerEvaluations() * marginal.density().size < MOST_WORK;
     }
 
     /** Looks for modes at draws of the posterior; true if there were any that the anchors did not lead to. */
@@ -172,7 +180,7 @@ final class Ladder {
 
     private void secondRung() {
         rung = 2;
-        for (int round = 0; round < MORE_ROUNDS && !good(LEAST_EFFECTIVE); round++) {
+        for (int round = 0; round < MORE_ROUNDS && work() && !good(LEAST_EFFECTIVE); round++) {
             StudentT whole = sample.adapted(mode, covariance);
             double[] axis = whole.longestAxis();
             StudentT upper = sample.half(axis, 1, covariance, HALF_WIDENED);

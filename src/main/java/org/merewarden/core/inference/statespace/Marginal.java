@@ -82,7 +82,7 @@ final class Marginal {
         }
         for (int a = 0; a < anchors.size(); a++) {
             anchors.get(a).predict(u, found[modes]);
-            accept(tolerance);
+            accept(tolerance, InnerMode.FEW_STEPS);
         }
         if (modes == 0 && rescues > 0) {
             rescues--;
@@ -108,8 +108,8 @@ final class Marginal {
     }
 
     /** Newton from found[modes]; keeps the result if it is a new mode. */
-    private void accept(double tolerance) {
-        if (!inner.find(found[modes], tolerance) || !Double.isFinite(inner.logTerm())) {
+    private void accept(double tolerance, int mostSteps) {
+        if (!inner.find(found[modes], tolerance, mostSteps) || !Double.isFinite(inner.logTerm())) {
             return;
         }
         for (int m = 0; m < modes; m++) {
@@ -137,11 +137,11 @@ final class Marginal {
             for (double eased : EASING) {
                 if (Math.exp(theta[OuterParameters.PROCESS_SD]) < eased) {
                     density.parameters(theta, eased);
-                    inner.find(found[modes], ROUGH);
+                    inner.find(found[modes], ROUGH, InnerMode.MANY_STEPS);
                 }
             }
             density.parameters(theta, 0);
-            accept(InnerMode.SHARP);
+            accept(InnerMode.SHARP, InnerMode.MANY_STEPS);
         }
     }
 
@@ -203,7 +203,7 @@ final class Marginal {
         }
         int others = modes;
         candidate.predict(u, found[modes]);
-        accept(InnerMode.SHARP);
+        accept(InnerMode.SHARP, InnerMode.FEW_STEPS);
         return modes > others && terms[others] > best() - NEGLIGIBLE;
     }
 

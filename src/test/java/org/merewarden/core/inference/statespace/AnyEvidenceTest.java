@@ -17,7 +17,7 @@ import org.merewarden.core.inference.Posterior;
 
 /** Properties that hold whatever the records are. */
 class AnyEvidenceTest {
-    private static final int STOCKS = Integer.getInteger("evidence.stocks", 60);
+    private static final int STOCKS = Integer.getInteger("evidence.stocks", 24);
 
     private final StateSpaceAssessor assessor = new StateSpaceAssessor();
 
@@ -75,6 +75,9 @@ class AnyEvidenceTest {
                 assertThat(fit.marginal().calls())
                         .as("evaluations of seed %d", seed)
                         .isLessThanOrEqualTo(Ladder.MOST_EVALUATIONS);
+                assertThat(fit.marginal().innerEvaluations() * fit.marginal().density().size)
+                        .as("work of seed %d: what the ladder begins below its limit it finishes", seed)
+                        .isLessThanOrEqualTo(3 * Ladder.MOST_WORK);
                 assertThat(fit.ladder().rungs()).hasSizeBetween(1, 3);
             }
         });

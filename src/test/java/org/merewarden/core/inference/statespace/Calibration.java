@@ -27,7 +27,7 @@ final class Calibration {
         this.unsettled = unsettled;
     }
 
-    /** Over the given number of stocks, on all cores; the result does not depend on their number. */
+    /** Over the given number of stocks, other ones for each regime, on all cores, whose number changes nothing. */
     static Calibration of(Regime regime, int stocks) {
         int[][] ranks = IntStream.range(0, stocks)
                 .parallel()
@@ -39,7 +39,7 @@ final class Calibration {
     }
 
     private static int[] ranks(Regime regime, int i) {
-        Simulated stock = Simulated.of(regime, 1000L + i);
+        Simulated stock = Simulated.of(regime, 1_000_000L * (1 + regime.ordinal()) + i);
         ModelPriors priors = ModelPriors.of(stock.evidence);
         SeasonData data = SeasonData.of(stock.evidence, Simulated.LAST, priors);
         StateSpaceFit fit = StateSpaceFit.of(data, priors, i);

@@ -25,6 +25,7 @@ final class GridFilter {
     final double biomassSd;
     final double startMean;
     final double startSd;
+    private double whole;
 
     /** Catches and biomass in t by season, NaN where there is none; biomass at the season's start. */
     GridFilter(
@@ -56,7 +57,8 @@ final class GridFilter {
 
     /** E(B_t | data, θ), t; 0 the first season: the filter once more with every point weighted by its biomass at t. */
     double meanBiomass(int season) {
-        return integral(season) / integral(-1);
+        whole = whole > 0 ? whole : integral(-1);
+        return integral(season) / whole;
     }
 
     private double integral(int weightedAt) {
