@@ -14,9 +14,9 @@ import java.util.random.RandomGenerator;
  * </pre>
  *
  * <p>Two kinds of weight. With Laplace's p they are smooth, and proposals are adapted from them. The sample is judged and
- * resampled by corrected ones, with p = Laplace · min(ρ, {@value #TRUNCATION} ρ̄): ρ = p̂/Laplace from the unbiased p̂ of
+ * resampled by corrected ones, with p = Laplace · min(ρ, √N ρ̄): ρ = p̂/Laplace from the unbiased p̂ of
  * {@link StateMixture}, ρ̄ its weighted geometric mean. Where no ρ is cut the weights are exact; cutting (truncated
- * importance sampling, Ionides 2008, J. Comput. Graph. Stat. 17: 295–311; the bound our judgement) trades the tails that
+ * importance sampling, Ionides 2008, J. Comput. Graph. Stat. 17: 295–311, whose bound √N is recalled) trades the tails that
  * the states' proposals cannot reach for a bounded variance, and {@link #truncatedShare()} tells how often it was needed.
  * Draws more than {@value #NEGLIGIBLE} below the best in ln p are taken as impossible. Each other draw keeps one path of
  * its hidden states, from a generator seeded with the sample's seed and the draw's number.
@@ -28,7 +28,6 @@ final class ImportanceSample {
     private static final double PRIOR_COUNT = 20;
 
     private static final double NEGLIGIBLE = 20;
-    private static final double TRUNCATION = 5;
     private static final double LOWEST_CORRECTION = -20;
 
     private final Marginal marginal;
@@ -148,16 +147,20 @@ final class ImportanceSample {
         for (int i = 0; i < smooth.length; i++) {
             mean += smooth[i] * correction[i];
         }
-        return mean + Math.log(TRUNCATION);
+        return mean + 0.5 * Math.log(correction.length);
     }
 
-    /** Share of the corrected weight that lies with draws whose correction was cut. */
+    /** Share of the exact weight that cutting took away, 0–1. */
     double truncatedShare() {
         double bound = largestCorrection();
-        double[] weights = weights();
+        double[] exact = logTarget.clone();
+        for (int i = 0; i < exact.length; i++) {
+            exact[i] += correction[i];
+        }
+        double[] weights = scaled(logWeights(exact));
         double share = 0;
         for (int i = 0; i < weights.length; i++) {
-            share += correction[i] > bound ? weights[i] : 0;
+            share += correction[i] > bound ? weights[i] * -Math.expm1(bound - correction[i]) : 0;
         }
         return share;
     }

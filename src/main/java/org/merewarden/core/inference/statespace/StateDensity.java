@@ -174,10 +174,27 @@ final class StateDensity {
         return closed ? Double.NEGATIVE_INFINITY : l;
     }
 
+    /** Mean of x_{t+1}; with slopes, its derivatives by x⁺ and l are left in {@link #step}. */
+    double stepFrom(int t, double x, double l, boolean withSlopes) {
+        step.slopes = withSlopes;
+        beginSeason(t, x, l);
+        step.biomassAt(1);
+        if (withSlopes) {
+            knownCatch.eliminate();
+        }
+        step.slopes = true;
+        return step.y + data.logArea()[t] - data.logArea()[t + 1];
+    }
+
+    /** Derivative of x⁺ by x. */
+    double kept(int t, double x) {
+        return data.stocked()[t] == 0 ? 1 : Math.exp(x - afterEvents(t, x) + data.logSurvival()[t]);
+    }
+
     private void season(double[] z, int t) {
         double x = z[2 * t];
         double plus = afterEvents(t, x);
-        double kept = data.stocked()[t] == 0 ? 1 : Math.exp(x - plus + data.logSurvival()[t]);
+        double kept = kept(t, x);
         beginSeason(t, x, z[2 * t + 1]);
         curveXX[t] = slopes ? 0 : curveXX[t];
         curveXL[t] = slopes ? 0 : curveXL[t];

@@ -28,7 +28,7 @@ final class StateMixture {
         this.density = density;
         proposals = new StateProposal[mostModes];
         for (int m = 0; m < mostModes; m++) {
-            proposals[m] = new StateProposal(density.matrix.band, density.matrix.borders);
+            proposals[m] = new StateProposal(density);
         }
         logTerms = new double[mostModes];
         logShare = new double[mostModes];

@@ -4,7 +4,8 @@ import java.util.random.RandomGenerator;
 import org.apache.commons.math3.special.Gamma;
 
 /**
- * The Gaussian at one mode of the hidden states, with heavy tails along its two widest directions.
+ * The Gaussian at one mode of the hidden states, with heavy tails along its two widest directions, bent along the seasons'
+ * steps ({@link GuidedPath}; the formulas below are of the straight deviation, and the bend has Jacobian 1).
  *
  * <pre>
  *   z = z_m + δ,   δ = (Gaussian with covariance H⁻¹, without its parts along d_1, d_2) + s_1 d_1 + s_2 d_2
@@ -24,6 +25,7 @@ final class StateProposal {
     private static final double LOG_T =
             Gamma.logGamma((FREEDOM + 1) / 2.0) - Gamma.logGamma(FREEDOM / 2.0) - 0.5 * Math.log(FREEDOM * Math.PI);
 
+    private final GuidedPath path;
     private final BorderedBand hessian;
     private final double[][] direction;
     private final double[][] dual;
@@ -33,7 +35,10 @@ final class StateProposal {
     private double halfLogDeterminant;
     private double logDensity;
 
-    StateProposal(int band, int borders) {
+    StateProposal(StateDensity density) {
+        path = new GuidedPath(density);
+        int band = density.matrix.band;
+        int borders = density.matrix.borders;
         hessian = new BorderedBand(band, borders);
         int size = band + borders;
         direction = new double[DIRECTIONS][size];
@@ -51,6 +56,7 @@ final class StateProposal {
     /** Makes what was kept last ready for draws. */
     void prepare() {
         halfLogDeterminant = 0.5 * hessian.logDeterminant();
+        path.at(centre, hessian);
         for (int k = 0; k < DIRECTIONS; k++) {
             for (int i = 0; i < centre.length; i++) {
                 boolean biomass = i < hessian.band && i % 2 == 0;
@@ -103,6 +109,8 @@ final class StateProposal {
             minus[i] = centre[i] - plus[i];
             plus[i] += centre[i];
         }
+        path.bend(plus);
+        path.bend(minus);
         logDensity = normalised(squares, tails);
     }
 
@@ -113,8 +121,9 @@ final class StateProposal {
 
     /** ln g at any z. */
     double logDensity(double[] z) {
+        path.unbend(z, difference);
         for (int i = 0; i < z.length; i++) {
-            difference[i] = z[i] - centre[i];
+            difference[i] -= centre[i];
         }
         hessian.multiply(difference, product);
         double squares = dot(difference, product);

@@ -12,10 +12,7 @@ import java.util.LinkedHashMap;
 import java.util.List;
 import java.util.Locale;
 import java.util.Map;
-import java.util.Set;
-import java.util.TreeSet;
 import java.util.function.IntToDoubleFunction;
-import java.util.stream.Collectors;
 import java.util.stream.IntStream;
 import java.util.stream.Stream;
 import org.assertj.core.api.SoftAssertions;
@@ -36,14 +33,6 @@ class ReferencePosteriorsTest {
     private static final double[] P = {0.05, 0.5, 0.95};
     private static final String[] QUANTILES = {"05", "50", "95"};
 
-    /**
-     * What the engine is known to miss, and must: whoever mends it takes the name out. {@code marked}: with one biomass
-     * record F may be anything up to a collapse, which proposals of the states that are Gaussian in x and l do not reach.
-     * {@code catch-only}: cutting large corrections takes weight from the branch with little biomass.
-     */
-    private static final Set<String> MISSED =
-            Set.of("marked k_t", "marked b_over_bmsy", "marked f_over_fmsy", "catch-only f_over_fmsy");
-
     static Stream<ReferenceCase> cases() {
         return ReferenceCase.all().stream();
     }
@@ -60,21 +49,10 @@ class ReferencePosteriorsTest {
     void quantilesAgreeWithLongRuns(ReferenceCase reference) {
         Pooled pooled = pooled(reference);
         SoftAssertions all = new SoftAssertions();
-        Set<String> missed = new TreeSet<>();
         for (Map<String, String> row : reference.table("reference")) {
             String name = reference.name() + " " + text(row, "quantity");
-            List<String> misses = misses(row, pooled);
-            if (MISSED.contains(name) && !misses.isEmpty()) {
-                missed.add(name);
-            } else if (!MISSED.contains(name)) {
-                all.assertThat(misses).as(name).isEmpty();
-            }
+            all.assertThat(misses(row, pooled)).as(name).isEmpty();
         }
-        all.assertThat(missed)
-                .as("known to be missed")
-                .isEqualTo(MISSED.stream()
-                        .filter(m -> m.startsWith(reference.name() + " "))
-                        .collect(Collectors.toSet()));
         all.assertAll();
     }
 
