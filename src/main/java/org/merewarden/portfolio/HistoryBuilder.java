@@ -16,6 +16,7 @@ import org.merewarden.core.inference.Posterior;
 import org.merewarden.core.inference.Quantiles;
 import org.merewarden.web.Figures;
 import org.merewarden.web.PageJson;
+import org.merewarden.web.Point;
 import org.springframework.stereotype.Component;
 
 /** Biomass and fishing through the assessed seasons: two charts and the table of the same numbers. */
