@@ -8,8 +8,6 @@ import java.util.function.IntToDoubleFunction;
 import java.util.stream.IntStream;
 import org.merewarden.core.inference.Posterior;
 import org.merewarden.core.inference.Quantiles;
-import org.merewarden.jobs.JobView;
-import org.merewarden.jobs.Jobs;
 import org.merewarden.waterbody.Register;
 import org.merewarden.waterbody.StockView;
 import org.merewarden.web.Figures;
@@ -22,36 +20,21 @@ import org.springframework.web.bind.annotation.PathVariable;
 import org.springframework.web.bind.annotation.PostMapping;
 import org.springframework.web.servlet.mvc.support.RedirectAttributes;
 
-/** Runs of assessments, and the page of one stored assessment. */
+/** The page of one stored assessment. */
 @Controller
 class AssessmentController {
     private final AssessmentRuns runs;
     private final Assessments assessments;
-    private final Jobs jobs;
     private final Register register;
     private final MessageSource messages;
 
     AssessmentController(
-            AssessmentRuns runs, Assessments assessments, Jobs jobs, Register register, MessageSource messages) {
+            AssessmentRuns runs, Assessments assessments, Register register, MessageSource messages) {
         this.runs = runs;
         this.assessments = assessments;
-        this.jobs = jobs;
         this.register = register;
         this.messages = messages;
     }
-
-    /** A run as a row. */
-    record Run(
-            long id,
-            String subject,
-            String state,
-            int done,
-            int total,
-            String note,
-            String by,
-            String requested,
-            String finished,
-            boolean active) {}
 
     /** One quantity with its 10, 50 and 90 % quantiles. */
     record Quantity(String name, String interval) {}
@@ -75,48 +58,6 @@ class AssessmentController {
             List<Quantity> quantities,
             Map<String, String> estimates,
             List<Season> years) {}
-
-    @GetMapping("/assessments")
-    String list(Model model, Locale locale) {
-        List<Run> rows = runs.recent().stream().map(job -> row(job, locale)).toList();
-        model.addAttribute("runs", rows);
-        model.addAttribute("active", rows.stream().anyMatch(Run::active));
-        model.addAttribute("stocks", register.stocks().size());
-        model.addAttribute("assessed", assessments.latest().size());
-        return "assessment/runs";
-    }
-
-    private Run row(JobView job, Locale locale) {
-        return new Run(
-                job.id(),
-                job.subject(),
-                messages.getMessage("assessment.state." + job.state(), null, locale),
-                job.done(),
-                job.total(),
-                job.note() == null ? "" : job.note(),
-                job.requestedBy(),
-                Figures.dateTime(job.requestedAt()),
-                Figures.dateTime(job.finishedAt()),
-                job.active());
-    }
-
-    @PostMapping("/assessments")
-    String start(RedirectAttributes redirect, Locale locale) {
-        if (register.stocks().isEmpty()) {
-            redirect.addFlashAttribute("refused", messages.getMessage("assessment.noStocks", null, locale));
-        } else {
-            runs.startAll();
-            redirect.addFlashAttribute("done", messages.getMessage("assessment.queued", null, locale));
-        }
-        return "redirect:/assessments";
-    }
-
-    @PostMapping("/assessments/{id}/cancel")
-    String cancel(@PathVariable long id, RedirectAttributes redirect, Locale locale) {
-        runs.cancel(jobs.find(id).orElseThrow(() -> new NotFound("job " + id)));
-        redirect.addFlashAttribute("done", messages.getMessage("assessment.stopping", null, locale));
-        return "redirect:/assessments";
-    }
 
     @PostMapping("/stocks/{lake}/{species}/assessments")
     String startOne(
