@@ -13,9 +13,12 @@ function datasets(h, canvas) {
     line(h.words.band, h.high, { borderWidth: 0.75, pointStyle: "rect", fill: "-1", backgroundColor: /^#[0-9a-f]{6}$/i.test(water) ? water + "33" : "transparent" }),
     line(h.words.level, [{ x: h.from, y: h.level }, { x: h.to, y: h.level }], { borderColor: ink, borderDash: [6, 4], borderWidth: 1.5, pointStyle: "line" }),
     ...h.points.map((s, i) => line(s.name, s.points, { showLine: false, borderColor: ink, backgroundColor: "transparent", pointStyle: SHAPES[i % SHAPES.length], pointRadius: 5, borderWidth: 1.5 })),
-    ...(h.bars.length === 0 ? [] : [{ type: "bar", label: h.words.bars, data: h.bars, backgroundColor: ink, pointStyle: "rect", barThickness: 8 }]),
+    ...(h.bars.length === 0 ? [] : [{ type: "bar", label: h.words.bars, data: h.bars, backgroundColor: ink, pointStyle: "rect", barThickness: thickness(h, canvas) }]),
   ];
 }
+
+// half of a season's room, so that bars stay apart on a phone
+const thickness = (h, canvas) => Math.max(2, Math.min(8, (0.4 * canvas.parentElement.clientWidth) / h.mid.length));
 
 // whole seasons, at most about a dozen
 function seasons(h) {

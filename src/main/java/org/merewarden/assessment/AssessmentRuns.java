@@ -64,7 +64,19 @@ class AssessmentRuns implements JobHandler {
     }
 
     List<JobView> recent() {
-        return jobs.recent(KIND, 20);
+        return jobs.recent(KIND, 10);
+    }
+
+    /** The numbers of the stocks that a run is over, as it was asked for. */
+    List<Long> stocksOf(long jobId) {
+        return jobs.payload(jobId).map(AssessmentRuns::stocks).orElse(List.of());
+    }
+
+    private static List<Long> stocks(String payload) {
+        return Arrays.stream(payload.split(","))
+                .filter(id -> !id.isBlank())
+                .map(Long::valueOf)
+                .toList();
     }
 
     @EventListener(DemonstrationLoaded.class)
@@ -79,10 +91,7 @@ class AssessmentRuns implements JobHandler {
 
     @Override
     public void run(RunningJob job) {
-        List<Long> stocks = Arrays.stream(job.payload().split(","))
-                .filter(id -> !id.isBlank())
-                .map(Long::valueOf)
-                .toList();
+        List<Long> stocks = stocks(job.payload());
         var done = new AtomicInteger();
         var failed = new AtomicInteger();
         job.progress(0, stocks.size(), "");

@@ -137,6 +137,14 @@ class AssessmentStore implements Assessments {
                 > 0;
     }
 
+    /** What the job has stored so far. */
+    List<AssessmentView> ofJob(long jobId) {
+        return jdbc.sql("select " + SUMMARY + " from assessment a where a.job_id = ?")
+                .param(jobId)
+                .query(AssessmentStore::view)
+                .list();
+    }
+
     @Override
     public List<AssessmentView> latest() {
         return jdbc.sql("select " + SUMMARY + " from assessment a where " + LATEST)

@@ -72,6 +72,14 @@ public class Jobs {
                 .optional();
     }
 
+    /** What the submitter of a job handed over. */
+    public Optional<String> payload(long id) {
+        return jdbc.sql("select payload from job where id = ?")
+                .param(id)
+                .query(String.class)
+                .optional();
+    }
+
     /** The latest jobs of a kind, newest first. */
     public List<JobView> recent(String kind, int count) {
         return jdbc.sql("select " + COLUMNS + " from job where kind = ? order by id desc limit ?")

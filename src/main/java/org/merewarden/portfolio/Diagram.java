@@ -8,6 +8,7 @@ import java.util.function.ToDoubleFunction;
 import java.util.stream.Stream;
 import org.jspecify.annotations.Nullable;
 import org.merewarden.core.dynamics.SurplusProduction;
+import org.merewarden.web.Point;
 
 /**
  * An equilibrium diagram in its own units, as the page's data: the same for the script and for the drawing without one.

@@ -1,6 +1,8 @@
 package org.merewarden.portfolio;
 
 import java.util.stream.IntStream;
+import org.merewarden.web.Plot;
+import org.merewarden.web.Point;
 
 /** An equilibrium diagram as SVG, for pages without script and for paper. */
 final class DiagramDrawing {

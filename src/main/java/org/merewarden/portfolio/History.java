@@ -1,6 +1,7 @@
 package org.merewarden.portfolio;
 
 import java.util.List;
+import org.merewarden.web.Point;
 
 /**
  * A quantity through the seasons, as the page's data: median with band, a level to compare with, bars and points laid on.

@@ -16,6 +16,7 @@ import org.merewarden.core.inference.Posterior;
 import org.merewarden.core.inference.Quantiles;
 import org.merewarden.web.Figures;
 import org.merewarden.web.PageJson;
+import org.merewarden.web.Point;
 import org.springframework.stereotype.Component;
 
 /** Biomass and fishing through the assessed seasons: two charts and the table of the same numbers. */
@@ -49,6 +50,7 @@ class HistoryBuilder {
     List<StockPage.HistoryRow> table(Posterior posterior, Evidence evidence) {
         List<Spread> biomass = biomass(posterior);
         List<Spread> fishing = fishingBySeason(posterior);
+        int estimated = posterior.removalsTonnes()[0].length;
         List<StockPage.HistoryRow> rows = new ArrayList<>();
         for (int t = 0; t < biomass.size(); t++) {
             int year = posterior.firstYear() + t;
@@ -58,6 +60,7 @@ class HistoryBuilder {
                     interval(biomass.get(t)),
                     t < fishing.size() ? interval(fishing.get(t)) : "",
                     removals.isPresent() && t < fishing.size() ? Figures.sig(removals.getAsDouble()) : "",
+                    t < estimated ? interval(season(posterior.removalsTonnes(), t)) : "",
                     t < fishing.size() ? surveyWords(evidence, year) : ""));
         }
         return rows;
@@ -116,10 +119,11 @@ class HistoryBuilder {
     }
 
     private static List<Spread> columns(double[][] states, int count) {
-        return IntStream.range(0, count)
-                .mapToObj(t ->
-                        Spread.of(Stream.of(states).mapToDouble(draw -> draw[t]).toArray()))
-                .toList();
+        return IntStream.range(0, count).mapToObj(t -> season(states, t)).toList();
+    }
+
+    private static Spread season(double[][] states, int t) {
+        return Spread.of(Stream.of(states).mapToDouble(draw -> draw[t]).toArray());
     }
 
     private static double median(Posterior posterior, java.util.function.IntToDoubleFunction quantity) {

@@ -3,6 +3,8 @@ package org.merewarden.portfolio;
 import java.util.ArrayList;
 import java.util.Collections;
 import java.util.List;
+import org.merewarden.web.Plot;
+import org.merewarden.web.Point;
 
 /** A history as SVG, for pages without script and for paper. */
 final class HistoryDrawing {

@@ -11,6 +11,7 @@ import org.merewarden.core.dynamics.EquilibriumCurve;
 import org.merewarden.core.dynamics.SurplusProduction;
 import org.merewarden.core.inference.Posterior;
 import org.merewarden.core.inference.Quantiles;
+import org.merewarden.web.Point;
 
 /**
  * A stock's equilibria under a constant catch, and where it is now; catches in t a year, biomasses in t.

@@ -9,9 +9,9 @@ import org.jspecify.annotations.Nullable;
  * @param lede the answer; begins with the failure where the assessment is not settled
  * @param equilibrium null where no assessment has draws, or the stock lives from stocking alone
  * @param biomass null without an assessed season, as is fishing
- * @param words fold, tipping biomass, return time
+ * @param words fold, margin to it, tipping biomass, collapse course, return time
  * @param strip evidence by kind and year as finished SVG; null without an assessment or any record
- * @param basis what the assessment rests on; empty without one
+ * @param basis what the assessment rests on; null without one
  */
 record StockPage(
         String title,
@@ -28,7 +28,7 @@ record StockPage(
         List<Term> season,
         String takenBar,
         @Nullable String strip,
-        List<String> basis,
+        @Nullable Basis basis,
         List<Term> estimates,
         List<Term> regressions,
         List<Link> assessments,
@@ -41,7 +41,17 @@ record StockPage(
 
     record Term(String name, String text) {}
 
+    /**
+     * What an assessment rests on.
+     *
+     * @param learned what the records taught and what would teach most; empty where that was not computed
+     * @param verdict its checks in sentences
+     */
+    record Basis(String strength, List<String> learned, List<String> verdict, String method, Link assessment) {}
+
     record Link(String label, String address) {}
 
-    record HistoryRow(String season, String biomass, String fishing, String removals, String surveys) {}
+    /** @param estimated removals as the model sees them; empty where it does not estimate them */
+    record HistoryRow(
+            String season, String biomass, String fishing, String removals, String estimated, String surveys) {}
 }

@@ -5,6 +5,7 @@ import java.util.List;
 import java.util.Map;
 import org.jspecify.annotations.Nullable;
 import org.merewarden.assessment.AssessmentView;
+import org.merewarden.assessment.AssessmentWords;
 import org.merewarden.assessment.Assessments;
 import org.merewarden.core.evidence.Evidence;
 import org.merewarden.core.inference.Posterior;
@@ -24,6 +25,7 @@ class StockPages {
     private final DiagramTexts diagrams;
     private final HistoryBuilder history;
     private final StockEstimates estimates;
+    private final AssessmentWords taught;
     private final Texts texts;
 
     StockPages(
@@ -34,6 +36,7 @@ class StockPages {
             DiagramTexts diagrams,
             HistoryBuilder history,
             StockEstimates estimates,
+            AssessmentWords taught,
             Texts texts) {
         this.portfolio = portfolio;
         this.assessments = assessments;
@@ -42,6 +45,7 @@ class StockPages {
         this.diagrams = diagrams;
         this.history = history;
         this.estimates = estimates;
+        this.taught = taught;
         this.texts = texts;
     }
 
@@ -89,7 +93,7 @@ class StockPages {
                 words.season(e),
                 rows.row(e).takenBar(),
                 result == null ? null : strip(e, result.evidence()),
-                result == null ? List.of() : words.basis(result.assessment(), result.evidence()),
+                result == null ? null : basis(e, result),
                 estimates.terms(named, false),
                 estimates.terms(named, true),
                 earlier(e),
@@ -98,6 +102,20 @@ class StockPages {
                 e.limit() == null
                         ? null
                         : link("notice", "/notices/" + e.limit().id()));
+    }
+
+    private StockPage.Basis basis(Entry e, Result result) {
+        AssessmentView a = result.assessment();
+        List<String> learned = new ArrayList<>(taught.taught(result.posterior().diagnostics()));
+        taught.helps(result.posterior().diagnostics()).stream().limit(1).forEach(learned::add);
+        return new StockPage.Basis(
+                words.strength(a, result.evidence()),
+                learned,
+                a.verdict(),
+                words.method(a),
+                new StockPage.Link(
+                        texts.get("basis.link", Integer.toString(a.number())),
+                        e.stock().path() + "/assessments/" + a.number()));
     }
 
     private @Nullable String strip(Entry e, Evidence evidence) {

@@ -74,7 +74,7 @@ class StockWords {
                 Figures.chances(s.collapseProbability())));
     }
 
-    /** Fold, tipping biomass and return time, each with what it means here. */
+    /** Fold, margin, tipping biomass, collapse course and return time, each with what it means here. */
     List<StockPage.Term> diagram(StockCurve curve) {
         AssessmentView a = curve.assessment();
         StandingView s = curve.entry().standing();
@@ -88,13 +88,33 @@ class StockWords {
                         Figures.tonnes(a.msyHighTonnes()),
                         Figures.tonnes(curve.fold().y()))));
         if (s != null) {
+            if (curve.entry().margin() != null && s.removalsTonnes() > 0) {
+                terms.add(term("margin", margin(s)));
+            }
             terms.add(term("tipping", tipping(s)));
+            if (s.removalsTonnes() > 0) {
+                terms.add(term("course", course(s)));
+            }
             Double years = s.returnTimeYears();
             terms.add(term(
                     "return",
                     years == null ? texts.get("word.return.none") : texts.get("word.return", Figures.sig(years))));
         }
         return terms;
+    }
+
+    private String margin(StandingView s) {
+        return texts.get(
+                s.margin() < 0 ? "word.margin.beyond" : "word.margin",
+                Figures.tonnes(s.removalsTonnes()),
+                Figures.percent(Math.abs(s.margin())),
+                Figures.percent(s.marginLow()),
+                Figures.percent(s.marginHigh()),
+                Figures.chances(s.marginNegativeProbability()));
+    }
+
+    private String course(StandingView s) {
+        return texts.get("word.course", Figures.tonnes(s.removalsTonnes()), Figures.chances(s.collapseProbability()));
     }
 
     private String tipping(StandingView s) {
@@ -144,10 +164,9 @@ class StockWords {
         }
     }
 
-    /** Strength and why, the verdict, the method. */
-    List<String> basis(AssessmentView a, Evidence evidence) {
-        List<String> sentences = new ArrayList<>();
-        sentences.add(texts.get(
+    /** Evidence strength, how many records of each kind it comes from, and whether the estimation settled. */
+    String strength(AssessmentView a, Evidence evidence) {
+        String strength = texts.get(
                 "basis.strength",
                 rows.strength(a.strength()),
                 (int) evidence.catches().stream().map(c -> c.year()).distinct().count(),
@@ -157,11 +176,12 @@ class StockWords {
                         .distinct()
                         .count(),
                 (int) evidence.effort().stream().map(x -> x.year()).distinct().count(),
-                evidence.events().size()));
-        sentences.addAll(a.verdict());
-        sentences.add(
-                texts.get("basis.method", a.method(), Integer.toString(a.number()), Figures.dateTime(a.madeAt())));
-        return sentences;
+                evidence.events().size());
+        return strength + " " + texts.get(a.settled() ? "basis.settled" : "basis.unsettled");
+    }
+
+    String method(AssessmentView a) {
+        return texts.get("basis.method", a.method(), Integer.toString(a.number()), Figures.dateTime(a.madeAt()));
     }
 
     private StockPage.Term term(String key, String text) {

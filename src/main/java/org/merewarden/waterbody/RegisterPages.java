@@ -10,6 +10,7 @@ import java.util.stream.Stream;
 import org.jspecify.annotations.Nullable;
 import org.merewarden.web.Choice;
 import org.merewarden.web.Figures;
+import org.merewarden.web.NotFound;
 import org.springframework.stereotype.Component;
 
 /** Finished strings for the register's read pages. */
@@ -26,14 +27,19 @@ class RegisterPages {
 
     record ConversionRow(String species, String presentation, String from, String factor) {}
 
+    /** Another feature's part of a water body's page, with what its fragment shows. */
+    record Part(String template, Object view) {}
+
     record CooperativeRow(String path, String name, String rights) {}
 
     private final Register register;
     private final WeightConversions conversions;
+    private final List<LakePart> parts;
 
-    RegisterPages(Register register, WeightConversions conversions) {
+    RegisterPages(Register register, WeightConversions conversions, List<LakePart> parts) {
         this.register = register;
         this.conversions = conversions;
+        this.parts = parts;
     }
 
     List<LakeRow> lakes(LakeFilter filter) {
@@ -99,6 +105,11 @@ class RegisterPages {
                                 .map(r -> r.cooperativeName() + " " + Figures.sig(r.sharePercent()) + " %")
                                 .collect(Collectors.joining(", "))))
                 .toList();
+    }
+
+    List<Part> partsOf(String lake) {
+        WaterBodyView view = register.waterBody(lake).orElseThrow(() -> new NotFound("water body " + lake));
+        return parts.stream().map(p -> new Part(p.template(), p.view(view))).toList();
     }
 
     List<CooperativeRow> cooperatives() {

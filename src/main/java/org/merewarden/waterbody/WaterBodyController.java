@@ -46,6 +46,7 @@ class WaterBodyController {
         model.addAttribute("note", stored.details.note);
         model.addAttribute("facts", RegisterPages.facts(stored.details));
         model.addAttribute("stocks", pages.stocksOf(lake));
+        model.addAttribute("parts", pages.partsOf(lake));
         return "waterbody/lake";
     }
 

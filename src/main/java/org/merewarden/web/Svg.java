@@ -80,6 +80,35 @@ public final class Svg {
                         + number(y(mid.get(mid.size() - 1), top)) + "\" r=\"2\"/>");
     }
 
+    /** A range with its middle: low ≤ mid ≤ high, all > 0. */
+    public record Range(double low, double mid, double high) {}
+
+    /**
+     * What was thought before and after, on a logarithmic axis: a thin line for the range before with a tick at its middle,
+     * a thick line with a dot for the one after, short ticks at the axis' ends. What lies beyond them is cut.
+     *
+     * @param before its middle stands in the middle of the picture
+     * @param factor > 1: the axis runs from the middle divided by it to the middle times it
+     */
+    public static String beforeAndAfter(Range before, Range after, double factor, String title) {
+        double middle = WIDTH / 2.0;
+        return image(
+                "bar",
+                title,
+                line("end", 0.5, 5, 0.5, 11)
+                        + line("end", WIDTH - 0.5, 5, WIDTH - 0.5, 11)
+                        + line("before", log(before.low(), before, factor), 8, log(before.high(), before, factor), 8)
+                        + line("middle", middle, 2, middle, 14)
+                        + line("after", log(after.low(), before, factor), 8, log(after.high(), before, factor), 8)
+                        + "<circle class=\"now\" cx=\"" + number(log(after.mid(), before, factor))
+                        + "\" cy=\"8\" r=\"2.5\"/>");
+    }
+
+    private static double log(double value, Range about, double factor) {
+        double share = Math.log(value / about.mid()) / Math.log(factor);
+        return WIDTH / 2.0 * (1 + Math.max(-1, Math.min(1, share)));
+    }
+
     private static String points(List<Double> values, double top, boolean backwards) {
         int n = values.size();
         return IntStream.range(0, n)

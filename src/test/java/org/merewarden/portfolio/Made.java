@@ -15,6 +15,7 @@ import org.merewarden.core.inference.Verdict;
 import org.merewarden.season.UptakeView;
 import org.merewarden.waterbody.RightView;
 import org.merewarden.waterbody.StockView;
+import org.springframework.context.MessageSource;
 import org.springframework.context.support.ResourceBundleMessageSource;
 
 /** Hand-made views for tests. */
@@ -22,11 +23,15 @@ final class Made {
     private Made() {}
 
     static Texts texts() {
+        return new Texts(messages());
+    }
+
+    static MessageSource messages() {
         ResourceBundleMessageSource messages = new ResourceBundleMessageSource();
-        messages.setBasenames("messages/portfolio", "messages/records", "messages/common");
+        messages.setBasenames("messages/portfolio", "messages/assessment", "messages/records", "messages/common");
         messages.setDefaultEncoding("UTF-8");
         messages.setFallbackToSystemLocale(false);
-        return new Texts(messages);
+        return messages;
     }
 
     static StockView stock(long id, String lake, String species, String district) {

@@ -9,6 +9,7 @@ import java.util.Optional;
 import org.merewarden.advice.Limits;
 import org.merewarden.advice.Standings;
 import org.merewarden.assessment.AssessmentView;
+import org.merewarden.assessment.AssessmentWords;
 import org.merewarden.assessment.Assessments;
 import org.merewarden.core.evidence.CatchRecord;
 import org.merewarden.core.evidence.EffortRecord;
@@ -99,6 +100,7 @@ final class Region {
                         diagrams,
                         new HistoryBuilder(texts),
                         new StockEstimates(texts),
+                        new AssessmentWords(Made.messages()),
                         texts)
                 .page(lake, species);
     }

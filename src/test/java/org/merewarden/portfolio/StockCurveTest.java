@@ -8,6 +8,7 @@ import org.junit.jupiter.api.Test;
 import org.junit.jupiter.params.ParameterizedTest;
 import org.junit.jupiter.params.provider.EnumSource;
 import org.merewarden.core.dynamics.SurplusProduction;
+import org.merewarden.web.Point;
 
 class StockCurveTest {
     private final Entry entry = Made.entry(

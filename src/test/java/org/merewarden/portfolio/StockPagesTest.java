@@ -11,6 +11,7 @@ import org.junit.jupiter.api.AfterEach;
 import org.junit.jupiter.api.BeforeEach;
 import org.junit.jupiter.api.Test;
 import org.merewarden.assessment.AssessmentView;
+import org.merewarden.assessment.MadeDiagnostics;
 import org.merewarden.core.inference.EvidenceStrength;
 import org.merewarden.core.inference.Posterior;
 import org.merewarden.core.inference.Verdict;
@@ -102,6 +103,43 @@ class StockPagesTest {
         assertThat(page.history().get(3).surveys()).isEqualTo("marks: biomass 61.5\u00a0t");
         assertThat(page.history().get(6).fishing()).isEmpty();
         assertThat(page.biomass().drawing()).doesNotContain("NaN").contains(">2021<");
+    }
+
+    @Test
+    void saysHowFarTheFoldIsAndHowProbableACollapseCourse() {
+        StockPage page = page(assessed(), SIX_SEASONS);
+        assertThat(text(page.words(), "Margin to the fold"))
+                .isEqualTo("12\u00a0t a year lie under the largest lasting yield by 40% of it (probably 20% to 60%); in"
+                        + " about 1 of 7 cases that fit our data they lie above it. It is never spare catch.");
+        assertThat(text(page.words(), "Collapse course")).contains("about 1 of 9 cases");
+        Entry beyond = Made.entry(
+                ALDER,
+                Made.assessment(1, 20, 0.9, "FAIR"),
+                Made.standing(1, "CRITICAL", -0.3, 26, "limit"),
+                Made.catchLimit(1, 26),
+                null);
+        assertThat(text(page(beyond, SIX_SEASONS).words(), "Margin to the fold"))
+                .startsWith("26\u00a0t a year lie above the largest lasting yield by 30% of it (margin probably -50% to"
+                        + " -10%)");
+    }
+
+    @Test
+    void restsOnWhatTheRecordsTaughtAndSaysWhatWouldHelpMost() {
+        Posterior told = MadeDiagnostics.with(SIX_SEASONS, MadeDiagnostics.typical());
+        StockPage page = page(assessed(), told);
+        assertThat(page.basis().strength()).startsWith("Evidence: fair.").endsWith("The estimation settled.");
+        assertThat(page.basis().learned())
+                .containsExactly(
+                        "The records narrowed the range of MSY to about a third of what was thought before.",
+                        "Of natural process variation they said next to nothing.",
+                        "One estimate of the biomass at the start of the coming season, by mark–recapture for instance,"
+                                + " would narrow the range of the coming season’s catch at FMSY by about 18%.");
+        assertThat(page.basis().assessment().address()).isEqualTo("/stocks/alder/PIKE/assessments/1");
+        assertThat(page.history().get(0).estimated()).isEqualTo("7.5 (7.5–7.5)");
+        assertThat(page.history().get(6).estimated()).isEmpty();
+        StockPage older = page(assessed(), SIX_SEASONS);
+        assertThat(older.basis().learned()).isEmpty();
+        assertThat(older.history().get(0).estimated()).isEmpty();
     }
 
     @Test

@@ -99,4 +99,15 @@ class SvgTest {
     private static double number(Element element, String attribute) {
         return Double.parseDouble(element.getAttribute(attribute));
     }
+
+    @Test
+    void beforeAndAfterShareALogarithmicAxisAboutTheMiddleBefore() {
+        String svg = Svg.beforeAndAfter(new Svg.Range(1, 10, 100), new Svg.Range(10, 31.6228, 2000), 100, "MSY");
+        // the picture is 120 wide: two powers of ten to each side of 60
+        assertThat(svg)
+                .contains("class=\"before\" x1=\"30.0\" y1=\"8.0\" x2=\"90.0\"")
+                .contains("class=\"after\" x1=\"60.0\" y1=\"8.0\" x2=\"120.0\"")
+                .contains("cx=\"75.0\"")
+                .contains("<title>MSY</title>");
+    }
 }

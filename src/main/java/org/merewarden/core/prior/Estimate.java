@@ -17,13 +17,14 @@ import java.util.stream.Collectors;
  * @param source publication
  * @param validity where it holds, and whether the case is inside
  */
-record Estimate(double value, double logSd, String source, String validity) {
+public record Estimate(double value, double logSd, String source, String validity) {
 
     boolean usable() {
         return value > 0 && value < Double.POSITIVE_INFINITY;
     }
 
-    static Estimate combined(List<Estimate> estimates) {
+    /** One prediction out of several. */
+    public static Estimate combined(List<Estimate> estimates) {
         double mean = estimates.stream()
                 .mapToDouble(e -> Math.log(e.value()))
                 .average()

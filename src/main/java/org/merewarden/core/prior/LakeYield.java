@@ -81,8 +81,8 @@ public final class LakeYield {
         return 7.09 * Math.pow(areaSquareKilometres, 0.94);
     }
 
-    /** The applicable predictions of the lake's whole yield, t/yr. */
-    static List<Estimate> predictTonnes(Habitat habitat) {
+    /** The applicable predictions of the lake's whole yield, t/yr; none for rivers or without depth and solids. */
+    public static List<Estimate> predictTonnes(Habitat habitat) {
         if (habitat.kind().equals("river")) {
             return List.of();
         }

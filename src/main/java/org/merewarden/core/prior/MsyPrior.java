@@ -17,17 +17,13 @@ import org.merewarden.core.evidence.Evidence;
  * <table>
  * <caption>Symbols</caption>
  * <tr><td>Y</td><td>yield of the lake, all species, t/yr: {@link LakeYield}, several formulas combined by widening</td></tr>
- * <tr><td>s</td><td>this stock's share: as stated (log-sd 0.3), else of the recorded catch where every stock of the lake
- * has one (log-sd 0.5), else 1/number of stocks (log-sd 0.7; a lake's only stock 0.3)</td></tr>
+ * <tr><td>s</td><td>this stock's share: {@link LakeShare}</td></tr>
  * <tr><td>A</td><td>area, ha</td></tr>
  * </table>
  *
  * <p>Every constant here is our judgement. The quantile is of order: the k-th largest of N with k = ⌈N/10⌉.
  */
 final class MsyPrior {
-    private static final double STATED_SHARE_LOG_SD = 0.3;
-    private static final double RECORDED_SHARE_LOG_SD = 0.5;
-    private static final double EQUAL_SHARE_LOG_SD = 0.7;
     private static final double CATCHES_LOG_SD = 0.8;
     private static final double NOTHING_LOG_SD = 1.5;
     private static final double NOTHING_KG_PER_HECTARE = 5;
@@ -53,7 +49,7 @@ final class MsyPrior {
         double guess = NOTHING_KG_PER_HECTARE
                 * evidence.habitat().areaHectares()
                 / 1000
-                * share(evidence).value();
+                * LakeShare.of(evidence).value();
         return prior(
                 guess,
                 NOTHING_LOG_SD,
@@ -63,7 +59,7 @@ final class MsyPrior {
     }
 
     private static Prior fromLake(Estimate lake, Evidence evidence) {
-        Share share = share(evidence);
+        LakeShare share = LakeShare.of(evidence);
         String reason = String.format(
                 Locale.ROOT,
                 "The lake's yield of all species (%.3g t) times this stock's share (%.2g, %s).",
@@ -76,29 +72,6 @@ final class MsyPrior {
                 lake.source(),
                 reason,
                 lake.validity() + "; prediction error our judgement");
-    }
-
-    /** The stock's share of the lake's yield, how far off it may be, and where it comes from. */
-    private record Share(double value, double logSd, String words) {}
-
-    private static Share share(Evidence evidence) {
-        Double stated = evidence.traits().shareOfLakeYield();
-        Double recorded = evidence.habitat().shareOfRecordedCatch();
-        int stocks = evidence.habitat().stocksInLake();
-        if (stated != null && isShare(stated)) {
-            return new Share(stated, STATED_SHARE_LOG_SD, "as stated");
-        }
-        if (stocks == 1) {
-            return new Share(1, STATED_SHARE_LOG_SD, "the only stock of the lake");
-        }
-        if (recorded != null && isShare(recorded)) {
-            return new Share(recorded, RECORDED_SHARE_LOG_SD, "its share of the recorded catch");
-        }
-        return new Share(1.0 / stocks, EQUAL_SHARE_LOG_SD, "equal shares, for want of a stated one");
-    }
-
-    private static boolean isShare(double value) {
-        return value > 0 && value <= 1;
     }
 
     private static double largeCatch(Evidence evidence) {
