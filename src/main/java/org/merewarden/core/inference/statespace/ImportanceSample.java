@@ -14,11 +14,13 @@ import java.util.random.RandomGenerator;
  * </pre>
  *
  * <p>Two kinds of weight. With Laplace's p they are smooth, and proposals are adapted from them. The sample is judged and
- * resampled by corrected ones, with p = Laplace · min(ρ, √N ρ̄): ρ = p̂/Laplace from the unbiased p̂ of
+ * resampled by corrected ones, with p = Laplace · min(ρ, c ρ̄): ρ = p̂/Laplace from the unbiased p̂ of
  * {@link StateMixture}, ρ̄ its weighted geometric mean. Where no ρ is cut the weights are exact; cutting (truncated
- * importance sampling, Ionides 2008, J. Comput. Graph. Stat. 17: 295–311, whose bound √N is recalled) trades the tails that
- * the states' proposals cannot reach for a bounded variance, and {@link #truncatedShare()} tells how often it was needed.
- * Draws more than {@value #NEGLIGIBLE} below the best in ln p are taken as impossible. Each other draw keeps one path of
+ * importance sampling, Ionides 2008, J. Comput. Graph. Stat. 17: 295–311, whose bound √N is recalled) trades the tails
+ * that the states' proposals cannot reach for a bounded variance. c is √N, or less where {@link #tighten()} was called,
+ * down to {@value #TIGHTEST} (our judgement); {@link #truncatedShare()} tells how much was cut away.
+ * Draws more than {@value #NEGLIGIBLE} below the best in ln p are taken as impossible, like those whose drawn states are
+ * beyond the arithmetic. Each other draw keeps one path of
  * its hidden states, from a generator seeded with the sample's seed and the draw's number.
  *
  * <p>Adaptive multiple importance sampling with deterministic-mixture weights: Cornuet et al. 2012, Scand. J. Stat. 39:
@@ -29,6 +31,7 @@ final class ImportanceSample {
 
     private static final double NEGLIGIBLE = 20;
     private static final double LOWEST_CORRECTION = -20;
+    private static final double TIGHTEST = 5;
 
     private final Marginal marginal;
     private final long seed;
@@ -41,6 +44,7 @@ final class ImportanceSample {
     private double best = Double.NEGATIVE_INFINITY;
     private double worth = 1;
     private boolean evidenceKnown = true;
+    private double tightness = 1;
     private final List<StudentT> proposals = new ArrayList<>();
     private final List<Integer> counts = new ArrayList<>();
 
@@ -116,6 +120,10 @@ final class ImportanceSample {
         }
         RandomGenerator random = new SplittableRandom(seed + i);
         double exact = marginal.logPrior(draws[i]) + marginal.mixture().draw(random);
+        if (exact == Double.NEGATIVE_INFINITY) {
+            logTarget[i] = exact;
+            return;
+        }
         logTarget[i] = value;
         correction[i] = Math.max(LOWEST_CORRECTION, exact - value);
         states[i] = marginal.mixture().choose(random).clone();
@@ -147,7 +155,23 @@ final class ImportanceSample {
         for (int i = 0; i < smooth.length; i++) {
             mean += smooth[i] * correction[i];
         }
-        return mean + 0.5 * Math.log(correction.length);
+        return mean + Math.log(bound());
+    }
+
+    private double bound() {
+        return Math.max(TIGHTEST, Math.sqrt(correction.length) * tightness);
+    }
+
+    /** Halves the bound at which corrections are cut; false where it is at its tightest. */
+    boolean tighten() {
+        boolean possible = bound() > TIGHTEST;
+        tightness /= 2;
+        return possible;
+    }
+
+    /** Cuts corrections at the usual bound again. */
+    void loosen() {
+        tightness = 1;
     }
 
     /** Share of the exact weight that cutting took away, 0–1. */

@@ -18,7 +18,8 @@ import java.util.random.RandomGenerator;
  *
  * <p>Weighting is accepted when ESS ≥ {@value #LEAST_EFFECTIVE} and k̂ &lt; {@value #LARGEST_SHAPE}, chains when R̂ &lt;
  * 1.01 and bulk ESS ≥ {@value #LEAST_EFFECTIVE}, also after weighting; a rung goes on to {@value #WANTED_EFFECTIVE}
- * effective draws while that is cheap. Each rung leaves a sentence.
+ * effective draws while that is cheap. Where a rung would fail, large corrections are cut more tightly before it is given
+ * up: calibration holds with the tightest bound too, while a stock without a result helps nobody. Each rung leaves a sentence.
  *
  * <p>Bounded: at most {@value #MOST_EVALUATIONS} evaluations of the marginal density, and no further round of weighting
  * once {@value #MOST_WORK} evaluations × hidden states of the inner density are spent, about two seconds. No clock is
@@ -180,6 +181,7 @@ final class Ladder {
 
     private void secondRung() {
         rung = 2;
+        sample.loosen();
         for (int round = 0; round < MORE_ROUNDS && work() && !good(LEAST_EFFECTIVE); round++) {
             StudentT whole = sample.adapted(mode, covariance);
             double[] axis = whole.longestAxis();
@@ -204,6 +206,7 @@ final class Ladder {
         Chains chains = new Chains(marginal, sample.widened(mode, covariance, WHOLE_WIDENED), spread, random);
         ImportanceSample followed =
                 ImportanceSample.following(marginal, stateSeed, chains.draws(), chains.effectiveSize());
+        while (followed.effectiveSize() < LEAST_EFFECTIVE && followed.tighten()) {}
         double effective = Math.min(chains.effectiveSize(), followed.effectiveSize());
         settled = chains.rHat() < Chains.LARGEST_R_HAT && effective >= LEAST_EFFECTIVE;
         rungs.add(String.format(
@@ -222,6 +225,7 @@ final class Ladder {
     }
 
     private void record(String what) {
+        while (!good(LEAST_EFFECTIVE) && sample.tighten()) {}
         settled = good(LEAST_EFFECTIVE);
         rungs.add(String.format(
                 Locale.ROOT,

@@ -141,8 +141,8 @@ public final class StateSpaceAssessor implements Assessor {
         if (cut > 0.1) {
             sentences.add(String.format(
                     Locale.ROOT,
-                    "For %.0f %% of the draws the hidden biomass is wider than the approximation shows; their weight is"
-                            + " held back.",
+                    "For some draws the hidden biomass is wider than the approximation shows: %.0f %% of the weight, as far"
+                            + " as it is known, is held back.",
                     100 * cut));
         }
         sentences.add(fit.priors().msy().said("MSY", "t"));

@@ -10,6 +10,7 @@ import java.util.SplittableRandom;
 import org.apache.commons.math3.stat.StatUtils;
 import org.junit.jupiter.api.Test;
 import org.merewarden.core.evidence.Evidence;
+import org.merewarden.core.evidence.SurveyRecord;
 import org.merewarden.core.evidence.Traits;
 import org.merewarden.core.inference.Diagnostics.Gathering;
 import org.merewarden.core.inference.Diagnostics.Help;
@@ -43,11 +44,13 @@ class NextEvidenceTest {
         assertThat(helps.get(1).narrowing()).isEqualTo(1 - Math.sqrt(1 - 0.45 / 1.7), offset(0.029));
     }
 
-    /** Prior log-sd 0.7 of FMSY, nobody having judged; an index would teach enough of FMSY by itself. */
+    /** Prior log-sd 0.7 of FMSY, nobody having judged, and a well-known biomass: what is unknown of the catch is FMSY. */
     @Test
     void ageOrGrowthHelpsWhereNothingIsKnown() {
         Cases cases = Cases.albacore(0.1);
         cases.surveys.clear();
+        cases.catches.removeIf(c -> c.year() < 1987);
+        cases.surveys.add(new SurveyRecord(1989, "marked", 0.5, true, 150, 0.1, null));
         Evidence e = cases.evidence();
         assertThat(helps(e)).anyMatch(h -> h.gathering() == Gathering.LIFE_HISTORY);
         Traits aged = new Traits("ALB", false, null, 12.0, null, null, null);
