@@ -70,6 +70,11 @@ final class Calibration {
                 .count();
     }
 
+    /** The same in % of the stocks. */
+    double coverage(int quantity) {
+        return 100.0 * covered(quantity) / stocks();
+    }
+
     /** Bounds of {@link #covered} that a calibrated engine leaves with probability at most {@code level}. */
     int[] bounds(double level) {
         BinomialDistribution count = new BinomialDistribution(ranks.length, INSIDE);
@@ -99,11 +104,7 @@ final class Calibration {
         StringBuilder text = new StringBuilder();
         for (int q = 0; q < QUANTITIES.length; q++) {
             text.append(String.format(
-                    Locale.ROOT,
-                    "%s %.1f %% (chi-square %.1f)  ",
-                    QUANTITIES[q],
-                    100.0 * covered(q) / stocks(),
-                    chiSquare(q, 10)));
+                    Locale.ROOT, "%s %.1f %% (chi-square %.1f)  ", QUANTITIES[q], coverage(q), chiSquare(q, 10)));
         }
         return text + "not settled " + unsettled + " of " + stocks();
     }

@@ -73,14 +73,14 @@ class PeelsTest {
                 .hasSize(3);
     }
 
-    /** Ten silent years at the end: the peels take away seasons that have records. */
+    /** Four silent years at the end: the peels take away seasons that have records. */
     @Test
     void silentYearsAreNotPeeled() {
         Retrospective retrospective =
-                Objects.requireNonNull(peels(seasons(20, 1).evidence(), 2029).retrospective());
+                Objects.requireNonNull(peels(seasons(20, 1).evidence(), 2023).retrospective());
         assertThat(retrospective.peels())
                 .extracting(Peel::lastYear)
-                .containsExactly(2029, 2018, 2017, 2016, 2015, 2014);
+                .containsExactly(2023, 2018, 2017, 2016, 2015, 2014);
     }
 
     /** Catch 10 t/yr and an index around 1, which in the last two seasons stands at {@code end}. */
