@@ -94,11 +94,18 @@ public final class StateSpaceAssessor implements Assessor {
         parameters.put("process_sd", fit.parameter(OuterParameters.PROCESS_SD));
         parameters.put("harvest_sd", fit.parameter(OuterParameters.HARVEST_SD));
         for (int j = 0; j < fit.data().series().size(); j++) {
-            String name = fit.data().series().get(j).name();
+            String name = keyOf(fit.data().series().get(j), fit.data().series());
             parameters.put("observation_sd:" + name, fit.parameter(OuterParameters.FIRST_SCATTER + j));
             parameters.put("catchability:" + name, fit.catchability(j));
         }
         return parameters;
+    }
+
+    /** The series' name; of effort that an index shares its name with, told apart. */
+    private static String keyOf(Series series, List<Series> all) {
+        boolean shared = series.effort()
+                && all.stream().anyMatch(s -> !s.effort() && s.name().equals(series.name()));
+        return shared ? series.name() + " (effort)" : series.name();
     }
 
     private static Map<String, Double> estimates(StateSpaceFit fit, double[] shape) {

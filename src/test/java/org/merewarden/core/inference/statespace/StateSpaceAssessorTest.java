@@ -317,4 +317,18 @@ class StateSpaceAssessorTest {
         assertThat(all).noneMatch(v -> v.isNaN() || v.isInfinite());
         assertThat(all).allMatch(v -> v >= 0 || posterior.estimates().containsValue(v));
     }
+
+    @Test
+    void anIndexAndEffortOfOneNameAreKeptApart() {
+        Cases cases = Cases.albacore(0.1);
+        for (int year = 1970; year < 1990; year++) {
+            cases.effort.add(new EffortRecord(year, "longline", 20 + year % 3, null));
+        }
+        assertThat(new StateSpaceAssessor().assess(cases.evidence(), 1989, 3).parameters())
+                .containsKeys(
+                        "observation_sd:longline",
+                        "observation_sd:longline (effort)",
+                        "catchability:longline",
+                        "catchability:longline (effort)");
+    }
 }
