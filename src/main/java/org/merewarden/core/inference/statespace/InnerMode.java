@@ -17,7 +17,7 @@ final class InnerMode {
     static final double SHARP = 1e-6;
 
     /** Of λ², for draws: their weights are made exact afterwards. */
-    static final double COARSE = 1e-3;
+    static final double COARSE = 0.05;
 
     private static final double SLACK = 1e-6;
     private static final double LONGEST_STEP = 2;
