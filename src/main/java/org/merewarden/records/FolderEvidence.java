@@ -44,11 +44,12 @@ public final class FolderEvidence {
 
     /** @throws RefusedImport with every reason: file, line, column, value and rule */
     public static FolderEvidence read(Path folder) {
-        if (Files.isDirectory(folder) && !Files.exists(folder.resolve(STOCKS + ".csv"))) {
+        if (Files.isDirectory(folder) && FolderTables.file(folder, STOCKS).isEmpty()) {
             throw new RefusedImport(List.of(
                     folder.resolve(STOCKS + ".csv") + ": there is no such file; it names the stocks to assess"));
         }
-        boolean registered = Files.exists(folder.resolve(WATER_BODIES + ".csv"));
+        boolean registered = Files.isDirectory(folder)
+                && FolderTables.file(folder, WATER_BODIES).isPresent();
         List<CheckedTable> tables = new ArrayList<>();
         RegisterTables.withoutStore().forEach(t -> tables.add(registered ? t : withoutRegister(t)));
         for (RecordTable table : RecordTables.ALL) {

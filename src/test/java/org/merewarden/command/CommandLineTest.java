@@ -266,6 +266,40 @@ class CommandLineTest {
     }
 
     @Test
+    void tablesAreFoundWhateverTheCaseOfTheirFilesNames() throws IOException {
+        Files.writeString(folder.resolve("STOCKS.CSV"), STOCKS);
+        Files.writeString(folder.resolve("Water-Bodies.csv"), "code,name,area_ha\nmere,Mere,12\n");
+        Files.writeString(folder.resolve("CATCHES.CSV"), CATCHES);
+        var read = FolderEvidence.read(folder);
+        assertThat(read.remarks()).isEmpty();
+        assertThat(read.stocks().get(0).evidence().catches()).hasSize(2);
+        assertThat(read.stocks().get(0).evidence().habitat().areaHectares()).isEqualTo(12);
+    }
+
+    @Test
+    void twoFilesOfOneTableAreRefused() throws IOException {
+        table("stocks", STOCKS);
+        table("catches", CATCHES);
+        Files.writeString(folder.resolve("CATCHES.CSV"), CATCHES);
+        assertThat(assess("r.csv")).isEqualTo(CommandLine.UNUSABLE);
+        assertThat(told().strip())
+                .isEqualTo(
+                        "CATCHES.CSV and catches.csv: both are the table catches; a folder has one file of each table");
+        nothingIsWritten();
+    }
+
+    @Test
+    void aWorkbookIsToldAndPassedOver() throws IOException {
+        table("stocks", STOCKS);
+        table("catches", CATCHES);
+        Files.writeString(folder.resolve("SURVEYS.XLSX"), "");
+        assertThat(FolderEvidence.read(folder).remarks())
+                .singleElement()
+                .asString()
+                .startsWith("SURVEYS.XLSX is passed over");
+    }
+
+    @Test
     void aFolderWithoutAnySeasonIsRefused() throws IOException {
         table("stocks", STOCKS);
         assertThat(assess("r.csv")).isEqualTo(CommandLine.UNUSABLE);
