@@ -30,9 +30,11 @@ public final class FolderTables {
     /**
      * Reads every file {@code TABLE.csv} whose table is known, whatever the case of its name.
      *
+     * @param foundations tables whose rows the others name, in this order: the first of them that is refused, or has a file
+     *     without a row, is told alone, since what the others lack follows from it
      * @throws RefusedImport with every reason: file, line, column, value and rule
      */
-    public static Content read(Path folder, Collection<CheckedTable> known) {
+    public static Content read(Path folder, Collection<CheckedTable> known, List<String> foundations) {
         if (!Files.isDirectory(folder)) {
             throw new RefusedImport(List.of(folder + ": there is no such folder"));
         }
@@ -44,6 +46,7 @@ public final class FolderTables {
         }
         Examiner examiner = new Examiner(tables);
         Examiner.Outcome outcome = examiner.examine(files);
+        foundations.forEach(table -> needUsable(table, outcome.files()));
         if (outcome.refused()) {
             throw RefusedImport.of(outcome.files());
         }
@@ -51,6 +54,20 @@ public final class FolderTables {
                 .forEach(f -> examiner.unknownColumns(f)
                         .forEach(c -> remarks.add(f.name() + ": the column " + c + " is unknown and passed over")));
         return new Content(outcome.toStore(), List.copyOf(remarks));
+    }
+
+    /** By the file's name: of a file that cannot be read the table is unknown. */
+    private static void needUsable(String table, List<ImportedFile> files) {
+        List<ImportedFile> own = files.stream()
+                .filter(f -> f.fileName().equalsIgnoreCase(table + ".csv"))
+                .toList();
+        if (own.stream().anyMatch(ImportedFile::refused)) {
+            throw RefusedImport.of(own);
+        }
+        if (!own.isEmpty() && own.stream().allMatch(f -> f.rows().isEmpty())) {
+            throw new RefusedImport(List.of(
+                    own.get(0).fileName() + ": there is no row below the header; the other tables name its rows"));
+        }
     }
 
     /** The folder's file of a table, whatever the case of its name; empty where there is none. */

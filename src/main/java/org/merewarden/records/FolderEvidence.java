@@ -57,12 +57,7 @@ public final class FolderEvidence {
                     table.definition(), (row, batch) -> table.problems(row, StockReferences.NONE, batch));
             tables.add(registered ? checked : withoutRegister(checked));
         }
-        FolderTables.Content content = FolderTables.read(folder, tables);
-        if (content.of(STOCKS).isEmpty()) {
-            throw new RefusedImport(List.of(folder.resolve(STOCKS + ".csv")
-                    + ": there is no row below the header; each names a stock to assess"));
-        }
-        return new FolderEvidence(content);
+        return new FolderEvidence(FolderTables.read(folder, tables, List.of(WATER_BODIES, STOCKS)));
     }
 
     private static CheckedTable withoutRegister(CheckedTable table) {
