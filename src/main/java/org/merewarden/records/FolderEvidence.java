@@ -8,7 +8,7 @@ import java.util.HashMap;
 import java.util.List;
 import java.util.Map;
 import java.util.OptionalInt;
-import java.util.function.Predicate;
+import java.util.stream.Collectors;
 import org.merewarden.core.evidence.Evidence;
 import org.merewarden.intake.Batch;
 import org.merewarden.intake.CheckedTable;
@@ -33,10 +33,18 @@ public final class FolderEvidence {
 
     private final FolderTables.Content content;
     private final Map<String, TableRow> waterBodies = new HashMap<>();
+    // by table and water body: each stock looks at its own water's rows alone
+    private final Map<String, Map<String, List<TableRow>>> byWater = new HashMap<>();
 
     private FolderEvidence(FolderTables.Content content) {
         this.content = content;
         content.of(WATER_BODIES).forEach(row -> waterBodies.put(row.need("code"), row));
+        group(STOCKS);
+        RecordTables.ALL.forEach(table -> group(table.name()));
+    }
+
+    private void group(String table) {
+        byWater.put(table, content.of(table).stream().collect(Collectors.groupingBy(row -> row.need("water_body"))));
     }
 
     /** @param speciesKey species code, or code.population */
@@ -109,17 +117,18 @@ public final class FolderEvidence {
         String water = stock.need("water_body");
         Map<String, Object> subject = new HashMap<>(waterBody(water).values());
         subject.putAll(stock.values());
-        int stocksInLake =
-                rows(STOCKS, row -> row.need("water_body").equals(water)).size();
+        int stocksInLake = rows(STOCKS, water).size();
         return EvidenceMapping.evidence(
                 new TableRow(stock.line(), subject),
                 stocksInLake,
                 RecordedShare.of(speciesKey(stock), stocksInLake, taken(water)),
-                table -> rows(table.name(), row -> about(row, stock)));
+                table -> rows(table.name(), water).stream()
+                        .filter(row -> about(row, stock))
+                        .toList());
     }
 
     private List<RecordedShare.Taken> taken(String water) {
-        return rows(RecordTables.CATCHES.name(), row -> row.need("water_body").equals(water)).stream()
+        return rows(RecordTables.CATCHES.name(), water).stream()
                 .map(row -> new RecordedShare.Taken(
                         speciesKey(row),
                         EvidenceMapping.year(row),
@@ -127,17 +136,16 @@ public final class FolderEvidence {
                 .toList();
     }
 
-    /** Whether the row is about the stock, its water body, or all stocks of that. */
+    /** Whether the row of the stock's water body is about the stock, or about the water or all its stocks. */
     private static boolean about(TableRow row, TableRow stock) {
         String species = row.textOrEmpty("species");
-        return row.need("water_body").equals(stock.need("water_body"))
-                && (species.isEmpty()
-                        || species.equals(stock.need("species"))
-                                && row.textOrEmpty("population").equals(stock.textOrEmpty("population")));
+        return species.isEmpty()
+                || species.equals(stock.need("species"))
+                        && row.textOrEmpty("population").equals(stock.textOrEmpty("population"));
     }
 
-    private List<TableRow> rows(String table, Predicate<TableRow> wanted) {
-        return content.of(table).stream().filter(wanted).toList();
+    private List<TableRow> rows(String table, String waterBody) {
+        return byWater.getOrDefault(table, Map.of()).getOrDefault(waterBody, List.of());
     }
 
     private TableRow waterBody(String code) {
@@ -146,7 +154,7 @@ public final class FolderEvidence {
     }
 
     private double lastArea(String waterBody) {
-        return rows("areas", row -> row.need("water_body").equals(waterBody)).stream()
+        return rows("areas", waterBody).stream()
                 .max(Comparator.comparing(EvidenceMapping::year))
                 .map(row -> row.number("area_ha"))
                 .orElse(UNKNOWN_AREA_HECTARES);
