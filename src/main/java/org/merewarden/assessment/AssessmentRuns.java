@@ -5,7 +5,6 @@ import java.util.List;
 import java.util.concurrent.ExecutorService;
 import java.util.concurrent.Executors;
 import java.util.concurrent.Future;
-import java.util.concurrent.atomic.AtomicInteger;
 import java.util.stream.Collectors;
 import org.merewarden.activity.ActivityLog;
 import org.merewarden.intake.DemonstrationLoaded;
@@ -92,14 +91,13 @@ class AssessmentRuns implements JobHandler {
     @Override
     public void run(RunningJob job) {
         List<Long> stocks = stocks(job.payload());
-        var done = new AtomicInteger();
-        var failed = new AtomicInteger();
+        var progress = new Progress(job, stocks.size());
         job.progress(0, stocks.size(), "");
         ExecutorService workers =
                 Executors.newFixedThreadPool(Runtime.getRuntime().availableProcessors());
         try {
             List<? extends Future<?>> pieces = stocks.stream()
-                    .map(stock -> workers.submit(() -> assess(job, stock, stocks.size(), done, failed)))
+                    .map(stock -> workers.submit(() -> assess(job, stock, progress)))
                     .toList();
             for (Future<?> piece : pieces) {
                 piece.get();
@@ -114,20 +112,40 @@ class AssessmentRuns implements JobHandler {
         }
     }
 
-    private void assess(RunningJob job, long stock, int all, AtomicInteger done, AtomicInteger failed) {
+    private void assess(RunningJob job, long stock, Progress progress) {
         if (job.cancelRequested()) {
             return;
         }
+        boolean well = true;
         try {
             maker.assess(stock, job.id(), job.requestedBy());
         } catch (RuntimeException e) {
             // one stock's failure must not keep the region waiting; it is counted on the page and kept in the log
-            failed.incrementAndGet();
+            well = false;
             LOG.error("assessment of stock {} failed in job {}", stock, job.id(), e);
         }
-        job.progress(
-                done.incrementAndGet(),
-                all,
-                failed.get() == 0 ? "" : failed.get() + " failed unexpectedly; see the log for job " + job.id() + ".");
+        progress.made(well);
+    }
+
+    /** Counts a stock and stores the count as one step: a smaller count stored after a greater one would stay. */
+    private static final class Progress {
+        private final RunningJob job;
+        private final int all;
+        private int done;
+        private int failed;
+
+        Progress(RunningJob job, int all) {
+            this.job = job;
+            this.all = all;
+        }
+
+        synchronized void made(boolean well) {
+            done++;
+            failed += well ? 0 : 1;
+            job.progress(
+                    done,
+                    all,
+                    failed == 0 ? "" : failed + " failed unexpectedly; see the log for job " + job.id() + ".");
+        }
     }
 }

@@ -145,6 +145,13 @@ class AssessmentStore implements Assessments {
                 .list();
     }
 
+    /** Number of stocks with an assessment. */
+    int assessedStocks() {
+        return jdbc.sql("select count(distinct stock_id) from assessment")
+                .query(Integer.class)
+                .single();
+    }
+
     @Override
     public List<AssessmentView> latest() {
         return jdbc.sql("select " + SUMMARY + " from assessment a where " + LATEST)

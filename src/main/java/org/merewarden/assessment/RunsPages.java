@@ -51,7 +51,7 @@ class RunsPages {
         List<StockView> stocks = register.stocks();
         return new RunsPage(
                 stocks.size(),
-                assessments.latest().size(),
+                assessments.assessedStocks(),
                 recent.stream().anyMatch(JobView::active),
                 recent.stream().map(this::row).toList(),
                 recent.isEmpty() ? null : chosen(chosen(recent, run), stocks));

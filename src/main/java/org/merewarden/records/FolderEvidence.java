@@ -8,7 +8,7 @@ import java.util.HashMap;
 import java.util.List;
 import java.util.Map;
 import java.util.OptionalInt;
-import java.util.function.Predicate;
+import java.util.stream.Collectors;
 import org.merewarden.core.evidence.Evidence;
 import org.merewarden.intake.Batch;
 import org.merewarden.intake.CheckedTable;
@@ -33,10 +33,18 @@ public final class FolderEvidence {
 
     private final FolderTables.Content content;
     private final Map<String, TableRow> waterBodies = new HashMap<>();
+    // by table and water body: each stock looks at its own water's rows alone
+    private final Map<String, Map<String, List<TableRow>>> byWater = new HashMap<>();
 
     private FolderEvidence(FolderTables.Content content) {
         this.content = content;
         content.of(WATER_BODIES).forEach(row -> waterBodies.put(row.need("code"), row));
+        group(STOCKS);
+        RecordTables.ALL.forEach(table -> group(table.name()));
+    }
+
+    private void group(String table) {
+        byWater.put(table, content.of(table).stream().collect(Collectors.groupingBy(row -> row.need("water_body"))));
     }
 
     /** @param speciesKey species code, or code.population */
@@ -44,11 +52,12 @@ public final class FolderEvidence {
 
     /** @throws RefusedImport with every reason: file, line, column, value and rule */
     public static FolderEvidence read(Path folder) {
-        if (Files.isDirectory(folder) && !Files.exists(folder.resolve(STOCKS + ".csv"))) {
+        if (Files.isDirectory(folder) && FolderTables.file(folder, STOCKS).isEmpty()) {
             throw new RefusedImport(List.of(
                     folder.resolve(STOCKS + ".csv") + ": there is no such file; it names the stocks to assess"));
         }
-        boolean registered = Files.exists(folder.resolve(WATER_BODIES + ".csv"));
+        boolean registered = Files.isDirectory(folder)
+                && FolderTables.file(folder, WATER_BODIES).isPresent();
         List<CheckedTable> tables = new ArrayList<>();
         RegisterTables.withoutStore().forEach(t -> tables.add(registered ? t : withoutRegister(t)));
         for (RecordTable table : RecordTables.ALL) {
@@ -56,12 +65,7 @@ public final class FolderEvidence {
                     table.definition(), (row, batch) -> table.problems(row, StockReferences.NONE, batch));
             tables.add(registered ? checked : withoutRegister(checked));
         }
-        FolderTables.Content content = FolderTables.read(folder, tables);
-        if (content.of(STOCKS).isEmpty()) {
-            throw new RefusedImport(List.of(folder.resolve(STOCKS + ".csv")
-                    + ": there is no row below the header; each names a stock to assess"));
-        }
-        return new FolderEvidence(content);
+        return new FolderEvidence(FolderTables.read(folder, tables, List.of(WATER_BODIES, STOCKS)));
     }
 
     private static CheckedTable withoutRegister(CheckedTable table) {
@@ -113,17 +117,18 @@ public final class FolderEvidence {
         String water = stock.need("water_body");
         Map<String, Object> subject = new HashMap<>(waterBody(water).values());
         subject.putAll(stock.values());
-        int stocksInLake =
-                rows(STOCKS, row -> row.need("water_body").equals(water)).size();
+        int stocksInLake = rows(STOCKS, water).size();
         return EvidenceMapping.evidence(
                 new TableRow(stock.line(), subject),
                 stocksInLake,
                 RecordedShare.of(speciesKey(stock), stocksInLake, taken(water)),
-                table -> rows(table.name(), row -> about(row, stock)));
+                table -> rows(table.name(), water).stream()
+                        .filter(row -> about(row, stock))
+                        .toList());
     }
 
     private List<RecordedShare.Taken> taken(String water) {
-        return rows(RecordTables.CATCHES.name(), row -> row.need("water_body").equals(water)).stream()
+        return rows(RecordTables.CATCHES.name(), water).stream()
                 .map(row -> new RecordedShare.Taken(
                         speciesKey(row),
                         EvidenceMapping.year(row),
@@ -131,17 +136,16 @@ public final class FolderEvidence {
                 .toList();
     }
 
-    /** Whether the row is about the stock, its water body, or all stocks of that. */
+    /** Whether the row of the stock's water body is about the stock, or about the water or all its stocks. */
     private static boolean about(TableRow row, TableRow stock) {
         String species = row.textOrEmpty("species");
-        return row.need("water_body").equals(stock.need("water_body"))
-                && (species.isEmpty()
-                        || species.equals(stock.need("species"))
-                                && row.textOrEmpty("population").equals(stock.textOrEmpty("population")));
+        return species.isEmpty()
+                || species.equals(stock.need("species"))
+                        && row.textOrEmpty("population").equals(stock.textOrEmpty("population"));
     }
 
-    private List<TableRow> rows(String table, Predicate<TableRow> wanted) {
-        return content.of(table).stream().filter(wanted).toList();
+    private List<TableRow> rows(String table, String waterBody) {
+        return byWater.getOrDefault(table, Map.of()).getOrDefault(waterBody, List.of());
     }
 
     private TableRow waterBody(String code) {
@@ -150,7 +154,7 @@ public final class FolderEvidence {
     }
 
     private double lastArea(String waterBody) {
-        return rows("areas", row -> row.need("water_body").equals(waterBody)).stream()
+        return rows("areas", waterBody).stream()
                 .max(Comparator.comparing(EvidenceMapping::year))
                 .map(row -> row.number("area_ha"))
                 .orElse(UNKNOWN_AREA_HECTARES);

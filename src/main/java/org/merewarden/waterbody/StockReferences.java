@@ -75,7 +75,7 @@ public final class StockReferences {
                 : new Problem(
                         "water_body",
                         code,
-                        "no water body has the code “" + code + "”; import water-bodies first or mend the code");
+                        "no water body has the code “" + code + "”; add the water body or mend the code");
     }
 
     /** Why the row's stock is unknown, or null. */
@@ -96,6 +96,6 @@ public final class StockReferences {
                 "species",
                 species,
                 "the water body “" + row.textOrEmpty("water_body") + "” has no stock of species " + which
-                        + "; import stocks first or mend the code");
+                        + "; add the stock or mend the code");
     }
 }

@@ -2,9 +2,13 @@ package org.merewarden.assessment;
 
 import static org.assertj.core.api.Assertions.assertThat;
 
+import java.time.Duration;
+import java.util.ArrayList;
 import java.util.Arrays;
 import java.util.Collections;
 import java.util.List;
+import java.util.concurrent.locks.LockSupport;
+import java.util.function.BiConsumer;
 import org.junit.jupiter.api.BeforeEach;
 import org.junit.jupiter.api.Test;
 import org.merewarden.TestRegion;
@@ -41,6 +45,10 @@ class AssessmentRunsTest {
 
     /** A job as the scheduler would hand it over; the row stands in the store already. */
     private RunningJob job(boolean cancelled) {
+        return job(cancelled, first + "," + second, (done, note) -> {});
+    }
+
+    private RunningJob job(boolean cancelled, String payload, BiConsumer<Integer, String> progress) {
         jdbc.sql("insert into job (kind, subject, payload, state, requested_by, requested_at)"
                         + " values ('assess', 'test', '', 'RUNNING', 'ines', current_timestamp)")
                 .update();
@@ -53,7 +61,7 @@ class AssessmentRunsTest {
 
             @Override
             public String payload() {
-                return first + "," + second;
+                return payload;
             }
 
             @Override
@@ -67,7 +75,9 @@ class AssessmentRunsTest {
             }
 
             @Override
-            public void progress(int done, int total, String note) {}
+            public void progress(int done, int total, String note) {
+                progress.accept(done, note);
+            }
         };
     }
 
@@ -80,6 +90,21 @@ class AssessmentRunsTest {
         assertThat(store.ofStock(second)).hasSize(1);
         runs.run(job(false));
         assertThat(store.ofStock(first).stream().map(AssessmentView::number)).containsExactly(2, 1);
+    }
+
+    @Test
+    void theGreatestCountIsStoredLastHoweverSlowTheStore() {
+        List<Integer> counts = Collections.synchronizedList(new ArrayList<>());
+        List<String> notes = Collections.synchronizedList(new ArrayList<>());
+        runs.run(job(false, "-1,-2,-3,-4", (done, note) -> {
+            if (done == 1) {
+                LockSupport.parkNanos(Duration.ofMillis(500).toNanos());
+            }
+            counts.add(done);
+            notes.add(note);
+        }));
+        assertThat(counts).containsExactly(0, 1, 2, 3, 4);
+        assertThat(notes.get(4)).startsWith("4 failed unexpectedly");
     }
 
     @Test

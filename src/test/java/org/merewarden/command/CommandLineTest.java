@@ -266,6 +266,58 @@ class CommandLineTest {
     }
 
     @Test
+    void tablesAreFoundWhateverTheCaseOfTheirFilesNames() throws IOException {
+        Files.writeString(folder.resolve("STOCKS.CSV"), STOCKS);
+        Files.writeString(folder.resolve("Water-Bodies.csv"), "code,name,area_ha\nmere,Mere,12\n");
+        Files.writeString(folder.resolve("CATCHES.CSV"), CATCHES);
+        var read = FolderEvidence.read(folder);
+        assertThat(read.remarks()).isEmpty();
+        assertThat(read.stocks().get(0).evidence().catches()).hasSize(2);
+        assertThat(read.stocks().get(0).evidence().habitat().areaHectares()).isEqualTo(12);
+    }
+
+    @ParameterizedTest
+    @CsvSource(delimiter = '|', textBlock = """
+        stocks       | water_body,species,population~mere,FPE,süd    | stocks.csv, line 2, “byte FC”: not UTF-8
+        stocks       | water_body,species~mere,XXX                   | stocks.csv, line 2, column species, “XXX”
+        stocks       | water_body~mere                               | stocks.csv, line 1: the table stocks needs
+        stocks       | water_body,species                            | stocks.csv: there is no row below the header
+        water-bodies | code,name,area_ha~mere,Südmere,12             | water-bodies.csv, line 2, “byte FC”: not UTF-8
+        water-bodies | code,name,area_ha                             | water-bodies.csv: there is no row below the header
+        """)
+    void whereTheRegisterIsUnusableItAloneIsTold(String name, String text, String message) throws IOException {
+        table("stocks", STOCKS);
+        table("catches", CATCHES);
+        Files.writeString(folder.resolve(name + ".csv"), text.replace('~', '\n') + "\n", StandardCharsets.ISO_8859_1);
+        assertThat(assess("r.csv")).isEqualTo(CommandLine.UNUSABLE);
+        assertThat(told().strip()).startsWith(message).hasLineCount(1);
+        nothingIsWritten();
+    }
+
+    @Test
+    void twoFilesOfOneTableAreRefused() throws IOException {
+        table("stocks", STOCKS);
+        table("catches", CATCHES);
+        Files.writeString(folder.resolve("CATCHES.CSV"), CATCHES);
+        assertThat(assess("r.csv")).isEqualTo(CommandLine.UNUSABLE);
+        assertThat(told().strip())
+                .isEqualTo(
+                        "CATCHES.CSV and catches.csv: both are the table catches; a folder has one file of each table");
+        nothingIsWritten();
+    }
+
+    @Test
+    void aWorkbookIsToldAndPassedOver() throws IOException {
+        table("stocks", STOCKS);
+        table("catches", CATCHES);
+        Files.writeString(folder.resolve("SURVEYS.XLSX"), "");
+        assertThat(FolderEvidence.read(folder).remarks())
+                .singleElement()
+                .asString()
+                .startsWith("SURVEYS.XLSX is passed over");
+    }
+
+    @Test
     void aFolderWithoutAnySeasonIsRefused() throws IOException {
         table("stocks", STOCKS);
         assertThat(assess("r.csv")).isEqualTo(CommandLine.UNUSABLE);

@@ -154,7 +154,7 @@ class RecordHandlersTest {
         Batch brings = (table, keys) -> table.equals("water-bodies") || table.equals("stocks");
 
         assertThat(problem(catchHandler, lake).rule())
-                .isEqualTo("no water body has the code “nowhere”; import water-bodies first or mend the code");
+                .isEqualTo("no water body has the code “nowhere”; add the water body or mend the code");
         assertThat(problem(catchHandler, species).column()).isEqualTo("species");
         assertThat(catchHandler.examine(List.of(lake, species), brings)).containsExactly(Fate.NEW, Fate.NEW);
     }

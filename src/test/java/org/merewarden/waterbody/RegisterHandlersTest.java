@@ -128,8 +128,8 @@ class RegisterHandlersTest {
         assertThat(alone.problems())
                 .singleElement()
                 .satisfies(p -> assertThat(p.rule())
-                        .isEqualTo("no water body has the code “brought-lake”; import water-bodies first or mend the"
-                                + " code"));
+                        .isEqualTo(
+                                "no water body has the code “brought-lake”; add the water body or mend the" + " code"));
     }
 
     @Test

@@ -41,6 +41,13 @@ class AnyEvidenceTest {
         assertThat(posterior.estimates().values())
                 .as("estimates of seed %d", seed)
                 .allMatch(Double::isFinite);
+        assertThat(posterior.parameters())
+                .as("parameters of seed %d", seed)
+                .allSatisfy((name, values) -> assertThat(Arrays.stream(values)).allMatch(Double::isFinite));
+        // records tell all their numbers; one that cannot be had is null
+        assertThat(posterior.diagnostics().toString())
+                .as("diagnostics of seed %d", seed)
+                .doesNotContain("NaN", "Infinity");
         for (int k = 0; k < posterior.draws(); k++) {
             assertThat(posterior.msyTonnes()[k])
                     .as("MSY of seed %d", seed)
@@ -59,6 +66,9 @@ class AnyEvidenceTest {
                     .matches(row -> Arrays.stream(row).allMatch(v -> v >= 0 && Double.isFinite(v)));
             assertThat(posterior.fishingPerYear()[k])
                     .as("harvest of seed %d", seed)
+                    .matches(row -> Arrays.stream(row).allMatch(v -> v >= 0 && Double.isFinite(v)));
+            assertThat(posterior.removalsTonnes()[k])
+                    .as("removals of seed %d", seed)
                     .matches(row -> Arrays.stream(row).allMatch(v -> v >= 0 && Double.isFinite(v)));
         }
     }
