@@ -19,6 +19,7 @@ import org.merewarden.core.dynamics.SurplusProduction;
 import org.merewarden.core.evidence.EventRecord;
 import org.merewarden.core.evidence.PriorRecord;
 import org.merewarden.core.evidence.SurveyRecord;
+import org.merewarden.core.inference.CheckBounds;
 import org.merewarden.core.inference.Diagnostics;
 import org.merewarden.core.inference.Diagnostics.Kind;
 import org.merewarden.core.inference.Diagnostics.Learned;
@@ -174,8 +175,8 @@ class StateSpaceDiagnosticsTest {
                         .mapToDouble(StateSpaceDiagnosticsTest::influence)
                         .max()
                         .orElseThrow())
-                .isGreaterThan(FailedChecks.LARGEST_INFLUENCE);
-        assertThat(agreeing.series()).allMatch(s -> influence(s) < FailedChecks.LARGEST_INFLUENCE);
+                .isGreaterThan(CheckBounds.LARGEST_INFLUENCE);
+        assertThat(agreeing.series()).allMatch(s -> influence(s) < CheckBounds.LARGEST_INFLUENCE);
         assertThat(FailedChecks.of(contradictory)).anyMatch(s -> s.contains("MSY would be"));
         assertThat(FailedChecks.of(agreeing)).noneMatch(s -> s.contains("MSY would be"));
         // without the contradicting index the result is that of the honest one alone
