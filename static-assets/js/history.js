@@ -45,7 +45,7 @@ function drawHistory(canvas) {
         x: { type: "linear", offset: false, min: h.from, max: h.to, title: { display: true, text: h.xLabel }, afterBuildTicks: axis => { axis.ticks = seasons(h); }, ticks: { callback: v => String(v) } },
         y: { min: 0, max: h.yMax, title: { display: true, text: h.yLabel }, ticks: { includeBounds: false } },
       },
-      plugins: { legend: { labels: { usePointStyle: true, pointStyleWidth: 28, generateLabels: dashed, color: colour(canvas, 1), filter: item => item.text !== "" } } },
+      plugins: { legend: { labels: { usePointStyle: true, generateLabels: dashed, color: colour(canvas, 1), filter: item => item.text !== "" } } },
     },
   });
 }

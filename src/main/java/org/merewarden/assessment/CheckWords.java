@@ -3,8 +3,10 @@ package org.merewarden.assessment;
 import java.util.ArrayList;
 import java.util.Comparator;
 import java.util.List;
+import java.util.Optional;
+import java.util.function.ToDoubleFunction;
 import org.apache.commons.math3.distribution.ChiSquaredDistribution;
-import org.jspecify.annotations.Nullable;
+import org.merewarden.core.inference.CheckBounds;
 import org.merewarden.core.inference.Diagnostics.Retrospective;
 import org.merewarden.core.inference.Diagnostics.SeriesCheck;
 import org.merewarden.web.Figures;
@@ -13,19 +15,15 @@ import org.springframework.stereotype.Component;
 /**
  * What to make of the checks of an assessment, one sentence each.
  *
- * <p>Bounds: the residuals' standard deviation against the 95 % quantile of √(χ²/(n − 1)) (Francis 2011, Can. J. Fish.
- * Aquat. Sci. 68: 1124–1138, recalled; there is no lower bound because hidden states lean towards the values); Mohn's ρ within −0.15 and 0.20 (Hurtado-Ferro et al. 2015, ICES J. Mar.
- * Sci. 72: 99–110, for long-lived species, recalled); runs below 1 in 20, contrast 1.5 and 3, influence 10 and 25 % are
- * our judgement.
+ * <p>What fails, fails by {@link CheckBounds}, so that no sentence here contradicts the verdict. Further bounds: the
+ * residuals' standard deviation against the 95 % quantile of √(χ²/(n − 1)) (Francis 2011, Can. J. Fish. Aquat. Sci. 68:
+ * 1124–1138, recalled; there is no lower bound because hidden states lean towards the values); contrast 1.5 and 3 and an
+ * influence of 10 % are our judgement.
  */
 @Component
 class CheckWords {
     private static final int FEW = 3;
-    private static final double RARE = 0.05;
-    private static final double LEAST_RHO = -0.15;
-    private static final double MOST_RHO = 0.20;
     private static final double SMALL_CHANGE = 0.10;
-    private static final double LARGE_CHANGE = 0.25;
 
     private final Texts texts;
 
@@ -53,7 +51,7 @@ class CheckWords {
             return texts.get("met.few");
         }
         Double runs = c.runsProbability();
-        if (runs != null && runs < RARE) {
+        if (runs != null && CheckBounds.dependent(c)) {
             Double lag = c.lagOne();
             return texts.get(lag == null || lag > 0 ? "met.runs" : "met.alternates", Figures.percent(runs));
         }
@@ -74,24 +72,36 @@ class CheckWords {
         if (error == null) {
             return texts.get("foreseen.none");
         }
-        return texts.get(error < 1 ? "foreseen.better" : "foreseen.no-better", Figures.sig(error), c.hindcasts());
+        String how = CheckBounds.unforeseen(c) ? "worse" : error < 1 ? "better" : "alike";
+        return texts.get("foreseen." + how, Figures.sig(error), c.hindcasts());
     }
 
-    /** Which series the result hangs on; empty where none could be left out. */
+    /** Which series MSY hangs on and, where another moves it much, which B/BMSY; empty where none could be left out. */
     List<String> influence(List<SeriesCheck> checks) {
+        List<String> sentences = new ArrayList<>();
+        Optional<SeriesCheck> msy = largest(checks, CheckBounds::msyChange);
+        msy.ifPresent(c -> sentences.add(influence(c)));
+        largest(checks, CheckBounds::relativeBiomassChange)
+                .filter(c -> !msy.equals(Optional.of(c)))
+                .filter(c -> Math.abs(CheckBounds.relativeBiomassChange(c)) > CheckBounds.LARGEST_INFLUENCE)
+                .ifPresent(c -> sentences.add(texts.get(
+                        "influence.biomass",
+                        c.series(),
+                        Figures.sig(c.relativeBiomassWithout()),
+                        Figures.sig(c.relativeBiomassWith()))));
+        return sentences;
+    }
+
+    private static Optional<SeriesCheck> largest(List<SeriesCheck> checks, ToDoubleFunction<SeriesCheck> change) {
         return checks.stream()
-                .filter(c -> Double.isFinite(change(c)))
-                .max(Comparator.comparingDouble(CheckWords::change))
-                .map(this::influence)
-                .stream()
-                .toList();
+                .filter(c -> Double.isFinite(change.applyAsDouble(c)))
+                .max(Comparator.comparingDouble(c -> Math.abs(change.applyAsDouble(c))));
     }
 
     private String influence(SeriesCheck c) {
-        double change = Math.expm1(change(c));
-        String size = change < SMALL_CHANGE ? "small" : change < LARGE_CHANGE ? "some" : "large";
+        boolean small = Math.abs(CheckBounds.msyChange(c)) < SMALL_CHANGE;
         return texts.get(
-                "influence." + size,
+                "influence." + (CheckBounds.influential(c) ? "large" : small ? "small" : "some"),
                 c.series(),
                 Figures.sig(c.msyWithout()),
                 Figures.tonnes(c.msyWith()),
@@ -99,19 +109,9 @@ class CheckWords {
                 Figures.sig(c.relativeBiomassWith()));
     }
 
-    /** By how much MSY or present B/BMSY changes without the series, the larger, as a logarithm; NaN where not known. */
-    private static double change(SeriesCheck c) {
-        return Math.max(
-                logRatio(c.msyWithout(), c.msyWith()), logRatio(c.relativeBiomassWithout(), c.relativeBiomassWith()));
-    }
-
-    private static double logRatio(@Nullable Double without, @Nullable Double with) {
-        return without == null || with == null ? Double.NaN : Math.abs(Math.log(without / with));
-    }
-
     String retrospective(Retrospective r) {
-        double rho = r.rhoBiomass();
-        String way = rho > MOST_RHO ? "higher" : rho < LEAST_RHO ? "lower" : "steady";
+        double rho = r.rhoRelativeBiomass();
+        String way = !CheckBounds.unsteady(r) ? "steady" : rho > 0 ? "higher" : "lower";
         return texts.get(
                 "peels." + way,
                 Figures.percent(Math.abs(rho)),

@@ -67,8 +67,10 @@ class LakeYieldPart implements LakePart {
         List<StockView> stocks = register.stocks().stream()
                 .filter(s -> s.waterBodyId() == lake.id())
                 .toList();
-        Map<Long, LakeShare> shares =
-                stocks.stream().collect(Collectors.toMap(StockView::id, s -> LakeShare.of(reader.evidence(s.id()))));
+        Map<Long, LakeShare> shares = reader.subjects(lake.id()).entrySet().stream()
+                .collect(Collectors.toMap(
+                        Map.Entry::getKey,
+                        e -> LakeShare.of(e.getValue().habitat(), e.getValue().traits())));
         Map<Long, AssessmentView> latest =
                 assessments.latest().stream().collect(Collectors.toMap(AssessmentView::stockId, Function.identity()));
         List<AssessmentView> summed = stocks.stream()

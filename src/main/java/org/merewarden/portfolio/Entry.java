@@ -26,6 +26,8 @@ record Entry(
         @Nullable LimitView limit,
         @Nullable UptakeView uptake) {
     static final String UNASSESSED = "unassessed";
+    private static final String NO_REMOVALS = "none";
+    private static final List<String> WELL_KNOWN = List.of("STRONG", "FAIR");
 
     /** secure, watch, strained, critical or unassessed. */
     String standingCode() {
@@ -41,10 +43,30 @@ record Entry(
         return assessment != null && assessment.closedLastSeason();
     }
 
-    /** (MSY − removals)/MSY; null for a closed stock, whose margin says nothing. */
+    /** (MSY − removals)/MSY; null where it says nothing: closed, or no removals known to count from. */
     @Nullable
     Double margin() {
-        return standing == null || closed() ? null : standing.margin();
+        StandingView s = judged();
+        return s == null ? null : s.margin();
+    }
+
+    /** P(margin < 0); null with the margin. */
+    @Nullable
+    Double marginNegativeProbability() {
+        StandingView s = judged();
+        return s == null ? null : s.marginNegativeProbability();
+    }
+
+    private @Nullable StandingView judged() {
+        return standing == null || closed() || standing.removalsBasis().equals(NO_REMOVALS) ? null : standing;
+    }
+
+    /** Why a standing other than secure may have more to do with width than with level, in a text's key. */
+    String width() {
+        if (standing == null || !standing.mainlyLittleKnown()) {
+            return "";
+        }
+        return assessment != null && WELL_KNOWN.contains(assessment.strength()) ? "wide" : "little";
     }
 
     @Nullable

@@ -4,7 +4,6 @@ import java.util.Arrays;
 import java.util.List;
 import java.util.stream.Stream;
 import org.jspecify.annotations.Nullable;
-import org.merewarden.advice.StandingView;
 import org.merewarden.assessment.AssessmentView;
 import org.springframework.stereotype.Component;
 
@@ -51,13 +50,12 @@ class PortfolioSheet {
     }
 
     private List<@Nullable Object> names(Entry e) {
-        StandingView s = e.closed() ? null : e.standing();
         return cells(
                 e.stock().lakeName(),
                 RowBuilder.speciesName(e),
                 rows.standing(e),
                 e.margin(),
-                s == null ? null : s.marginNegativeProbability());
+                e.marginNegativeProbability());
     }
 
     private static List<@Nullable Object> assessed(Entry e) {

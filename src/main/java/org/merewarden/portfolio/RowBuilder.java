@@ -5,7 +5,6 @@ import java.util.ArrayList;
 import java.util.List;
 import org.jspecify.annotations.Nullable;
 import org.merewarden.advice.LimitView;
-import org.merewarden.advice.StandingView;
 import org.merewarden.assessment.AssessmentView;
 import org.merewarden.web.Figures;
 import org.merewarden.web.Svg;
@@ -33,7 +32,7 @@ class RowBuilder {
                 speciesName(e),
                 e.standingCode(),
                 standing(e),
-                e.standing() != null && e.standing().mainlyLittleKnown() ? texts.get("little-known") : "",
+                e.width().isEmpty() ? "" : texts.get("known." + e.width()),
                 margin(e),
                 marginBar(e),
                 msy(e),
@@ -70,16 +69,16 @@ class RowBuilder {
     }
 
     private String margin(Entry e) {
-        StandingView standing = e.standing();
-        if (standing == null) {
+        if (e.standing() == null) {
             return "";
         }
-        return e.closed()
-                ? texts.get("closed")
-                : texts.get(
-                        "margin.words",
-                        Figures.percent(standing.margin()),
-                        Figures.percent(standing.marginNegativeProbability()));
+        if (e.closed()) {
+            return texts.get("closed");
+        }
+        Double margin = e.margin();
+        return margin == null
+                ? Figures.UNKNOWN
+                : texts.get("margin.words", Figures.percent(margin), Figures.percent(e.marginNegativeProbability()));
     }
 
     private String marginBar(Entry e) {

@@ -32,9 +32,8 @@ class StockWords {
                     "stock.unsettled",
                     String.join(" ", a.verdict().stream().limit(1).toList())));
         }
-        boolean little = e.standing() != null && e.standing().mainlyLittleKnown();
-        lede.add(texts.get(
-                little ? "stock.stands-little" : "stock.stands", e.stock().title(), rows.standing(e)));
+        String stands = e.width().isEmpty() ? "stock.stands" : "stock.stands-" + e.width();
+        lede.add(texts.get(stands, e.stock().title(), rows.standing(e)));
         if (a != null && a.biomassTonnes() != null && a.bOverBmsy() != null) {
             lede.add(texts.get(
                     a.bOverBmsy() < 1 ? "stock.biomass-under" : "stock.biomass-above",

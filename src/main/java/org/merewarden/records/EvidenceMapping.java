@@ -59,7 +59,7 @@ final class EvidenceMapping {
         return rows.stream().map(record).toList();
     }
 
-    private static Habitat habitat(TableRow water, int stocksInLake, @Nullable Double shareOfRecordedCatch) {
+    static Habitat habitat(TableRow water, int stocksInLake, @Nullable Double shareOfRecordedCatch) {
         return new Habitat(
                 water.need("kind"),
                 number(water, "area_ha"),
@@ -71,7 +71,7 @@ final class EvidenceMapping {
                 shareOfRecordedCatch);
     }
 
-    private static Traits traits(TableRow stock) {
+    static Traits traits(TableRow stock) {
         return new Traits(
                 stock.need("species"),
                 "stocked only".equals(stock.text("recruitment")),

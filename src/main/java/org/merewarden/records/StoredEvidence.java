@@ -5,6 +5,7 @@ import java.sql.SQLException;
 import java.util.HashMap;
 import java.util.List;
 import java.util.Map;
+import java.util.stream.Collectors;
 import org.jspecify.annotations.Nullable;
 import org.merewarden.core.evidence.Evidence;
 import org.merewarden.intake.TableRow;
@@ -16,7 +17,14 @@ import org.springframework.transaction.annotation.Transactional;
 /** Reads the rows in force of one stock as the core's evidence, in eight statements. */
 @Service
 class StoredEvidence implements EvidenceReader {
-    private record Subject(long stockId, long waterBodyId, String population, int stocksInLake, TableRow cells) {}
+    private record Stock(long id, long waterBodyId, String population, int stocksInLake, TableRow cells) {}
+
+    private static final String STOCKS = """
+            select s.id as stock_id, w.id as water_body_id, s.population, w.kind, w.area_ha, w.mean_depth_m,
+                w.dissolved_solids_mg_l, w.conductivity_us_cm, w.mean_air_temperature_c, s.species, s.recruitment,
+                s.productivity, s.max_age_years, s.growth_k_per_year, s.growth_linf_cm, s.share_of_lake_yield,
+                (select count(*) from stock other where other.water_body_id = w.id) as stocks_in_lake
+            from stock s join water_body w on w.id = s.water_body_id""";
 
     private final JdbcClient jdbc;
 
@@ -27,38 +35,55 @@ class StoredEvidence implements EvidenceReader {
     @Override
     @Transactional(readOnly = true)
     public Evidence evidence(long stockId) {
-        Subject subject = subject(stockId);
+        Stock stock = stock(stockId);
         return EvidenceMapping.evidence(
-                subject.cells(), subject.stocksInLake(), recordedShare(subject), table -> rows(table, subject));
+                stock.cells(),
+                stock.stocksInLake(),
+                recordedShare(stock, taken(stock.waterBodyId())),
+                table -> rows(table, stock));
     }
 
-    private @Nullable Double recordedShare(Subject subject) {
-        List<RecordedShare.Taken> taken = jdbc.sql("""
+    @Override
+    @Transactional(readOnly = true)
+    public Map<Long, Subject> subjects(long waterBodyId) {
+        List<RecordedShare.Taken> taken = taken(waterBodyId);
+        return jdbc
+                .sql(STOCKS + " where w.id = :water")
+                .param("water", waterBodyId)
+                .query(StoredEvidence::readStock)
+                .list()
+                .stream()
+                .collect(Collectors.toMap(
+                        Stock::id,
+                        s -> new Subject(
+                                EvidenceMapping.habitat(s.cells(), s.stocksInLake(), recordedShare(s, taken)),
+                                EvidenceMapping.traits(s.cells()))));
+    }
+
+    private static @Nullable Double recordedShare(Stock stock, List<RecordedShare.Taken> taken) {
+        return RecordedShare.of(Long.toString(stock.id()), stock.stocksInLake(), taken);
+    }
+
+    private List<RecordedShare.Taken> taken(long waterBodyId) {
+        return jdbc.sql("""
                         select c.stock_id, c.season_year, c.catch_t / coalesce(c.reported_fraction, 1) as removals_t
                         from catch_record c join stock s on s.id = c.stock_id
                         where s.water_body_id = :water and c.current_mark = true and c.provisional = false""")
-                .param("water", subject.waterBodyId())
+                .param("water", waterBodyId)
                 .query((row, number) -> new RecordedShare.Taken(
                         row.getString("stock_id"), row.getInt("season_year"), row.getDouble("removals_t")))
                 .list();
-        return RecordedShare.of(Long.toString(subject.stockId()), subject.stocksInLake(), taken);
     }
 
-    private Subject subject(long stockId) {
-        return jdbc.sql("""
-                select s.id as stock_id, w.id as water_body_id, s.population, w.kind, w.area_ha, w.mean_depth_m,
-                    w.dissolved_solids_mg_l, w.conductivity_us_cm, w.mean_air_temperature_c, s.species, s.recruitment,
-                    s.productivity, s.max_age_years, s.growth_k_per_year, s.growth_linf_cm, s.share_of_lake_yield,
-                    (select count(*) from stock other where other.water_body_id = w.id) as stocks_in_lake
-                from stock s join water_body w on w.id = s.water_body_id
-                where s.id = :stock""")
+    private Stock stock(long stockId) {
+        return jdbc.sql(STOCKS + " where s.id = :stock")
                 .param("stock", stockId)
-                .query(StoredEvidence::readSubject)
+                .query(StoredEvidence::readStock)
                 .optional()
                 .orElseThrow(() -> new NotFound("no stock with the number " + stockId));
     }
 
-    private static Subject readSubject(ResultSet row, int number) throws SQLException {
+    private static Stock readStock(ResultSet row, int number) throws SQLException {
         Map<String, Object> cells = new HashMap<>();
         for (String column : EvidenceMapping.SUBJECT_TEXTS) {
             put(cells, row, column, String.class);
@@ -66,7 +91,7 @@ class StoredEvidence implements EvidenceReader {
         for (String column : EvidenceMapping.SUBJECT_NUMBERS) {
             put(cells, row, column, Double.class);
         }
-        return new Subject(
+        return new Stock(
                 row.getLong("stock_id"),
                 row.getLong("water_body_id"),
                 row.getString("population"),
@@ -82,13 +107,13 @@ class StoredEvidence implements EvidenceReader {
         }
     }
 
-    private List<TableRow> rows(RecordTable table, Subject subject) {
+    private List<TableRow> rows(RecordTable table, Stock stock) {
         String rows = "select * from " + table.sqlName() + " where " + table.ownerColumn()
                 + " = :owner and current_mark = true" + which(table);
         return jdbc.sql(rows)
-                .param("owner", table.ofStock() ? subject.stockId() : subject.waterBodyId())
-                .param("species", subject.cells().need("species"))
-                .param("population", subject.population())
+                .param("owner", table.ofStock() ? stock.id() : stock.waterBodyId())
+                .param("species", stock.cells().need("species"))
+                .param("population", stock.population())
                 .query((row, number) -> table.row(row))
                 .list();
     }

@@ -23,29 +23,42 @@ public final class Figures {
     public static final String UNKNOWN = "—";
 
     private static final MathContext THREE_DIGITS = new MathContext(3, RoundingMode.HALF_EVEN);
+    private static final int LEAST_EXPONENT = -4;
     private static final char NO_BREAK_SPACE = '\u00a0';
 
     private Figures() {}
 
-    /** Three significant digits, no trailing zeros: 12.4, 1,230, 0.0457. */
+    /** Three significant digits, no trailing zeros: 12.4, 1,230, 0.0457, 2.31 × 10⁻⁵. */
     public static String sig(@Nullable Double value) {
         if (value == null || !Double.isFinite(value)) {
             return UNKNOWN;
         }
-        BigDecimal rounded = new BigDecimal(value).round(THREE_DIGITS).stripTrailingZeros();
+        return written(new BigDecimal(value).round(THREE_DIGITS));
+    }
+
+    /** All digits, thousands apart; under 1e-4 as a power of ten, since nobody counts so many zeros. */
+    private static String written(BigDecimal rounded) {
+        BigDecimal digits = rounded.stripTrailingZeros();
+        int exponent = digits.precision() - digits.scale() - 1;
+        boolean tiny = digits.signum() != 0 && exponent < LEAST_EXPONENT;
+        BigDecimal shown = tiny ? digits.movePointLeft(exponent) : digits;
         NumberFormat format = NumberFormat.getNumberInstance(locale());
-        format.setMaximumFractionDigits(Math.max(0, rounded.scale()));
-        return format.format(rounded);
+        format.setMaximumFractionDigits(Math.max(0, shown.scale()));
+        String text = format.format(shown);
+        return tiny ? text + NO_BREAK_SPACE + "×" + NO_BREAK_SPACE + "10⁻" + raised(-exponent) : text;
+    }
+
+    private static String raised(int number) {
+        StringBuilder text = new StringBuilder();
+        Integer.toString(number).chars().forEach(c -> text.append("⁰¹²³⁴⁵⁶⁷⁸⁹".charAt(c - '0')));
+        return text.toString();
     }
 
     /** So many significant digits without trailing zeros, for results that are compared with published ones. */
     public static String digits(@Nullable Double value, int digits) {
         return value == null || !Double.isFinite(value)
                 ? UNKNOWN
-                : new java.math.BigDecimal(value)
-                        .round(new java.math.MathContext(digits))
-                        .stripTrailingZeros()
-                        .toPlainString();
+                : written(new BigDecimal(value).round(new MathContext(digits, RoundingMode.HALF_EVEN)));
     }
 
     /** Tonnes with their unit: "12.4 t". */

@@ -80,7 +80,7 @@ class AssessmentPagesTest {
                 .contains("Ryder 1965, exact units")
                 .contains("Standardised residuals of nets through the seasons")
                 .contains("it foresees this series")
-                .contains("The result leans on nets")
+                .contains("MSY leans on nets")
                 .contains("Biomass over BMSY with the last seasons taken away one by one")
                 .contains("12% higher on average")
                 .contains("by about 18%")

@@ -10,6 +10,7 @@ import org.junit.jupiter.api.AfterEach;
 import org.junit.jupiter.api.BeforeEach;
 import org.junit.jupiter.api.Test;
 import org.merewarden.core.inference.Diagnostics.Kind;
+import org.merewarden.core.inference.Diagnostics.Retrospective;
 import org.merewarden.core.inference.Diagnostics.SeriesCheck;
 import org.springframework.context.i18n.LocaleContextHolder;
 
@@ -65,7 +66,10 @@ class CheckWordsTest {
 
     @Test
     void aModelThatForeseesNothingIsNotTrusted() {
-        assertThat(words.series(survey(10, 0.1, 1.0, 0.6, 0.2, 1.3)).get(1)).contains("do not trust");
+        assertThat(words.series(survey(10, 0.1, 1.0, 0.6, 0.2, 1.51)).get(1)).contains("do not trust");
+        assertThat(words.series(survey(10, 0.1, 1.0, 0.6, 0.2, 1.5)).get(1))
+                .contains("about as well as that")
+                .doesNotContain("trust");
         assertThat(words.series(survey(10, 0.1, 1.0, 0.6, 0.2, null)).get(1)).contains("too few seasons");
     }
 
@@ -79,27 +83,59 @@ class CheckWordsTest {
         assertThat(words.influence(List.of(influencing("nets", 12.6, 12.5), influencing("traps", 20.0, 12.5))))
                 .singleElement()
                 .asString()
-                .startsWith("The result hangs on traps: without it MSY would be 20 instead of 12.5\u00a0t");
+                .startsWith("MSY hangs on traps: without it MSY would be 20 instead of 12.5\u00a0t");
         assertThat(words.influence(List.of(influencing("nets", 10.5, 12.5))))
                 .singleElement()
                 .asString()
-                .startsWith("The result leans on nets");
+                .startsWith("MSY leans on nets");
         assertThat(words.influence(List.of(influencing("nets", 12.6, 12.5))))
                 .singleElement()
                 .asString()
-                .startsWith("No series carries the result alone");
+                .startsWith("MSY hangs on no series alone");
         assertThat(words.influence(List.of(influencing("nets", null, 12.5)))).isEmpty();
+    }
+
+    /** 12.5 → 9.6 is −23 %, though 12.5/9.6 is +30 %: the check counts from the result with all series. */
+    @Test
+    void influenceIsJudgedByTheChecksOwnMeasure() {
+        assertThat(words.influence(List.of(influencing("nets", 9.6, 12.5))))
+                .singleElement()
+                .asString()
+                .startsWith("MSY leans");
+        assertThat(words.influence(List.of(influencing("nets", 9.3, 12.5))))
+                .singleElement()
+                .asString()
+                .startsWith("MSY hangs on nets");
+    }
+
+    @Test
+    void aChangeOfRelativeBiomassAloneIsInformation() {
+        SeriesCheck traps =
+                new SeriesCheck("traps", Kind.INDEX, 10, null, null, null, null, null, null, 0, 12.6, 12.5, 0.4, 0.8);
+        assertThat(words.influence(List.of(influencing("nets", 14.0, 12.5), traps)))
+                .hasSize(2)
+                .noneMatch(s -> s.contains("Be sure"))
+                .last()
+                .isEqualTo("B/BMSY changes most without traps: 0.4 instead of 0.8.");
+        assertThat(words.influence(List.of(traps)))
+                .singleElement()
+                .asString()
+                .startsWith("MSY hangs on no series alone")
+                .contains("B/BMSY 0.4 instead of 0.8");
     }
 
     @Test
     void mohnsRhoSaysWhichWayTheLastFigureErrs() {
         assertThat(words.retrospective(retrospective(0.12)))
-                .isEqualTo("Over 2 seasons taken away, earlier results put the biomass 12% higher on average than all"
+                .isEqualTo("Over 2 seasons taken away, earlier results put B/BMSY 12% higher on average than all"
                         + " records do: steady.");
         assertThat(words.retrospective(retrospective(-0.05)))
                 .contains("5% lower")
                 .endsWith("steady.");
+        assertThat(words.retrospective(new Retrospective(retrospective(0).peels(), 0.5, 0.1, 0)))
+                .endsWith("steady.");
         assertThat(words.retrospective(retrospective(0.4))).contains("probably too high");
+        assertThat(words.retrospective(retrospective(-0.19))).endsWith("steady.");
         assertThat(words.retrospective(retrospective(-0.3))).contains("probably too low");
     }
 }

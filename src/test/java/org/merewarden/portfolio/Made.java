@@ -95,6 +95,15 @@ final class Made {
     }
 
     static StandingView standing(long stockId, String standing, double margin, double removals, String basis) {
+        return standing(stockId, standing, false, margin, removals, basis);
+    }
+
+    static StandingView wide(long stockId, String standing) {
+        return standing(stockId, standing, true, 0.1, 12, "limit");
+    }
+
+    private static StandingView standing(
+            long stockId, String standing, boolean wide, double margin, double removals, String basis) {
         return new StandingView(
                 stockId,
                 100 + stockId,
@@ -102,7 +111,7 @@ final class Made {
                 removals,
                 basis,
                 standing,
-                false,
+                wide,
                 0.11,
                 0.11,
                 0.02,

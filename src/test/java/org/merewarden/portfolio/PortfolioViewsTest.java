@@ -91,6 +91,45 @@ class PortfolioViewsTest {
         assertThat(row(closed).biomass()).isEqualTo("0.3 (0.24–0.375)");
     }
 
+    /** Neither a limit nor an assessed season: a margin of 100 % would count from removals that nobody knows. */
+    @Test
+    void withoutKnownRemovalsThereIsNoMargin() {
+        Entry lakeOnly = Made.entry(
+                Made.stock(5, "dove", "pike", null),
+                Made.assessment(5, 5, 1.6, "NONE"),
+                Made.standing(5, "WATCH", 1.0, 0, "none"),
+                null,
+                null);
+        assertThat(row(lakeOnly).margin()).isEqualTo("—");
+        assertThat(row(lakeOnly).marginBar()).isEmpty();
+        assertThat(new PortfolioSheet(texts, rows)
+                        .rows(List.of(lakeOnly))
+                        .get(0)
+                        .subList(3, 5))
+                .containsOnlyNulls();
+        assertThat(Column.MARGIN.order(false).compare(lakeOnly, watched)).isPositive();
+        assertThat(Column.MARGIN.order(true).compare(lakeOnly, watched)).isPositive();
+    }
+
+    @Test
+    void saysWhetherWidthOrWantOfEvidenceDecides() {
+        assertThat(known("STRONG")).isEqualTo("mainly because the range is wide");
+        assertThat(known("FAIR")).isEqualTo("mainly because the range is wide");
+        assertThat(known("THIN")).isEqualTo("mainly because little is known");
+        assertThat(known("NONE")).isEqualTo("mainly because little is known");
+        assertThat(row(watched).littleKnown()).isEmpty();
+    }
+
+    private String known(String strength) {
+        return row(Made.entry(
+                        Made.stock(6, "elm", "pike", null),
+                        Made.assessment(6, 5, 1.6, strength),
+                        Made.wide(6, "STRAINED"),
+                        null,
+                        null))
+                .littleKnown();
+    }
+
     @Test
     void anUnassessedStockHasBlankNumbers() {
         PortfolioView.Row row = row(unassessed);

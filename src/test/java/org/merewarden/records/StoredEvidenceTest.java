@@ -6,6 +6,7 @@ import static org.assertj.core.api.Assertions.within;
 
 import java.time.OffsetDateTime;
 import java.util.List;
+import java.util.Map;
 import org.junit.jupiter.api.Test;
 import org.merewarden.TestRegion;
 import org.merewarden.WholeApplication;
@@ -54,6 +55,32 @@ class StoredEvidenceTest {
                 .containsExactly(
                         new SurveyRecord(2020, "nets", 0.5, false, 3, null, null),
                         new SurveyRecord(2021, "nets", 0.5, false, 2.5, null, null));
+    }
+
+    /** Perch 12 t and pike 4 t a season: three quarters of the recorded catch and one; all as the full evidence has it. */
+    @Test
+    void theSubjectsOfALakeAreThoseOfItsStocksEvidence() {
+        TestRegion region = new TestRegion(jdbc);
+        long lake = region.lake("evidence-shares", "Evidence Shares");
+        long perch = region.stock(lake, "FPE");
+        long pike = region.stock(lake, "FPI");
+        region.stock(region.lake("evidence-elsewhere", "Evidence Elsewhere"), "FPE");
+        region.catches(perch, 2020, List.of(12.0, 12.0));
+        region.catches(pike, 2020, List.of(4.0));
+        jdbc.sql("update stock set share_of_lake_yield = 0.4 where id = ?")
+                .param(pike)
+                .update();
+
+        Map<Long, EvidenceReader.Subject> subjects = reader.subjects(lake);
+
+        assertThat(subjects).containsOnlyKeys(perch, pike);
+        assertThat(subjects.get(perch).habitat().shareOfRecordedCatch()).isCloseTo(0.75, within(1e-9));
+        assertThat(subjects.get(pike).traits().shareOfLakeYield()).isEqualTo(0.4);
+        for (long stock : List.of(perch, pike)) {
+            Evidence evidence = reader.evidence(stock);
+            assertThat(subjects.get(stock))
+                    .isEqualTo(new EvidenceReader.Subject(evidence.habitat(), evidence.traits()));
+        }
     }
 
     @Test

@@ -35,7 +35,10 @@ class FiguresTest {
         "0, 0",
         "-3.14159, -3.14",
         "999.6, '1,000'",
-        "0.00000123, 0.00000123"
+        "0.0001, 0.0001",
+        "0.00009999, 0.0001",
+        "0.0000231, 2.31\u00a0×\u00a010⁻⁵",
+        "-0.00000000000123, -1.23\u00a0×\u00a010⁻¹²"
     })
     void threeSignificantDigits(double value, String text) {
         assertThat(Figures.sig(value)).isEqualTo(text);
@@ -111,5 +114,13 @@ class FiguresTest {
         LocaleContextHolder.setTimeZone(TimeZone.getTimeZone("America/Winnipeg"));
         assertThat(Figures.date(LocalDate.of(2026, 9, 3))).isEqualTo("3 Sept 2026");
         assertThat(Figures.dateTime(Instant.parse("2026-09-03T03:05:00Z"))).isEqualTo("2 Sept 2026, 22:05");
+    }
+
+    @Test
+    void soManyDigitsWithThousandsApart() {
+        assertThat(Figures.digits(1234567.891, 6)).isEqualTo("1,234,570");
+        assertThat(Figures.digits(12.34567891, 6)).isEqualTo("12.3457");
+        assertThat(Figures.digits(0.00001234567, 6)).isEqualTo("1.23457\u00a0×\u00a010⁻⁵");
+        assertThat(Figures.digits(Double.NaN, 6)).isEqualTo(Figures.UNKNOWN);
     }
 }

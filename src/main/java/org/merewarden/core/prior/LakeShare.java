@@ -1,6 +1,8 @@
 package org.merewarden.core.prior;
 
 import org.merewarden.core.evidence.Evidence;
+import org.merewarden.core.evidence.Habitat;
+import org.merewarden.core.evidence.Traits;
 
 /**
  * A stock's share of the lake's yield of all species: as stated (log-sd 0.3), else of the recorded catch where every stock
@@ -18,9 +20,14 @@ public record LakeShare(double value, double logSd, String words) {
     private static final double EQUAL_LOG_SD = 0.7;
 
     public static LakeShare of(Evidence evidence) {
-        Double stated = evidence.traits().shareOfLakeYield();
-        Double recorded = evidence.habitat().shareOfRecordedCatch();
-        int stocks = evidence.habitat().stocksInLake();
+        return of(evidence.habitat(), evidence.traits());
+    }
+
+    /** The same of a stock whose records nobody has read: none of them matters. */
+    public static LakeShare of(Habitat habitat, Traits traits) {
+        Double stated = traits.shareOfLakeYield();
+        Double recorded = habitat.shareOfRecordedCatch();
+        int stocks = habitat.stocksInLake();
         if (stated != null && isShare(stated)) {
             return new LakeShare(stated, STATED_LOG_SD, "as stated");
         }

@@ -34,16 +34,20 @@ final class Learning {
         return learning.learned;
     }
 
-    /** Where there are no data: the prior again. */
+    /** Where there are no data: the prior again, as its draws have it. */
+    static Learned untaught(Prior prior, double[] draws) {
+        double[] quantiles = Quantiles.of(draws, SHOWN);
+        return new Learned(prior, "", quantiles[0], quantiles[1], quantiles[2], overlap(prior));
+    }
+
+    /** The same where no draws are made of it. */
     static Learned untaught(Prior prior) {
         double factor = Math.exp(NORMAL_90 * prior.logSd());
-        return new Learned(
-                prior,
-                "",
-                prior.median() / factor,
-                prior.median(),
-                prior.median() * factor,
-                prior.logSd() > 0 ? 1.0 : null);
+        return new Learned(prior, "", prior.median() / factor, prior.median(), prior.median() * factor, overlap(prior));
+    }
+
+    private static @Nullable Double overlap(Prior prior) {
+        return prior.logSd() > 0 ? (Double) 1.0 : null;
     }
 
     private void ofAllSeries() {

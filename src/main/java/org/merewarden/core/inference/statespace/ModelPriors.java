@@ -1,6 +1,5 @@
 package org.merewarden.core.inference.statespace;
 
-import java.util.List;
 import java.util.Optional;
 import org.merewarden.core.evidence.Evidence;
 import org.merewarden.core.prior.Prior;
@@ -47,11 +46,6 @@ record ModelPriors(
                 ownElse(evidence, HARVEST),
                 ownElse(evidence, FIRST_RATE),
                 ownElse(evidence, SCHAEFER));
-    }
-
-    /** Those that belong to no series, in the order in which they are shown. */
-    List<Prior> ofAllSeries() {
-        return List.of(msy, fmsy, initialFraction, firstHarvestRate, processSd, harvestSd, shape);
     }
 
     static Prior observationSd(Evidence evidence, String series) {

@@ -7,6 +7,7 @@ import java.util.random.RandomGenerator;
 import org.merewarden.core.dynamics.SurplusProduction;
 import org.merewarden.core.evidence.Evidence;
 import org.merewarden.core.inference.Diagnostics;
+import org.merewarden.core.inference.Diagnostics.Learned;
 import org.merewarden.core.inference.EvidenceStrength;
 import org.merewarden.core.inference.Posterior;
 import org.merewarden.core.inference.Quantiles;
@@ -27,6 +28,7 @@ final class PriorsAlone {
         double[] msy = new double[draws];
         double[] fmsy = new double[draws];
         double[] shape = new double[draws];
+        double[] fraction = new double[draws];
         double[][] biomass = new double[draws][1];
         SplittableRandom random = new SplittableRandom(seed);
         for (int i = 0; i < draws; i++) {
@@ -34,7 +36,8 @@ final class PriorsAlone {
             fmsy[i] = draw(priors.fmsy(), random);
             double n = draw(priors.shape(), random);
             shape[i] = n < SeasonStep.LEAST_SHAPE ? 0 : n;
-            biomass[i][0] = draw(priors.initialFraction(), random)
+            fraction[i] = draw(priors.initialFraction(), random);
+            biomass[i][0] = fraction[i]
                     * SurplusProduction.fromReferencePoints(msy[i], fmsy[i], shape[i])
                             .capacity();
         }
@@ -51,17 +54,25 @@ final class PriorsAlone {
                 Map.of("msy_t", Quantiles.of(msy, 0.5), "fmsy", Quantiles.of(fmsy, 0.5)),
                 EvidenceStrength.NONE,
                 new Verdict(true, sentences(priors)),
-                diagnostics(priors, evidence, fmsy, biomass));
+                new Diagnostics(
+                        learned(priors, msy, fmsy, fraction, shape),
+                        List.of(),
+                        List.of(),
+                        null,
+                        NextEvidence.ofPriors(priors, evidence, fmsy, biomass)));
     }
 
-    /** Nothing is learned, so every overlap is 1. */
-    private static Diagnostics diagnostics(ModelPriors priors, Evidence evidence, double[] fmsy, double[][] biomass) {
-        return new Diagnostics(
-                priors.ofAllSeries().stream().map(Learning::untaught).toList(),
-                List.of(),
-                List.of(),
-                null,
-                NextEvidence.ofPriors(priors, evidence, fmsy, biomass));
+    /** Nothing is learned, so every overlap is 1; quantiles are the draws', so that they agree with the result's. */
+    private static List<Learned> learned(
+            ModelPriors priors, double[] msy, double[] fmsy, double[] fraction, double[] shape) {
+        return List.of(
+                Learning.untaught(priors.msy(), msy),
+                Learning.untaught(priors.fmsy(), fmsy),
+                Learning.untaught(priors.initialFraction(), fraction),
+                Learning.untaught(priors.firstHarvestRate()),
+                Learning.untaught(priors.processSd()),
+                Learning.untaught(priors.harvestSd()),
+                Learning.untaught(priors.shape(), shape));
     }
 
     private static double draw(Prior prior, RandomGenerator random) {

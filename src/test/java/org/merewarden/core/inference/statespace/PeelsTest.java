@@ -7,6 +7,7 @@ import java.util.Objects;
 import java.util.SplittableRandom;
 import org.junit.jupiter.api.Test;
 import org.merewarden.core.evidence.Evidence;
+import org.merewarden.core.inference.CheckBounds;
 import org.merewarden.core.inference.Diagnostics;
 import org.merewarden.core.inference.Diagnostics.Peel;
 import org.merewarden.core.inference.Diagnostics.Retrospective;
@@ -102,7 +103,7 @@ class PeelsTest {
         assertThat(Objects.requireNonNull(steady.retrospective()).rhoRelativeBiomass())
                 .isBetween(-0.1, 0.1);
         assertThat(Objects.requireNonNull(changed.retrospective()).rhoRelativeBiomass())
-                .isGreaterThan(FailedChecks.LARGEST_RHO);
+                .isGreaterThan(CheckBounds.LARGEST_RHO);
         assertThat(FailedChecks.of(steady)).noneMatch(s -> s.contains("Mohn"));
         assertThat(FailedChecks.of(changed)).anyMatch(s -> s.contains("Mohn"));
     }

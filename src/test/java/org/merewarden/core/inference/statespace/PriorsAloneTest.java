@@ -9,6 +9,7 @@ import org.apache.commons.math3.stat.StatUtils;
 import org.junit.jupiter.api.Test;
 import org.merewarden.core.evidence.Evidence;
 import org.merewarden.core.evidence.Habitat;
+import org.merewarden.core.inference.Diagnostics.Learned;
 import org.merewarden.core.inference.EvidenceStrength;
 import org.merewarden.core.inference.Posterior;
 import org.merewarden.core.inference.Quantiles;
@@ -40,6 +41,24 @@ class PriorsAloneTest {
             lnStart[i] = Math.log(posterior.presentBiomass(i) / posterior.capacity(i));
         }
         assertThat(StatUtils.mean(lnStart)).isEqualTo(Math.log(0.8), offset(4 * 0.3 / Math.sqrt(1000)));
+    }
+
+    /** What is shown as learned is the draws themselves: the same medians as the result's, and nothing learned. */
+    @Test
+    void theLearnedQuantilesAreTheDraws() {
+        Evidence bare = new Cases().own("msy_t", 20, 0.5).own("fmsy", 0.2, 0.3).evidence();
+        Posterior posterior = assessor.assess(bare, 2019, 5);
+        List<Learned> learned = posterior.diagnostics().learned();
+
+        assertThat(learned).hasSize(7);
+        assertThat(learned.get(0).low()).isEqualTo(Quantiles.of(posterior.msyTonnes(), 0.1));
+        assertThat(learned.get(0).median()).isEqualTo(Quantiles.of(posterior.msyTonnes(), 0.5));
+        assertThat(learned.get(0).high()).isEqualTo(Quantiles.of(posterior.msyTonnes(), 0.9));
+        assertThat(learned.get(1).median()).isEqualTo(Quantiles.of(posterior.fmsyPerYear(), 0.5));
+        double[] fraction = new double[1000];
+        Arrays.setAll(fraction, i -> posterior.presentBiomass(i) / posterior.capacity(i));
+        assertThat(learned.get(2).median()).isCloseTo(Quantiles.of(fraction, 0.5), offset(1e-9));
+        assertThat(learned).allMatch(l -> l.overlap() == null || l.overlap() == 1);
     }
 
     @Test
