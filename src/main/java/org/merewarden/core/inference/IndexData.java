@@ -23,7 +23,6 @@ import org.merewarden.core.evidence.SurveyRecord;
  * @param series number of the series; −1 for absolute biomass
  * @param seriesNames by number
  * @param notes sentences for the verdict
- * @param fromEffort whether catch per unit of effort stands in for a survey
  */
 record IndexData(
         int[] season,
@@ -31,8 +30,7 @@ record IndexData(
         double[] logValue,
         int[] series,
         List<String> seriesNames,
-        List<String> notes,
-        boolean fromEffort) {
+        List<String> notes) {
 
     private record Point(int season, double timeOfYear, double value) {}
 
@@ -65,7 +63,7 @@ record IndexData(
             notes.add("Absolute biomass (" + absolute.size() + (absolute.size() == 1 ? " value" : " values")
                     + ") is fitted with the same scatter as an index.");
         }
-        return pack(relative, absolute, notes, fromEffort);
+        return pack(relative, absolute, notes);
     }
 
     private static void sortSurveys(
@@ -131,8 +129,7 @@ record IndexData(
         return result;
     }
 
-    private static IndexData pack(
-            Map<String, List<Point>> relative, List<Point> absolute, List<String> notes, boolean fromEffort) {
+    private static IndexData pack(Map<String, List<Point>> relative, List<Point> absolute, List<String> notes) {
         int count = absolute.size()
                 + relative.values().stream().mapToInt(List::size).sum();
         IndexData data = new IndexData(
@@ -141,8 +138,7 @@ record IndexData(
                 new double[count],
                 new int[count],
                 List.copyOf(relative.keySet()),
-                notes,
-                fromEffort);
+                notes);
         int i = 0;
         int series = 0;
         for (List<Point> points : relative.values()) {
