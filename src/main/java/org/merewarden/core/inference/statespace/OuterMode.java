@@ -54,10 +54,6 @@ final class OuterMode {
         return mode.clone();
     }
 
-    double logDensity() {
-        return -value;
-    }
-
     /** The inverse curvature at the mode. */
     double[][] covariance() {
         double[][] hessian = hessian();
