@@ -142,7 +142,7 @@ class AdviceView {
                 name,
                 Figures.sig(tonnes),
                 Figures.percent(result.collapseProbability()),
-                result.collapseProbability() > Policy.DEFAULT.strainedFrom(),
+                result.collapseProbability() > Policy.DEFAULT.tolerance(),
                 Figures.percent(result.margin()) + " (" + Figures.percent(result.marginLow()) + " to "
                         + Figures.percent(result.marginHigh()) + ")",
                 Figures.sig(result.tippingBiomassTonnes()));

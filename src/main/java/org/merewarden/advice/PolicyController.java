@@ -18,9 +18,9 @@ class PolicyController {
                 "rule",
                 new Rule(
                         Figures.percent(policy.limitFraction()),
-                        Figures.percent(policy.watchFrom()),
-                        Figures.percent(policy.strainedFrom()),
-                        Figures.percent(policy.criticalFrom())));
+                        Figures.percent(policy.standing().watchFrom()),
+                        Figures.percent(policy.standing().strainedFrom()),
+                        Figures.percent(policy.standing().criticalFrom())));
         return "advice/policy";
     }
 }

@@ -83,13 +83,15 @@ public final class StandingRule {
     }
 
     Standing standing(double p, EvidenceStrength strength) {
-        if (p >= policy.criticalFrom()) {
+        if (p >= policy.standing().criticalFrom()) {
             return Standing.CRITICAL;
         }
-        if (p >= policy.strainedFrom()) {
+        if (p >= policy.standing().strainedFrom()) {
             return Standing.STRAINED;
         }
-        return p >= policy.watchFrom() || strength == EvidenceStrength.NONE ? Standing.WATCH : Standing.SECURE;
+        return p >= policy.standing().watchFrom() || strength == EvidenceStrength.NONE
+                ? Standing.WATCH
+                : Standing.SECURE;
     }
 
     /** Whether the medians of the draws, taken as one stock, are on no collapse course and above B lim. */
