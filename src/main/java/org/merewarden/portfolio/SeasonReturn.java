@@ -25,6 +25,8 @@ record SeasonReturn(
         List<Limited> limited,
         double unplacedTonnes,
         @Nullable LocalDate lastLanding) {
+    private static final Comparator<String> NAMES =
+            String.CASE_INSENSITIVE_ORDER.thenComparing(Comparator.naturalOrder());
 
     /**
      * A stock by where it counts.
@@ -77,8 +79,8 @@ record SeasonReturn(
     }
 
     Map<RemovalKey, Removed> removalsByKey() {
-        Comparator<RemovalKey> order = Comparator.comparing(RemovalKey::district)
-                .thenComparing(RemovalKey::species)
+        Comparator<RemovalKey> order = Comparator.comparing(RemovalKey::district, NAMES)
+                .thenComparing(RemovalKey::species, NAMES)
                 .thenComparing(RemovalKey::sector)
                 .thenComparing(RemovalKey::logged);
         return grouped(
@@ -89,22 +91,22 @@ record SeasonReturn(
     }
 
     Map<LimitKey, Allowed> limitsByKey() {
-        Comparator<LimitKey> order = Comparator.comparing(LimitKey::district).thenComparing(LimitKey::species);
+        Comparator<LimitKey> order =
+                Comparator.comparing(LimitKey::district, NAMES).thenComparing(LimitKey::species, NAMES);
         return grouped(
                 limited, l -> new LimitKey(l.place().district(), l.place().species()), order, SeasonReturn::allowed);
     }
 
     /** By district or species; every one with a registered stock. */
     Map<String, Removed> removedBy(Function<Place, String> part) {
-        Map<String, Removed> sums = new TreeMap<>();
+        Map<String, Removed> sums = new TreeMap<>(NAMES);
         limited.forEach(l -> sums.put(part.apply(l.place()), removed(List.of())));
-        sums.putAll(grouped(
-                removals, r -> part.apply(r.place()), Comparator.<String>naturalOrder(), SeasonReturn::removed));
+        sums.putAll(grouped(removals, r -> part.apply(r.place()), NAMES, SeasonReturn::removed));
         return sums;
     }
 
     Map<String, Allowed> allowedBy(Function<Place, String> part) {
-        return grouped(limited, l -> part.apply(l.place()), Comparator.<String>naturalOrder(), SeasonReturn::allowed);
+        return grouped(limited, l -> part.apply(l.place()), NAMES, SeasonReturn::allowed);
     }
 
     Removed removed() {
