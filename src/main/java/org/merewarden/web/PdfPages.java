@@ -87,8 +87,8 @@ public class PdfPages {
     public static String drawing(String svg, String words, int widthMillimetres) {
         return svg.replaceFirst(
                 "<svg ",
-                Matcher.quoteReplacement("<svg alt=\"" + HtmlUtils.htmlEscape(words) + "\" font-family=\"DejaVu Sans\""
-                        + " style=\"width: " + widthMillimetres + "mm\" "));
+                Matcher.quoteReplacement("<svg alt=\"" + HtmlUtils.htmlEscape(words, "UTF-8")
+                        + "\" font-family=\"DejaVu Sans\"" + " style=\"width: " + widthMillimetres + "mm\" "));
     }
 
     /** The file as an answer that browsers show. */
