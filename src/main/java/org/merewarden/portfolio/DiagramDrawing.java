@@ -15,6 +15,11 @@ final class DiagramDrawing {
         return draw(diagram, title, 680, 460);
     }
 
+    /** For half the width of a sheet of paper. */
+    static String onPaper(Diagram diagram, String title) {
+        return draw(diagram, title, 420, 330);
+    }
+
     static String small(Diagram diagram, String title) {
         return draw(diagram, title, 300, 230);
     }

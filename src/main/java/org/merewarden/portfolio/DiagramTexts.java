@@ -38,6 +38,10 @@ class DiagramTexts {
         return DiagramDrawing.small(diagram, title(diagram));
     }
 
+    String onPaper(Diagram diagram) {
+        return DiagramDrawing.onPaper(diagram, title(diagram));
+    }
+
     String json(Diagram diagram) {
         return PageJson.of(diagram);
     }

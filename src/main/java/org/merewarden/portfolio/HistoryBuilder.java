@@ -34,16 +34,25 @@ class HistoryBuilder {
 
     /** Biomass at each season's start, BMSY, removals as bars, surveys laid on. */
     StockPage.Figure biomass(Posterior posterior, Evidence evidence) {
+        return figure("biomass", biomassHistory(posterior, evidence));
+    }
+
+    /** The same as a drawing for half the width of a sheet of paper. */
+    String onPaper(Posterior posterior, Evidence evidence) {
+        return HistoryDrawing.onPaper(biomassHistory(posterior, evidence), texts.get("history.biomass.title"));
+    }
+
+    private History biomassHistory(Posterior posterior, Evidence evidence) {
         List<Spread> biomass = biomass(posterior);
         double bmsy = median(posterior, posterior::bmsy);
         List<Point> removals = removals(posterior, evidence);
-        return figure("biomass", posterior, biomass, bmsy, removals, surveys(posterior, evidence, biomass));
+        return history("biomass", posterior, biomass, bmsy, removals, surveys(posterior, evidence, biomass));
     }
 
     /** Fishing mortality of each season, and FMSY. */
     StockPage.Figure fishing(Posterior posterior) {
         double fmsy = median(posterior, draw -> posterior.fmsyPerYear()[draw]);
-        return figure("fishing", posterior, fishingBySeason(posterior), fmsy, List.of(), List.of());
+        return figure("fishing", history("fishing", posterior, fishingBySeason(posterior), fmsy, List.of(), List.of()));
     }
 
     /** One row for each season and one for the start of the season after the last. */
@@ -66,7 +75,14 @@ class HistoryBuilder {
         return rows;
     }
 
-    private StockPage.Figure figure(
+    private StockPage.Figure figure(String kind, History history) {
+        return new StockPage.Figure(
+                "history-" + kind,
+                HistoryDrawing.draw(history, texts.get("history." + kind + ".title")),
+                PageJson.of(history));
+    }
+
+    private History history(
             String kind,
             Posterior posterior,
             List<Spread> spreads,
@@ -81,7 +97,7 @@ class HistoryBuilder {
                 .flatMap(s -> s);
         double needed = tops.mapToDouble(Double::doubleValue).max().orElse(1);
         double widest = spreads.stream().mapToDouble(Spread::high80).max().orElse(needed);
-        History history = new History(
+        return new History(
                 texts.get("history.season"),
                 texts.get("history." + kind + ".y"),
                 posterior.firstYear() - 0.5,
@@ -98,10 +114,6 @@ class HistoryBuilder {
                         texts.get("history.band"),
                         texts.get("history." + kind + ".level"),
                         texts.get("history.removals")));
-        return new StockPage.Figure(
-                "history-" + kind,
-                HistoryDrawing.draw(history, texts.get("history." + kind + ".title")),
-                PageJson.of(history));
     }
 
     private static List<Point> points(Posterior posterior, List<Spread> spreads, ToDoubleFunction<Spread> end) {

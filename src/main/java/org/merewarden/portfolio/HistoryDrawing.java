@@ -11,7 +11,15 @@ final class HistoryDrawing {
     private HistoryDrawing() {}
 
     static String draw(History h, String title) {
-        Plot plot = new Plot(680, 300, h.from(), h.to(), h.yMax());
+        return draw(h, title, new Plot(680, 300, h.from(), h.to(), h.yMax()));
+    }
+
+    /** For half the width of a sheet of paper. */
+    static String onPaper(History h, String title) {
+        return draw(h, title, new Plot(420, 330, h.from(), h.to(), h.yMax()));
+    }
+
+    private static String draw(History h, String title, Plot plot) {
         List<Point> outline = new ArrayList<>(h.high());
         List<Point> back = new ArrayList<>(h.low());
         Collections.reverse(back);

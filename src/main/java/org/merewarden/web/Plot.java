@@ -92,7 +92,7 @@ public final class Plot {
     public Plot label(Point at, String text, String anchor) {
         return add(
                 "<text fill=\"currentColor\" font-size=\"12\" text-anchor=\"%s\" x=\"%.1f\" y=\"%.1f\">%s</text>",
-                anchor, x(at.x()), y(at.y()) - 7, HtmlUtils.htmlEscape(text));
+                anchor, x(at.x()), y(at.y()) - 7, HtmlUtils.htmlEscape(text, "UTF-8"));
     }
 
     /** A name to stand beside a point. */
@@ -131,7 +131,7 @@ public final class Plot {
                 after ? "start" : "end",
                 end + (after ? 2 : -2),
                 labelY + 4,
-                HtmlUtils.htmlEscape(label.text()));
+                HtmlUtils.htmlEscape(label.text(), "UTF-8"));
     }
 
     /** The finished drawing, with whole numbers without separators along the axis where it counts years. */
@@ -142,7 +142,7 @@ public final class Plot {
                         + "</title>%s%s</svg>",
                 frame.width(),
                 frame.height(),
-                HtmlUtils.htmlEscape(title),
+                HtmlUtils.htmlEscape(title, "UTF-8"),
                 frame.axes(xLabel, yLabel, years),
                 shapes);
     }

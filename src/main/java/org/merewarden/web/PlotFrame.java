@@ -48,7 +48,7 @@ record PlotFrame(double width, double height, double xMin, double xMax, double y
                 "<text fill=\"currentColor\" font-size=\"12\" text-anchor=\"middle\" transform=\"translate(13 %.1f)"
                         + " rotate(-90)\">%s</text>",
                 (TOP + height - BOTTOM) / 2,
-                HtmlUtils.htmlEscape(yLabel)));
+                HtmlUtils.htmlEscape(yLabel, "UTF-8")));
         return axes.toString();
     }
 
@@ -59,7 +59,7 @@ record PlotFrame(double width, double height, double xMin, double xMax, double y
                 anchor,
                 x,
                 y,
-                HtmlUtils.htmlEscape(text));
+                HtmlUtils.htmlEscape(text, "UTF-8"));
     }
 
     /** 1, 2 or 5 times a power of ten, for about five ticks. */

@@ -128,7 +128,7 @@ public final class Svg {
     private static String image(String kind, String title, String content) {
         return "<svg class=\"" + kind + "\" role=\"img\" viewBox=\"0 0 " + WIDTH + " " + HEIGHT + "\" width=\"" + WIDTH
                 + "\" height=\"" + HEIGHT + "\" xmlns=\"http://www.w3.org/2000/svg\"><title>"
-                + HtmlUtils.htmlEscape(title) + "</title>" + content + "</svg>";
+                + HtmlUtils.htmlEscape(title, "UTF-8") + "</title>" + content + "</svg>";
     }
 
     private static String rect(String kind, double x, double y, double width, double height) {

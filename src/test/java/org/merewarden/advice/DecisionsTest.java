@@ -169,7 +169,7 @@ class DecisionsTest {
         act(second, "withdraw", "Ice broke late.", APPROVER).andExpect(flash().attributeExists("done"));
         assertThat(limits.inForce(stock, 2104)).isEmpty();
         mvc.perform(get("/notices/" + first).with(BIOLOGIST))
-                .andExpect(content().string(containsString("Superseded")));
+                .andExpect(content().string(containsString("SUPERSEDED")));
     }
 
     @Test

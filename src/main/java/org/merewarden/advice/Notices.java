@@ -1,0 +1,101 @@
+package org.merewarden.advice;
+
+import java.util.List;
+import java.util.Locale;
+import java.util.Objects;
+import java.util.Optional;
+import org.jspecify.annotations.Nullable;
+import org.merewarden.assessment.AssessmentView;
+import org.merewarden.assessment.Assessments;
+import org.merewarden.waterbody.Register;
+import org.merewarden.waterbody.StockView;
+import org.merewarden.web.Figures;
+import org.merewarden.web.OfficeSettings;
+import org.springframework.stereotype.Service;
+
+/** Writes notices: a limit with what was decided about it, as the page and the paper say it. */
+@Service
+class Notices {
+    private final Register register;
+    private final Decisions decisions;
+    private final LimitHistory history;
+    private final Assessments assessments;
+    private final OfficeSettings settings;
+    private final LimitStore limits;
+
+    Notices(
+            Register register,
+            Decisions decisions,
+            LimitHistory history,
+            Assessments assessments,
+            OfficeSettings settings,
+            LimitStore limits) {
+        this.register = register;
+        this.decisions = decisions;
+        this.history = history;
+        this.assessments = assessments;
+        this.settings = settings;
+        this.limits = limits;
+    }
+
+    Notice notice(long id) {
+        NewLimit limit = decisions.find(id);
+        StockView stock = register.stock(limit.stockId()).orElseThrow();
+        List<LimitHistory.Decision> acts = history.ofLimit(id);
+        Optional<LimitHistory.Decision> issued =
+                acts.stream().filter(a -> a.act().equals(LimitWriter.ISSUED)).findFirst();
+        String reason = issued.orElse(acts.get(0)).reason();
+        return new Notice(
+                id,
+                settings.get(OfficeSettings.OFFICE_NAME),
+                issued.map(LimitHistory.Decision::when).orElse(null),
+                stock.title(),
+                stock.path(),
+                AdviceView.season(limit.season()),
+                limit.kind().replace(' ', '-'),
+                limit.amount() == null ? "" : Figures.withUnit(limit.amount(), limit.unit()),
+                setAsides(limit),
+                Figures.percent(limit.reportedFraction()),
+                AdviceView.toBeLogged(limit),
+                Figures.date(limit.validFrom()) + " – " + Figures.date(limit.validTo()),
+                limit.measures(),
+                limit.legalBasis(),
+                limit.objection(),
+                reason,
+                strength(stock.id(), limit),
+                acts.get(acts.size() - 1).act(),
+                parts(id),
+                acts.stream().map(d -> act(d, reason)).toList());
+    }
+
+    private static Notice.Act act(LimitHistory.Decision d, String told) {
+        return new Notice.Act(d.act(), d.when(), d.decidedBy(), d.reason().equals(told) ? null : d.reason());
+    }
+
+    /** Of the assessment that the proposal rested on, whatever was assessed since; papers know none, so the latest. */
+    private @Nullable String strength(long stockId, NewLimit limit) {
+        Optional<AssessmentView> assessment = limit.origin().equals("decided")
+                ? assessments.ofStock(stockId).stream()
+                        .filter(a -> Objects.equals(a.id(), limit.assessmentId()))
+                        .findFirst()
+                : assessments.latest(stockId);
+        return assessment.map(a -> a.strength().toLowerCase(Locale.ROOT)).orElse(null);
+    }
+
+    private static List<Notice.SetAside> setAsides(NewLimit limit) {
+        return List.of(
+                new Notice.SetAside("subsistence", Figures.tonnes(limit.subsistenceTonnes())),
+                new Notice.SetAside("angling", Figures.tonnes(limit.anglingTonnes())),
+                new Notice.SetAside("research", Figures.tonnes(limit.researchTonnes())),
+                new Notice.SetAside("other", Figures.tonnes(limit.otherTonnes())));
+    }
+
+    private List<Notice.Part> parts(long id) {
+        return limits.allocationsOf(id).stream()
+                .map(a -> new Notice.Part(
+                        a.cooperativeName(),
+                        Figures.sig(a.sharePercent()) + " %",
+                        Figures.withUnit((double) a.amountKg(), "kg")))
+                .toList();
+    }
+}
