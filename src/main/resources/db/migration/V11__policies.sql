@@ -26,6 +26,7 @@ create table policy_version (
     created_at timestamp with time zone not null,
     created_by varchar(60) not null,
     check (ramp_low_fraction < ramp_high_fraction),
+    check (set_aside_subsistence + set_aside_angling + set_aside_research + set_aside_other <= 1.000000000001),
     check (watch_from < strained_from and strained_from < critical_from)
 );
 
@@ -48,4 +49,4 @@ values (1, 0.2, 'MORTALITY', 0.8, 0.1, 0.4, 0.35, 10, 0.1, 0.2, 0, 1, 0, 0, 0, 0
     current_timestamp, 'Merewarden');
 insert into policy_act (policy_number, act, decided_at, decided_by, reason)
 values (1, 'ADOPTED', current_timestamp, 'Merewarden',
-    'The program''s own constants, in force until the office adopts its own.');
+    'The program’s own constants, in force until the office adopts its own.');
