@@ -36,6 +36,8 @@ class AdviceController {
     private final Register register;
     private final Decisions decisions;
     private final AdviceView view;
+    private final OutlookPages outlook;
+    private final Adviser adviser;
     private final Assessments assessments;
     private final Seasons seasons;
     private final MessageSource messages;
@@ -44,12 +46,16 @@ class AdviceController {
             Register register,
             Decisions decisions,
             AdviceView view,
+            OutlookPages outlook,
+            Adviser adviser,
             Assessments assessments,
             Seasons seasons,
             MessageSource messages) {
         this.register = register;
         this.decisions = decisions;
         this.view = view;
+        this.outlook = outlook;
+        this.adviser = adviser;
         this.assessments = assessments;
         this.seasons = seasons;
         this.messages = messages;
@@ -69,14 +75,22 @@ class AdviceController {
     }
 
     @GetMapping("/stocks/{lake}/{species}/advice")
-    String show(@PathVariable String lake, @PathVariable String species, Model model) {
+    String show(
+            @PathVariable String lake,
+            @PathVariable String species,
+            @RequestParam @org.jspecify.annotations.Nullable Integer season,
+            @RequestParam @org.jspecify.annotations.Nullable Double own,
+            @RequestParam @org.jspecify.annotations.Nullable Double weak,
+            Model model) {
+        StockView stock = stock(lake, species);
+        int advised = season == null ? adviser.season(stock.id()) : season;
+        model.addAttribute("outlook", outlook.page(stock, advised, WhatIf.of(own, weak)));
         var form = new LimitForm();
-        int season = seasons.current();
-        form.setSeason(season);
-        form.setValidFrom(seasons.start(season));
-        form.setValidTo(seasons.end(season));
+        form.setSeason(advised);
+        form.setValidFrom(seasons.start(advised));
+        form.setValidTo(seasons.end(advised));
         model.addAttribute("form", form);
-        return page(stock(lake, species), model);
+        return page(stock, model);
     }
 
     @PostMapping("/stocks/{lake}/{species}/limits")
