@@ -79,6 +79,7 @@ class SecurityConfiguration {
                         "/stocks/**",
                         "/assessments/**",
                         "/policy",
+                        "/policy/*/trial",
                         "/shares")
                 .hasAnyRole(BIOLOGIST, APPROVER);
         rule.requestMatchers(POST, "/shares/*/revoke").hasAnyRole(BIOLOGIST, APPROVER, ADMINISTRATOR);

@@ -15,11 +15,16 @@ import org.springframework.web.servlet.mvc.support.RedirectAttributes;
 class PolicyController {
     private final Policies policies;
     private final PolicyPages pages;
+    private final PolicyTrials trials;
+    private final PolicyTrialPages trialPages;
     private final PolicyWords words;
 
-    PolicyController(Policies policies, PolicyPages pages, PolicyWords words) {
+    PolicyController(
+            Policies policies, PolicyPages pages, PolicyTrials trials, PolicyTrialPages trialPages, PolicyWords words) {
         this.policies = policies;
         this.pages = pages;
+        this.trials = trials;
+        this.trialPages = trialPages;
         this.words = words;
     }
 
@@ -37,7 +42,13 @@ class PolicyController {
         List<PolicyVersion> all = policies.all();
         PolicyVersion version = Policies.find(all, number);
         model.addAttribute("page", pages.page(all, version, against == null ? null : Policies.find(all, against)));
+        model.addAttribute("trial", trialPages.page(number));
         return "advice/policy-version";
+    }
+
+    @PostMapping("/policy/{number}/trial")
+    String tryOut(@PathVariable int number, RedirectAttributes redirect) {
+        return act(number, "policy.trial.queued", redirect, () -> trials.start(number));
     }
 
     @PostMapping("/policy/{number}/adopt")

@@ -11,6 +11,7 @@ import org.merewarden.web.Choice;
  * @param others what holds beside them
  * @param open waits for a decision
  * @param own proposed by who looks at it
+ * @param mayBeTried against the version in force, which it is not itself
  * @param toCompare the other versions
  * @param comparison null where none was asked for
  */
@@ -22,6 +23,7 @@ record PolicyPage(
         List<Act> acts,
         boolean open,
         boolean own,
+        boolean mayBeTried,
         List<Choice> toCompare,
         @Nullable Comparison comparison) {
 

@@ -48,6 +48,7 @@ class PolicyPages {
                         .toList(),
                 version.state() == PolicyVersion.State.OPEN,
                 version.proposer().filter(Who.name()::equals).isPresent(),
+                !version.inForce(),
                 all.stream()
                         .filter(v -> v.number() != version.number())
                         .map(v -> new Choice(Integer.toString(v.number()), title(v.number()) + ", " + state(v)))

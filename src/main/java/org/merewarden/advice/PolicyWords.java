@@ -4,8 +4,7 @@ import java.util.ArrayList;
 import java.util.List;
 import org.merewarden.core.policy.Policy;
 import org.merewarden.web.Figures;
-import org.springframework.context.MessageSource;
-import org.springframework.context.i18n.LocaleContextHolder;
+import org.merewarden.web.Texts;
 import org.springframework.stereotype.Component;
 
 /** Names, figures and ranges of the rule's constants. */
@@ -14,14 +13,14 @@ class PolicyWords {
     /** As many digits as a constant can be told apart by: nothing is rounded that somebody has decided on. */
     private static final int DIGITS = 15;
 
-    private final MessageSource messages;
+    private final Texts texts;
 
-    PolicyWords(MessageSource messages) {
-        this.messages = messages;
+    PolicyWords(Texts texts) {
+        this.texts = texts;
     }
 
     String word(String key, Object... arguments) {
-        return messages.getMessage(key, arguments, LocaleContextHolder.getLocale());
+        return texts.of(key, arguments);
     }
 
     String name(PolicyConstant constant) {

@@ -158,6 +158,14 @@ class PostgresTest {
             proposal.param(field.group(1), field.group(2));
         }
         mvc.perform(proposal.with(BIOLOGIST).with(csrf())).andExpect(redirectedUrl("/policy/2?against=1"));
+        mvc.perform(post("/policy/2/trial").with(BIOLOGIST).with(csrf())).andExpect(status().is3xxRedirection());
+        for (int i = 0; i < 600 && count("job where kind = 'policy-trial' and state = 'DONE'") == 0; i++) {
+            Thread.sleep(100);
+        }
+        assertThat(count("policy_trial_stock where limit_t is not null")).isPositive();
+        mvc.perform(get("/policy/2").with(APPROVER))
+                .andExpect(status().isOk())
+                .andExpect(content().string(containsString("Of 30 stocks")));
         for (int i = 0; i < 2; i++) {
             mvc.perform(post("/policy/2/adopt")
                             .param("reason", "Agreed.")
