@@ -141,13 +141,15 @@ class PolicyTrialPages {
     }
 
     private String change(Piece piece) {
-        String word = words.word("policy.trial.change." + piece.change());
+        String key = "policy.trial.change." + piece.change();
         PolicyTrialStore.Both both = piece.row().both();
-        if (both == null || both.against().limitTonnes() == 0 || piece.change() == Change.STAYS) {
-            return word;
+        if (both == null) {
+            return words.word(key);
         }
-        double share = both.here().limitTonnes() / both.against().limitTonnes() - 1;
-        return word + " " + (share > 0 ? "+" : "") + Figures.percent(share);
+        double against = both.against().limitTonnes();
+        return against == 0 && piece.change() == Change.RISES
+                ? words.word(key + ".fromNothing")
+                : words.word(key, Figures.percent(Math.abs(both.here().limitTonnes() / against - 1)));
     }
 
     private String decided(PolicyTrialStore.Trial trial, PolicyTrialStore.Both both) {

@@ -17,6 +17,10 @@ import java.time.Duration;
 import java.time.Instant;
 import java.util.List;
 import java.util.Map;
+import java.util.concurrent.Callable;
+import java.util.concurrent.ExecutorService;
+import java.util.concurrent.Executors;
+import java.util.concurrent.Future;
 import org.junit.jupiter.api.AfterAll;
 import org.junit.jupiter.api.Test;
 import org.junit.jupiter.api.TestInstance;
@@ -286,6 +290,22 @@ class PoliciesTest {
                 .andExpect(content().string(not(containsString("Propose a version"))));
         adopt(before, "Again.", APPROVER).andExpect(flash().attributeExists("refused"));
         adopt(99_999, "Which?", APPROVER).andExpect(status().isNotFound());
+    }
+
+    @Test
+    void adoptedAndRefusedAtTheSameMomentOneOfThemHolds() throws Exception {
+        int number = propose(Map.of("quantile", "33"), BIOLOGIST);
+        ExecutorService both = Executors.newFixedThreadPool(2);
+        try {
+            for (Future<?> act : both.invokeAll(List.<Callable<ResultActions>>of(
+                    () -> act(number, "adopt", "Yes.", APPROVER),
+                    () -> act(number, "refuse", "No.", user("pol-other").roles("APPROVER"))))) {
+                act.get();
+            }
+        } finally {
+            both.shutdownNow();
+        }
+        assertThat(version(number).acts()).hasSize(2);
     }
 
     @Test

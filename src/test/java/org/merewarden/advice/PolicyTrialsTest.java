@@ -185,7 +185,7 @@ class PolicyTrialsTest {
                 .contains("Of " + all + " stocks, 1 rise, 1 fall, 1 close (from a limit to 0) and 1 stay as they are; "
                         + (all - 4) + " cannot be advised yet.")
                 .contains("Together 31 t by version ", " and 28 t by version " + version)
-                .contains("rises +20%", "falls -10%", "closes -100%", ">stays<", "step 2, risk (version ");
+                .contains(">rises by 20%<", ">falls by 10%<", ">closes<", ">stays<", "step 2, risk (version ");
         // the most changed first
         assertThat(page.indexOf("Closing Trial Lake")).isPositive().isLessThan(page.indexOf("Rising Trial Lake"));
         assertThat(page.indexOf("Rising Trial Lake")).isLessThan(page.indexOf("Falling Trial Lake"));
