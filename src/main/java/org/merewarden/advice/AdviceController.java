@@ -110,6 +110,7 @@ class AdviceController {
         crossField(result, "datesWithinReason", "validTo");
         if (result.hasErrors()) {
             response.setStatus(HttpStatus.UNPROCESSABLE_CONTENT.value());
+            model.addAttribute("outlook", outlook.page(stock, adviser.season(stock.id()), WhatIf.of(null, null)));
             return page(stock, model);
         }
         Optional<AssessmentView> assessment = assessments.latest(stock.id());
