@@ -60,7 +60,7 @@ class SecurityConfiguration {
             HttpMethod method) {
         rule.requestMatchers(method, "/accounts/**", "/settings/**").hasRole(ADMINISTRATOR);
         rule.requestMatchers(method, "/activity/**", "/shares/**").hasAnyRole(BIOLOGIST, APPROVER, ADMINISTRATOR);
-        rule.requestMatchers(method, "/imports/**").hasAnyRole(BIOLOGIST, APPROVER);
+        rule.requestMatchers(method, "/imports/**", "/policy/new").hasAnyRole(BIOLOGIST, APPROVER);
         rule.requestMatchers(method, "/**").authenticated();
     }
 
@@ -68,6 +68,7 @@ class SecurityConfiguration {
             AuthorizeHttpRequestsConfigurer<HttpSecurity>.AuthorizationManagerRequestMatcherRegistry rule) {
         rule.requestMatchers(POST, "/limits/*/issue", "/limits/*/refuse", "/limits/*/withdraw")
                 .hasRole(APPROVER);
+        rule.requestMatchers(POST, "/policy/*/adopt", "/policy/*/refuse").hasRole(APPROVER);
         rule.requestMatchers(POST, "/landings/**", "/season/*/complete").hasAnyRole(CLERK, BIOLOGIST, APPROVER);
         rule.requestMatchers(
                         POST,
@@ -77,6 +78,8 @@ class SecurityConfiguration {
                         "/species-weights",
                         "/stocks/**",
                         "/assessments/**",
+                        "/policy",
+                        "/policy/*/trial",
                         "/shares")
                 .hasAnyRole(BIOLOGIST, APPROVER);
         rule.requestMatchers(POST, "/shares/*/revoke").hasAnyRole(BIOLOGIST, APPROVER, ADMINISTRATOR);

@@ -34,13 +34,14 @@ class StandingKeeper implements Standings {
     private final Assessments assessments;
     private final Limits limits;
     private final Clock clock;
-    private final StandingRule rule = new StandingRule(Policy.DEFAULT);
+    private final PolicyStore policies;
 
-    StandingKeeper(JdbcClient jdbc, Assessments assessments, Limits limits, Clock clock) {
+    StandingKeeper(JdbcClient jdbc, Assessments assessments, Limits limits, Clock clock, PolicyStore policies) {
         this.jdbc = jdbc;
         this.assessments = assessments;
         this.limits = limits;
         this.clock = clock;
+        this.policies = policies;
     }
 
     /** The removals against which a stock is judged, and what they are. */
@@ -54,11 +55,27 @@ class StandingKeeper implements Standings {
     /** Judges the stock anew; without draws nothing stands, and an earlier standing is taken away. */
     @Transactional
     public void refresh(long stockId) {
-        // an assessment and a decision at the same moment: the second sees what the first has stored
+        lock(stockId);
+        // read behind the lock: whoever adopts a version judges this stock once more, and waits for this to end
+        judge(stockId, policies.inForce().policy());
+    }
+
+    /** The same by a policy that the caller has read, for many stocks. */
+    @Transactional
+    public void refresh(long stockId, Policy policy) {
+        lock(stockId);
+        judge(stockId, policy);
+    }
+
+    /** An assessment and a decision at the same moment: the second sees what the first has stored. */
+    private void lock(long stockId) {
         jdbc.sql("select id from stock where id = ? for update")
                 .param(stockId)
                 .query(Long.class)
                 .optional();
+    }
+
+    private void judge(long stockId, Policy policy) {
         Optional<AssessmentView> latest = assessments.latest(stockId);
         if (latest.isEmpty()) {
             return;
@@ -68,7 +85,7 @@ class StandingKeeper implements Standings {
         if (posterior.draws() > 0) {
             int season = limits.presentSeason();
             Removals removals = removals(latest.get(), season);
-            insert(latest.get(), season, removals, rule.judge(posterior, removals.tonnes()));
+            insert(latest.get(), season, removals, new StandingRule(policy).judge(posterior, removals.tonnes()));
         }
     }
 

@@ -11,11 +11,11 @@ import org.jspecify.annotations.Nullable;
 import org.merewarden.advice.AllocationView;
 import org.merewarden.advice.LimitView;
 import org.merewarden.advice.Limits;
+import org.merewarden.advice.PolicyInForce;
 import org.merewarden.advice.StandingView;
 import org.merewarden.advice.Standings;
 import org.merewarden.assessment.AssessmentView;
 import org.merewarden.assessment.Assessments;
-import org.merewarden.core.policy.Policy;
 import org.merewarden.season.CooperativeLandingView;
 import org.merewarden.season.CooperativeLandings;
 import org.merewarden.season.UptakeView;
@@ -47,6 +47,7 @@ class CooperativePage {
     private final Assessments assessments;
     private final Uptakes uptakes;
     private final CooperativeLandings landings;
+    private final PolicyInForce policies;
     private final MessageSource messages;
 
     CooperativePage(
@@ -56,6 +57,7 @@ class CooperativePage {
             Assessments assessments,
             Uptakes uptakes,
             CooperativeLandings landings,
+            PolicyInForce policies,
             MessageSource messages) {
         this.register = register;
         this.limits = limits;
@@ -63,6 +65,7 @@ class CooperativePage {
         this.assessments = assessments;
         this.uptakes = uptakes;
         this.landings = landings;
+        this.policies = policies;
         this.messages = messages;
     }
 
@@ -73,13 +76,18 @@ class CooperativePage {
 
     record Content(String cooperative, int season, List<Block> blocks, List<Landing> landings) {}
 
-    /** What is known of one stock, for one cooperative. Tonnes. */
+    /**
+     * What is known of one stock, for one cooperative. Tonnes.
+     *
+     * @param limitFraction B lim / K of the policy in force
+     */
     private record Known(
             StockView stock,
             @Nullable LimitView limit,
             @Nullable AllocationView allocation,
             @Nullable AssessmentView assessment,
             @Nullable StandingView standing,
+            double limitFraction,
             double ownTaken,
             double allTaken) {}
 
@@ -108,6 +116,7 @@ class CooperativePage {
         var standingOf = byKey(standings.all(), StandingView::stockId);
         var uptakeOf = byKey(uptakes.ofSeason(season), UptakeView::stockId);
         Map<Long, Double> own = landings.takenKg(cooperativeId, season);
+        double limitFraction = policies.policy().limitFraction();
         List<Known> all = new ArrayList<>();
         for (RightView right : register.rightsOfCooperative(cooperativeId)) {
             long id = right.stockId();
@@ -120,6 +129,7 @@ class CooperativePage {
                         allocationOf.get(id),
                         assessmentOf.get(id),
                         standingOf.get(id),
+                        limitFraction,
                         own.getOrDefault(id, 0.0) / 1000,
                         uptake == null ? 0 : uptake.takenKg() / 1000));
             }
@@ -140,7 +150,7 @@ class CooperativePage {
             answer.add(word("sharing.all-used"));
         }
         answer.addAll(answer(known, recorded, usedUp));
-        return new Block(known.stock.title(), answer, usedUp, bar(known.assessment), why(known), terms(limit));
+        return new Block(known.stock.title(), answer, usedUp, bar(known), why(known), terms(limit));
     }
 
     private List<String> answer(Known known, @Nullable LocalDate recorded, boolean usedUp) {
@@ -170,8 +180,8 @@ class CooperativePage {
         return tonnes > 0 && tonnes < 1 ? Figures.withUnit(1000 * tonnes, "kg") : Figures.tonnes(tonnes);
     }
 
-    private String bar(@Nullable AssessmentView a) {
-        Levels levels = levels(a);
+    private String bar(Known known) {
+        Levels levels = levels(known);
         return levels == null
                 ? ""
                 : BiomassBar.svg(
@@ -194,7 +204,8 @@ class CooperativePage {
     /** Tonnes; the two levels from the medians of the draws: BMSY = B ÷ (B/BMSY), B lim = the policy's part of K. */
     private record Levels(double low, double now, double high, double lessBelow, double nothingBelow) {}
 
-    private static @Nullable Levels levels(@Nullable AssessmentView a) {
+    private static @Nullable Levels levels(Known known) {
+        AssessmentView a = known.assessment;
         if (a == null || a.biomassTonnes() == null || a.bOverBmsy() == null || a.capacityTonnes() == null) {
             return null;
         }
@@ -204,12 +215,12 @@ class CooperativePage {
                 now,
                 Objects.requireNonNullElse(a.biomassHighTonnes(), now),
                 now / a.bOverBmsy(),
-                Policy.DEFAULT.limitFraction() * a.capacityTonnes());
+                known.limitFraction * a.capacityTonnes());
     }
 
     private List<String> why(Known known) {
         List<String> why = new ArrayList<>();
-        Levels levels = levels(known.assessment);
+        Levels levels = levels(known);
         if (levels == null) {
             why.add(word("sharing.why.unassessed"));
         } else {

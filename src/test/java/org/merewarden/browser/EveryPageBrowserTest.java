@@ -66,6 +66,9 @@ class EveryPageBrowserTest {
             "/assessments",
             "/assessments?run=1",
             "/policy",
+            "/policy/1",
+            "/policy/2?against=1",
+            "/policy/new?from=1",
             "/shares",
             "/activity");
 
@@ -95,10 +98,27 @@ class EveryPageBrowserTest {
     void start() throws InterruptedException {
         browsers = Browsers.start();
         Demonstration.assessed(jdbc);
+        proposePolicy();
         wide = new Office(browsers.browser(), port, 1280, true).signIn("approver");
         narrow = new Office(browsers.browser(), port, 360, true).signIn("approver");
         withoutScripts = new Office(browsers.browser(), port, 320, false).signIn("approver");
         administrator = new Office(browsers.browser(), port, 1280, true).signIn("administrator");
+    }
+
+    /** A second version that waits for a decision, so that there is one to compare and decide about. */
+    private void proposePolicy() {
+        jdbc.sql("insert into policy_version select 2, limit_fraction, 'CATCH', ramp_target_fraction,"
+                        + " ramp_low_fraction, ramp_high_fraction, catch_quantile, horizon_years, 0.05, steadiness_cap,"
+                        + " carry_over, payback, set_aside_subsistence, set_aside_angling, set_aside_research,"
+                        + " set_aside_other, rounding_share, rounding_least_kg, watch_from, strained_from,"
+                        + " critical_from, pooled, interval_probability, current_timestamp, 'biologist'"
+                        + " from policy_version where number = 1"
+                        + " and not exists (select 1 from policy_version where number = 2)")
+                .update();
+        jdbc.sql("insert into policy_act (policy_number, act, decided_at, decided_by, reason)"
+                        + " select 2, 'PROPOSED', current_timestamp, 'biologist', 'More careful after two bad years.'"
+                        + " where not exists (select 1 from policy_act where policy_number = 2)")
+                .update();
     }
 
     @AfterAll

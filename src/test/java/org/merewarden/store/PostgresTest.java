@@ -1,14 +1,19 @@
 package org.merewarden.store;
 
 import static org.assertj.core.api.Assertions.assertThat;
+import static org.hamcrest.Matchers.containsString;
 import static org.springframework.security.test.web.servlet.request.SecurityMockMvcRequestPostProcessors.csrf;
 import static org.springframework.security.test.web.servlet.request.SecurityMockMvcRequestPostProcessors.user;
 import static org.springframework.test.web.servlet.request.MockMvcRequestBuilders.get;
 import static org.springframework.test.web.servlet.request.MockMvcRequestBuilders.post;
+import static org.springframework.test.web.servlet.result.MockMvcResultMatchers.content;
+import static org.springframework.test.web.servlet.result.MockMvcResultMatchers.redirectedUrl;
 import static org.springframework.test.web.servlet.result.MockMvcResultMatchers.status;
 
 import io.zonky.test.db.postgres.embedded.EmbeddedPostgres;
 import java.io.IOException;
+import java.util.regex.Matcher;
+import java.util.regex.Pattern;
 import org.junit.jupiter.api.AfterAll;
 import org.junit.jupiter.api.BeforeAll;
 import org.junit.jupiter.api.Test;
@@ -93,6 +98,9 @@ class PostgresTest {
                 "/assessments",
                 "/shares",
                 "/activity",
+                "/policy",
+                "/policy/1?against=1",
+                "/policy/new",
                 "/notices/1"
             })
     void pagesAnswer(String path) throws Exception {
@@ -135,6 +143,40 @@ class PostgresTest {
                         .query(Integer.class)
                         .single())
                 .isEqualTo(1);
+    }
+
+    @Test
+    void aPolicyIsProposedAndAdoptedOnce() throws Exception {
+        String form = mvc.perform(get("/policy/new").with(BIOLOGIST))
+                .andReturn()
+                .getResponse()
+                .getContentAsString();
+        var proposal = post("/policy").param("line", "CATCH").param("reason", "Tried on the other store.");
+        Matcher field =
+                Pattern.compile("name=\"(values\\[\\w+])\" value=\"([^\"]*)\"").matcher(form);
+        while (field.find()) {
+            proposal.param(field.group(1), field.group(2));
+        }
+        mvc.perform(proposal.with(BIOLOGIST).with(csrf())).andExpect(redirectedUrl("/policy/2?against=1"));
+        mvc.perform(post("/policy/2/trial").with(BIOLOGIST).with(csrf())).andExpect(status().is3xxRedirection());
+        for (int i = 0; i < 600 && count("job where kind = 'policy-trial' and state = 'DONE'") == 0; i++) {
+            Thread.sleep(100);
+        }
+        assertThat(count("policy_trial_stock where limit_t is not null")).isPositive();
+        mvc.perform(get("/policy/2").with(APPROVER))
+                .andExpect(status().isOk())
+                .andExpect(content().string(containsString("Of 30 stocks")));
+        for (int i = 0; i < 2; i++) {
+            mvc.perform(post("/policy/2/adopt")
+                            .param("reason", "Agreed.")
+                            .with(APPROVER)
+                            .with(csrf()))
+                    .andExpect(status().is3xxRedirection());
+        }
+        assertThat(count("policy_act where policy_number = 2 and act = 'ADOPTED'"))
+                .isEqualTo(1);
+        assertThat(count("job where kind = 'standings'")).isEqualTo(1);
+        mvc.perform(get("/policy").with(APPROVER)).andExpect(content().string(containsString("Version 2 is in force")));
     }
 
     private int count(String table) {
