@@ -25,13 +25,21 @@ class Adviser {
     private final Assessments assessments;
     private final Limits limits;
     private final SeasonsBetween between;
+    private final PolicyStore policies;
     private final Seasons seasons;
     private final JsonMapper json;
 
-    Adviser(Assessments assessments, Limits limits, SeasonsBetween between, Seasons seasons, JsonMapper json) {
+    Adviser(
+            Assessments assessments,
+            Limits limits,
+            SeasonsBetween between,
+            PolicyStore policies,
+            Seasons seasons,
+            JsonMapper json) {
         this.assessments = assessments;
         this.limits = limits;
         this.between = between;
+        this.policies = policies;
         this.seasons = seasons;
         this.json = json;
     }
@@ -70,7 +78,8 @@ class Adviser {
 
     /** The same with all that it rests on. */
     Optional<AdviceWorking> work(long stockId, int season) {
-        return work(stockId, season, Policy.DEFAULT, 1);
+        PolicyStore.Numbered inForce = policies.inForce();
+        return work(stockId, season, inForce.policy(), inForce.number());
     }
 
     /** By any version of the policy. */
