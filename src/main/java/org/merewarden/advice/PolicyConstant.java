@@ -79,7 +79,8 @@ enum PolicyConstant {
             Group.STANDING,
             Unit.PERCENT,
             Range.between(0, 100),
-            p -> p.standing().criticalFrom());
+            p -> p.standing().criticalFrom()),
+    INTERVAL("interval", Group.SHOWN, Unit.PERCENT, Range.between(0, 100), Policy::intervalProbability);
 
     /** Parts of the form. */
     enum Group {
@@ -89,7 +90,8 @@ enum PolicyConstant {
         LAST_SEASON,
         ROUNDING,
         SET_ASIDES,
-        STANDING
+        STANDING,
+        SHOWN
     }
 
     /** As people read and type it. */

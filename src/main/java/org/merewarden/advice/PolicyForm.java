@@ -54,9 +54,9 @@ class PolicyForm {
                 new Policy.Rounding(value(PolicyConstant.ROUNDING_SHARE), value(PolicyConstant.ROUNDING_LEAST)),
                 new Policy.CutPoints(
                         value(PolicyConstant.WATCH), value(PolicyConstant.STRAINED), value(PolicyConstant.CRITICAL)),
-                // nothing borrows across lakes, and every page shows the middle 80 %: no choice to offer yet
+                // nothing borrows across lakes yet: no choice to offer
                 Policy.DEFAULT.pooled(),
-                Policy.DEFAULT.intervalProbability());
+                value(PolicyConstant.INTERVAL));
     }
 
     private double value(PolicyConstant constant) {

@@ -25,7 +25,7 @@ class PolicySentences {
                 words.word("policy.other.none"),
                 setAsides(policy),
                 standing(policy),
-                words.word("policy.other.interval"),
+                words.word("policy.other.interval", figure(PolicyConstant.INTERVAL, policy)),
                 words.word("policy.other.pooling"));
     }
 

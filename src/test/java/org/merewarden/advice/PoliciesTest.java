@@ -112,7 +112,8 @@ class PoliciesTest {
                 Map.entry("other", "0"),
                 Map.entry("watch", "5"),
                 Map.entry("strained", "10"),
-                Map.entry("critical", "50"));
+                Map.entry("critical", "50"),
+                Map.entry("interval", "80"));
         MockHttpServletRequestBuilder request = post("/policy").with(csrf());
         own.forEach((key, value) -> request.param("values[" + key + "]", changed.getOrDefault(key, value)));
         request.param("line", changed.getOrDefault("line", "MORTALITY"));
@@ -173,7 +174,8 @@ class PoliciesTest {
                 Map.entry("other", "10"),
                 Map.entry("watch", "4"),
                 Map.entry("strained", "8"),
-                Map.entry("critical", "40"));
+                Map.entry("critical", "40"),
+                Map.entry("interval", "90"));
         assertThat(version(propose(typed, BIOLOGIST)).policy())
                 .isEqualTo(new Policy(
                         0.25,
@@ -187,7 +189,7 @@ class PoliciesTest {
                         new Policy.Rounding(0.02, 50),
                         new Policy.CutPoints(0.04, 0.08, 0.4),
                         false,
-                        0.8));
+                        0.9));
     }
 
     @ParameterizedTest
@@ -218,6 +220,7 @@ class PoliciesTest {
             strained      | 5     | 5 % is not possible; it is more than 5 % (Watch
             critical      | 10    | 10 % is not possible; it is more than 10 % (Strained
             critical      | 100   | 100 % is not possible
+            interval      | 100   | 100 % is not possible
             line          | OTHER | Choose what rises
             reason        | ''    | Write down why
             """)
@@ -352,7 +355,7 @@ class PoliciesTest {
                 .getResponse()
                 .getContentAsString()
                 .replace('\u00a0', ' ');
-        assertThat(page).contains("2 of 20 constants differ.");
+        assertThat(page).contains("2 of 21 constants differ.");
         assertThat(page.split("<strong>differs</strong>", -1)).hasSize(3);
         assertThat(page)
                 .contains("F is 0 at B lim (20 % of K) and 80 % of FMSY at BMSY")
