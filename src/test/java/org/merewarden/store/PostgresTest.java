@@ -93,7 +93,10 @@ class PostgresTest {
                 "/assessments",
                 "/shares",
                 "/activity",
-                "/notices/1"
+                "/notices/1",
+                "/notices/1.pdf",
+                "/returns/2026",
+                "/portfolio/pack.pdf?stock=skelder-water:PLN"
             })
     void pagesAnswer(String path) throws Exception {
         mvc.perform(get(path).with(APPROVER)).andExpect(status().isOk());
