@@ -98,10 +98,13 @@ class PostgresTest {
                 "/assessments",
                 "/shares",
                 "/activity",
-                "/policy",
+"/policy",
                 "/policy/1?against=1",
                 "/policy/new",
-                "/notices/1"
+                "/notices/1",
+                "/notices/1.pdf",
+                "/returns/2026",
+                "/portfolio/pack.pdf?stock=skelder-water:PLN"
             })
     void pagesAnswer(String path) throws Exception {
         mvc.perform(get(path).with(APPROVER)).andExpect(status().isOk());
