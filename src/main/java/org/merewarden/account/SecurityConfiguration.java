@@ -68,6 +68,7 @@ class SecurityConfiguration {
             AuthorizeHttpRequestsConfigurer<HttpSecurity>.AuthorizationManagerRequestMatcherRegistry rule) {
         rule.requestMatchers(POST, "/limits/*/issue", "/limits/*/refuse", "/limits/*/withdraw")
                 .hasRole(APPROVER);
+        rule.requestMatchers(POST, "/limits/*/discard").hasAnyRole(BIOLOGIST, APPROVER);
         rule.requestMatchers(POST, "/landings/**", "/season/*/complete").hasAnyRole(CLERK, BIOLOGIST, APPROVER);
         rule.requestMatchers(
                         POST,

@@ -12,7 +12,6 @@ import org.merewarden.core.policy.Policy;
 import org.merewarden.core.policy.StandingRule;
 import org.merewarden.waterbody.StockView;
 import org.merewarden.web.Figures;
-import org.merewarden.web.Who;
 import org.springframework.context.MessageSource;
 import org.springframework.context.i18n.LocaleContextHolder;
 import org.springframework.stereotype.Component;
@@ -24,15 +23,12 @@ class AdviceView {
 
     private final Assessments assessments;
     private final Limits limits;
-    private final LimitHistory history;
     private final Standings standings;
     private final MessageSource messages;
 
-    AdviceView(
-            Assessments assessments, Limits limits, LimitHistory history, Standings standings, MessageSource messages) {
+    AdviceView(Assessments assessments, Limits limits, Standings standings, MessageSource messages) {
         this.assessments = assessments;
         this.limits = limits;
-        this.history = history;
         this.standings = standings;
         this.messages = messages;
     }
@@ -41,31 +37,8 @@ class AdviceView {
     record Alternative(
             String name, String catchTonnes, String collapse, boolean aboveTolerance, String margin, String tipping) {}
 
-    /** A proposal that waits for a decision. */
-    record Open(
-            long id,
-            String season,
-            String amount,
-            String setAsides,
-            String toBeLogged,
-            String validity,
-            String by,
-            String at,
-            String reason,
-            boolean own) {}
-
-    /** A past decision. */
-    record Past(long limitId, String act, String at, String by, String reason, boolean inForce) {}
-
     /** The page's strings. */
-    record Page(
-            String title,
-            String lede,
-            List<String> cautions,
-            List<Alternative> alternatives,
-            List<Open> open,
-            List<Past> past,
-            boolean settled) {}
+    record Page(String title, String lede, List<String> cautions, List<Alternative> alternatives, boolean settled) {}
 
     Page page(StockView stock) {
         Optional<AssessmentView> assessment = assessments.latest(stock.id());
@@ -76,8 +49,6 @@ class AdviceView {
                 lede(stock, assessment, limit, season),
                 cautions(assessment),
                 assessment.map(a -> alternatives(a, limit)).orElse(List.of()),
-                history.open(stock.id()).stream().map(this::open).toList(),
-                past(stock.id(), limit),
                 assessment.isPresent() && assessment.get().settled());
     }
 
@@ -148,40 +119,11 @@ class AdviceView {
                 Figures.sig(result.tippingBiomassTonnes()));
     }
 
-    private Open open(long id) {
-        NewLimit limit = history.find(id).orElseThrow();
-        LimitHistory.Decision proposal = history.ofLimit(id).get(0);
-        return new Open(
-                id,
-                season(limit.season()),
-                limit.amount() == null ? limit.kind() : Figures.withUnit(limit.amount(), limit.unit()),
-                Figures.tonnes(limit.setAsidesTonnes()),
-                toBeLogged(limit),
-                Figures.date(limit.validFrom()) + " – " + Figures.date(limit.validTo()),
-                proposal.decidedBy(),
-                proposal.when(),
-                proposal.reason(),
-                proposal.decidedBy().equals(Who.name()));
-    }
-
     static String toBeLogged(NewLimit limit) {
         Double amount = limit.amount();
         return limit.kind().equals("catch") && amount != null
                 ? Figures.tonnes(LimitArithmetic.toBeLogged(amount, limit.setAsidesTonnes(), limit.reportedFraction()))
                 : Figures.UNKNOWN;
-    }
-
-    private List<Past> past(long stockId, Optional<LimitView> inForce) {
-        return history.decisions(stockId).stream()
-                .map(d -> new Past(
-                        d.limitId(),
-                        text("advice.act." + d.act()),
-                        d.when(),
-                        d.decidedBy(),
-                        d.reason(),
-                        d.act().equals(LimitWriter.ISSUED)
-                                && inForce.map(l -> l.id() == d.limitId()).orElse(false)))
-                .toList();
     }
 
     static String amount(LimitView limit) {

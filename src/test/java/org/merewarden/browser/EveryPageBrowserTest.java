@@ -38,6 +38,7 @@ class EveryPageBrowserTest {
             "/stocks/pellowin-lake/PLN/assessments/1",
             "/stocks/lurrow-tarn/FPE/assessments/1",
             "/stocks/pellowin-lake/PLN/advice",
+            "/stocks/pellowin-lake/PLN/advice?season=2026&revise=true",
             "/notices/1",
             "/water-bodies",
             "/water-bodies/skelder-water",

@@ -109,6 +109,7 @@ class PostgresTest {
                         .param("validFrom", "2026-01-01")
                         .param("validTo", "2026-12-31")
                         .param("reason", "Lower than before.")
+                        .param("differenceReason", "Whatever is recommended.")
                         .with(BIOLOGIST)
                         .with(csrf()))
                 .andExpect(status().is3xxRedirection());
