@@ -68,7 +68,8 @@ class SecurityConfiguration {
             AuthorizeHttpRequestsConfigurer<HttpSecurity>.AuthorizationManagerRequestMatcherRegistry rule) {
         rule.requestMatchers(POST, "/limits/*/issue", "/limits/*/refuse", "/limits/*/withdraw")
                 .hasRole(APPROVER);
-        rule.requestMatchers(POST, "/limits/*/discard").hasAnyRole(BIOLOGIST, APPROVER);
+        rule.requestMatchers(POST, "/limits/*/discard", "/limits/*/objections", "/limits/*/signed-pages")
+                .hasAnyRole(BIOLOGIST, APPROVER);
         rule.requestMatchers(POST, "/landings/**", "/season/*/complete").hasAnyRole(CLERK, BIOLOGIST, APPROVER);
         rule.requestMatchers(
                         POST,

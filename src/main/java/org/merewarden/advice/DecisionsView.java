@@ -41,6 +41,7 @@ class DecisionsView {
             String at,
             String by,
             String reason,
+            boolean issued,
             boolean inForce,
             @Nullable String from) {}
 
@@ -123,6 +124,7 @@ class DecisionsView {
                 act.when(),
                 act.decidedBy(),
                 act.reason(),
+                act.act().equals(LimitWriter.ISSUED),
                 act.act().equals(LimitWriter.ISSUED) && inForce.contains(act.limitId()),
                 act.laterEffect() ? texts.of("advice.past.from", Figures.dateTime(act.effectiveAt())) : null);
     }
