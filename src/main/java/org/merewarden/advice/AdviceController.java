@@ -56,6 +56,8 @@ class AdviceController {
      * @param season for which season the form is; without it the one that is to be decided next
      * @param revise fills the form in with the season's limit, to be changed from a moment on
      * @param draft number of the draft that is gone on with
+     * @param own a catch of the reader's own, t/yr, to look at
+     * @param weak share of K in per cent at which growth is halved in the stress test
      */
     @GetMapping("/stocks/{lake}/{species}/advice")
     String show(
@@ -64,13 +66,15 @@ class AdviceController {
             @RequestParam @Nullable Integer season,
             @RequestParam(defaultValue = "false") boolean revise,
             @RequestParam @Nullable Long draft,
+            @RequestParam @Nullable Double own,
+            @RequestParam @Nullable Double weak,
             Model model) {
         StockView stock = pages.stock(lake, species);
         int of = season == null ? recommendations.season(stock.id()) : season;
         if (of < 1800 || of > 2200) {
             throw new NotFound("season " + of);
         }
-        return pages.fresh(stock, of, revise, Optional.ofNullable(draft), model);
+        return pages.fresh(stock, of, revise, Optional.ofNullable(draft), WhatIf.of(own, weak), model);
     }
 
     /** @param act draft or propose */

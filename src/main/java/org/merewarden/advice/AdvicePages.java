@@ -17,6 +17,7 @@ import org.springframework.ui.Model;
 class AdvicePages {
     private final Register register;
     private final AdviceView advice;
+    private final OutlookPages outlook;
     private final DecisionsView decisions;
     private final ProposalView proposals;
     private final LimitPrefill prefill;
@@ -26,6 +27,7 @@ class AdvicePages {
     AdvicePages(
             Register register,
             AdviceView advice,
+            OutlookPages outlook,
             DecisionsView decisions,
             ProposalView proposals,
             LimitPrefill prefill,
@@ -33,6 +35,7 @@ class AdvicePages {
             Recommendations recommendations) {
         this.register = register;
         this.advice = advice;
+        this.outlook = outlook;
         this.decisions = decisions;
         this.proposals = proposals;
         this.prefill = prefill;
@@ -45,7 +48,7 @@ class AdvicePages {
     }
 
     /** The page with a form as it should be for the season, a revision, or a draft that is gone on with. */
-    String fresh(StockView stock, int season, boolean revision, Optional<Long> draft, Model model) {
+    String fresh(StockView stock, int season, boolean revision, Optional<Long> draft, WhatIf ask, Model model) {
         List<LimitFile> files = history.files(stock.id());
         Optional<LimitFile> begun = draft.map(id -> files.stream()
                 .filter(file -> file.id() == id && file.draft())
@@ -55,7 +58,7 @@ class AdvicePages {
         LimitPrefill.Sources sources = sources(stock, of, files);
         LimitForm form = begun.map(prefill::draft)
                 .orElseGet(() -> revision ? prefill.revision(sources) : prefill.season(sources));
-        return page(stock, form, new ClosureForm(), sources, files, model);
+        return page(stock, form, new ClosureForm(), sources, files, ask, model);
     }
 
     /** The page once more with the forms as they were sent. */
@@ -63,7 +66,7 @@ class AdvicePages {
         response.setStatus(HttpStatus.UNPROCESSABLE_CONTENT.value());
         List<LimitFile> files = history.files(stock.id());
         int season = Objects.requireNonNullElseGet(form.season, () -> recommendations.season(stock.id()));
-        return page(stock, form, closure, sources(stock, season, files), files, model);
+        return page(stock, form, closure, sources(stock, season, files), files, WhatIf.of(null, null), model);
     }
 
     /** The page once more with the closure as it was sent. */
@@ -83,12 +86,14 @@ class AdvicePages {
             ClosureForm closure,
             LimitPrefill.Sources sources,
             List<LimitFile> files,
+            WhatIf ask,
             Model model) {
         if (closure.closeKey == null) {
             closure.closeKey = UUID.randomUUID().toString();
         }
         model.addAttribute("stock", stock);
         model.addAttribute("page", advice.page(stock));
+        model.addAttribute("outlook", outlook.page(stock, sources.season(), ask));
         model.addAttribute("deciding", decisions.page(stock.id(), files));
         model.addAttribute("proposing", proposals.page(stock.id(), form, sources));
         model.addAttribute("form", form);

@@ -1,11 +1,40 @@
 package org.merewarden.advice;
 
+import java.util.List;
+import java.util.Map;
 import java.util.Optional;
+import java.util.stream.IntStream;
+import org.merewarden.advice.AdviceWorking.Basis;
+import org.merewarden.advice.AdviceWorking.Between;
+import org.merewarden.assessment.AssessmentView;
+import org.merewarden.assessment.Assessments;
+import org.merewarden.core.inference.Posterior;
+import org.merewarden.core.outlook.Outlook;
+import org.merewarden.core.outlook.SeasonBetween;
+import org.merewarden.core.policy.EarlierSeason;
+import org.merewarden.core.policy.LimitRule;
+import org.merewarden.core.policy.Policy;
+import org.merewarden.records.SeasonInProgress;
+import org.merewarden.web.Seasons;
 import org.springframework.stereotype.Service;
+import tools.jackson.databind.json.JsonMapper;
 
-/** Puts the rule to a stock. */
+/** Puts the rule to a stock: the same assessment, policy, season and log give the same recommendation. */
 @Service
 class Adviser {
+    private final Assessments assessments;
+    private final Limits limits;
+    private final SeasonsBetween between;
+    private final Seasons seasons;
+    private final JsonMapper json;
+
+    Adviser(Assessments assessments, Limits limits, SeasonsBetween between, Seasons seasons, JsonMapper json) {
+        this.assessments = assessments;
+        this.limits = limits;
+        this.between = between;
+        this.seasons = seasons;
+        this.json = json;
+    }
 
     /**
      * What the rule recommends.
@@ -23,13 +52,90 @@ class Adviser {
             boolean provisional,
             String working) {}
 
-    /** By the policy in force; empty where there is no assessment with draws. */
+    /** By the policy in force; empty where there is no assessment with draws, or the season is assessed already. */
     Optional<Advice> advise(long stockId, int season) {
-        return Optional.empty();
+        return work(stockId, season).map(this::advice);
+    }
+
+    Advice advice(AdviceWorking w) {
+        return new Advice(
+                w.stockId(),
+                w.season(),
+                w.assessment().id(),
+                w.policyNumber(),
+                w.recommendation().limitTonnes(),
+                w.recommendation().provisional(),
+                json.writeValueAsString(StoredWorking.of(w)));
+    }
+
+    /** The same with all that it rests on. */
+    Optional<AdviceWorking> work(long stockId, int season) {
+        return work(stockId, season, Policy.DEFAULT, 1);
+    }
+
+    /** By any version of the policy. */
+    Optional<AdviceWorking> work(long stockId, int season, Policy policy, int policyNumber) {
+        Optional<AssessmentView> latest = assessments.latest(stockId);
+        if (latest.isEmpty() || season <= latest.get().lastYear()) {
+            return Optional.empty();
+        }
+        Posterior posterior = assessments.posterior(latest.get().id());
+        return posterior.draws() == 0
+                ? Optional.empty()
+                : Optional.of(work(latest.get(), posterior, season, policy, policyNumber));
+    }
+
+    private AdviceWorking work(
+            AssessmentView assessment, Posterior posterior, int season, Policy policy, int policyNumber) {
+        long stockId = assessment.stockId();
+        int last = posterior.lastYear();
+        Map<Integer, Map<Long, SeasonInProgress.Logged>> logged =
+                between.logged(IntStream.range(last + 1, season).boxed().toList());
+        List<Between> notAssessed = between.of(stockId, last, season, assessment.lastRemovalsTonnes(), logged);
+        Optional<LimitView> before = limits.inForce(stockId, season - 1);
+        EarlierSeason earlier = new EarlierSeason(
+                before.map(LimitView::amountTonnes).orElse(Double.NaN), removals(assessment, season - 1, notAssessed));
+        Outlook outlook = new Outlook(
+                posterior,
+                notAssessed.stream()
+                        .map(b -> SeasonBetween.ofCv(b.tonnes(), b.cv()))
+                        .toList(),
+                policy.horizonYears(),
+                policy.limitFraction(),
+                0,
+                seed(assessment, season));
+        return new AdviceWorking(
+                stockId,
+                season,
+                assessment,
+                policyNumber,
+                policy,
+                outlook,
+                notAssessed,
+                earlier,
+                before.map(LimitView::id).orElse(null),
+                new LimitRule(policy).recommend(outlook, earlier));
+    }
+
+    /** Of the season before, t: as recorded, else where its landings lead; NaN where nothing tells. */
+    private double removals(AssessmentView assessment, int season, List<Between> notAssessed) {
+        if (season <= assessment.lastYear()) {
+            return assessments.evidence(assessment.id()).removals(season).orElse(Double.NaN);
+        }
+        return notAssessed.stream()
+                .filter(b -> b.season() == season && b.basis() == Basis.LANDINGS)
+                .mapToDouble(Between::tonnes)
+                .findFirst()
+                .orElse(Double.NaN);
+    }
+
+    private static long seed(AssessmentView assessment, int season) {
+        return Long.parseLong(assessment.evidenceHash().substring(0, 15), 16) + season;
     }
 
     /** The season that is to be advised when none is named: the current one, or the next where it has its limit. */
     int season(long stockId) {
-        return 0;
+        int current = seasons.current();
+        return limits.inForce(stockId, current).isPresent() ? current + 1 : current;
     }
 }

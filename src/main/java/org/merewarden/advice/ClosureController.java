@@ -13,6 +13,7 @@ import org.merewarden.web.Figures;
 import org.merewarden.web.FormBinding;
 import org.merewarden.web.OfficeSettings;
 import org.merewarden.web.Seasons;
+import org.merewarden.web.Texts;
 import org.springframework.stereotype.Controller;
 import org.springframework.ui.Model;
 import org.springframework.validation.BindingResult;

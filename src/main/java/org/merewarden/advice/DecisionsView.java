@@ -9,6 +9,7 @@ import java.util.Set;
 import java.util.stream.Stream;
 import org.jspecify.annotations.Nullable;
 import org.merewarden.web.Figures;
+import org.merewarden.web.Texts;
 import org.merewarden.web.Who;
 import org.springframework.stereotype.Component;
 

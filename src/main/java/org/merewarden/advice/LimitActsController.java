@@ -3,6 +3,7 @@ package org.merewarden.advice;
 import java.util.function.Supplier;
 import org.merewarden.waterbody.Register;
 import org.merewarden.waterbody.StockView;
+import org.merewarden.web.Texts;
 import org.springframework.dao.DuplicateKeyException;
 import org.springframework.stereotype.Controller;
 import org.springframework.web.bind.annotation.PathVariable;

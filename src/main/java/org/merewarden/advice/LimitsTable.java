@@ -1,10 +1,5 @@
 package org.merewarden.advice;
 
-import static org.merewarden.intake.Column.date;
-import static org.merewarden.intake.Column.number;
-import static org.merewarden.intake.Column.text;
-import static org.merewarden.intake.Column.year;
-
 import java.time.Instant;
 import java.time.LocalDate;
 import java.time.OffsetDateTime;
@@ -17,7 +12,6 @@ import java.util.Objects;
 import java.util.Optional;
 import java.util.function.Function;
 import java.util.stream.Collectors;
-import java.util.stream.Stream;
 import org.jspecify.annotations.Nullable;
 import org.merewarden.core.evidence.CatchRecord;
 import org.merewarden.intake.Batch;
@@ -28,6 +22,7 @@ import org.merewarden.intake.TableDefinition;
 import org.merewarden.intake.TableHandler;
 import org.merewarden.intake.TableRow;
 import org.merewarden.records.EvidenceReader;
+import org.merewarden.records.PaperLimits;
 import org.merewarden.waterbody.Register;
 import org.merewarden.waterbody.StockReferences;
 import org.merewarden.web.Seasons;
@@ -40,32 +35,6 @@ import org.springframework.stereotype.Component;
  */
 @Component
 class LimitsTable implements TableHandler {
-    private static final TableDefinition DEFINITION = new TableDefinition(
-            "limits",
-            "Limits issued on paper",
-            120,
-            Stream.concat(
-                            StockReferences.columns().stream(),
-                            Stream.of(
-                                    year("season", "season for which the limit holds")
-                                            .asKey(),
-                                    date("issued_on", "day of the decision").asKey(),
-                                    text("kind", "what is limited")
-                                            .orElse("catch")
-                                            .oneOf("catch", "effort", "measures only"),
-                                    number("amount", "total removals in t, or effort in its unit")
-                                            .between(0, 1e7),
-                                    text("unit", "t for a catch limit").atMost(60),
-                                    number("set_aside_t", "kept for subsistence, angling, research and others, t")
-                                            .between(0, 1e7),
-                                    date("valid_from", "first day; empty: the season's first"),
-                                    date("valid_to", "last day; empty: the season's last"),
-                                    text("measures", "sizes, mesh, closed times, as text")
-                                            .atMost(4000),
-                                    text("legal_basis", "law or ordinance").atMost(1000),
-                                    text("reason", "why this limit").atMost(4000)))
-                    .toList());
-
     private final JdbcClient jdbc;
     private final Register register;
     private final EvidenceReader evidence;
@@ -93,7 +62,7 @@ class LimitsTable implements TableHandler {
 
     @Override
     public TableDefinition definition() {
-        return DEFINITION;
+        return PaperLimits.DEFINITION;
     }
 
     @Override
@@ -116,7 +85,7 @@ class LimitsTable implements TableHandler {
         if (unknown != null) {
             return Fate.refused(unknown);
         }
-        Optional<Problem> problem = problem(row);
+        Optional<Problem> problem = PaperLimits.problem(row, from(row), to(row), seasons.today());
         if (problem.isPresent()) {
             return Fate.refused(problem.get());
         }
@@ -127,10 +96,10 @@ class LimitsTable implements TableHandler {
         if (earlier == null) {
             return references
                     .stock(row)
-                    .map(stock -> decided.get(stock.id() + "|" + season(row)))
+                    .map(stock -> decided.get(stock.id() + "|" + PaperLimits.season(row)))
                     .map(notice -> Fate.refused(new Problem(
                             "season",
-                            Integer.toString(season(row)),
+                            Integer.toString(PaperLimits.season(row)),
                             "notice " + notice + ", decided in this office, is in force; a limit from papers does not"
                                     + " supersede it: propose a revision or withdraw the notice first")))
                     .orElse(Fate.NEW);
@@ -144,49 +113,14 @@ class LimitsTable implements TableHandler {
                                 + " a revision"));
     }
 
-    private Optional<Problem> problem(TableRow row) {
-        String kind = row.need("kind");
-        Double amount = row.number("amount");
-        Double setAside = row.number("set_aside_t");
-        LocalDate from = from(row);
-        LocalDate to = to(row);
-        LocalDate issuedOn = Objects.requireNonNull(row.date("issued_on"));
-        if (issuedOn.isAfter(seasons.today())) {
-            return Optional.of(
-                    new Problem("issued_on", issuedOn.toString(), "lies in the future; today is " + seasons.today()));
-        }
-        if (amount == null && !kind.equals("measures only")) {
-            return Optional.of(new Problem("amount", "", "a limit of kind " + kind + " needs an amount"));
-        }
-        String unit = row.text("unit");
-        if (kind.equals("catch") && unit != null && !unit.equals("t")) {
-            return Optional.of(new Problem("unit", unit, "a catch limit is in t"));
-        }
-        if (kind.equals("effort") && unit == null) {
-            return Optional.of(new Problem("unit", "", "an effort limit needs its unit, e.g. net-nights"));
-        }
-        if (kind.equals("catch") && amount != null && setAside != null && setAside > amount) {
-            return Optional.of(
-                    new Problem("set_aside_t", setAside.toString(), "set-asides are at most the limit, " + amount));
-        }
-        if (from.isAfter(to)) {
-            return Optional.of(new Problem("valid_to", to.toString(), "the last day is not before the first, " + from));
-        }
-        return Optional.empty();
-    }
-
     private LocalDate from(TableRow row) {
         LocalDate given = row.date("valid_from");
-        return given != null ? given : seasons.start(season(row));
+        return given != null ? given : seasons.start(PaperLimits.season(row));
     }
 
     private LocalDate to(TableRow row) {
         LocalDate given = row.date("valid_to");
-        return given != null ? given : seasons.end(season(row));
-    }
-
-    private static int season(TableRow row) {
-        return Objects.requireNonNull(row.integer("season"));
+        return given != null ? given : seasons.end(PaperLimits.season(row));
     }
 
     private boolean sameContent(Stored earlier, TableRow row) {
@@ -229,7 +163,7 @@ class LimitsTable implements TableHandler {
         String unit = row.text("unit");
         return new NewLimit(
                 stock,
-                season(row),
+                PaperLimits.season(row),
                 row.need("kind"),
                 row.number("amount"),
                 unit == null ? "t" : unit,
@@ -291,7 +225,7 @@ class LimitsTable implements TableHandler {
     }
 
     private static String key(long stock, TableRow row) {
-        return key(stock, season(row), row.date("issued_on"));
+        return key(stock, PaperLimits.season(row), row.date("issued_on"));
     }
 
     private static String key(long stock, int season, @Nullable LocalDate issuedOn) {

@@ -9,6 +9,7 @@ import org.jspecify.annotations.Nullable;
 import org.merewarden.assessment.AssessmentView;
 import org.merewarden.assessment.Assessments;
 import org.merewarden.web.Figures;
+import org.merewarden.web.Texts;
 import org.merewarden.web.Who;
 import org.springframework.stereotype.Component;
 

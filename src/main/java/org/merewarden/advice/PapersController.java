@@ -8,6 +8,7 @@ import org.jspecify.annotations.Nullable;
 import org.merewarden.web.FormBinding;
 import org.merewarden.web.NotFound;
 import org.merewarden.web.Seasons;
+import org.merewarden.web.Texts;
 import org.springframework.dao.DuplicateKeyException;
 import org.springframework.http.ContentDisposition;
 import org.springframework.http.HttpHeaders;

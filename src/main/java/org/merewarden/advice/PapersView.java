@@ -8,6 +8,7 @@ import org.merewarden.waterbody.Register;
 import org.merewarden.waterbody.StockView;
 import org.merewarden.web.Figures;
 import org.merewarden.web.NotFound;
+import org.merewarden.web.Texts;
 import org.springframework.stereotype.Component;
 import org.springframework.ui.Model;
 import org.springframework.web.multipart.MultipartFile;

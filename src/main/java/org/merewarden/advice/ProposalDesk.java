@@ -2,6 +2,7 @@ package org.merewarden.advice;
 
 import org.jspecify.annotations.Nullable;
 import org.merewarden.waterbody.StockView;
+import org.merewarden.web.Texts;
 import org.springframework.dao.DuplicateKeyException;
 import org.springframework.stereotype.Component;
 import org.springframework.web.servlet.mvc.support.RedirectAttributes;

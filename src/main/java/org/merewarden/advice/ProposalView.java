@@ -5,6 +5,7 @@ import java.util.Optional;
 import org.merewarden.waterbody.Register;
 import org.merewarden.web.Choice;
 import org.merewarden.web.Figures;
+import org.merewarden.web.Texts;
 import org.springframework.stereotype.Component;
 
 /** What stands around the fields in which a limit is typed. */

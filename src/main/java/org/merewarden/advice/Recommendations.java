@@ -10,7 +10,6 @@ import java.util.Optional;
 import java.util.function.Function;
 import java.util.stream.Collectors;
 import org.merewarden.core.policy.Policy;
-import org.merewarden.web.Seasons;
 import org.merewarden.web.Who;
 import org.springframework.jdbc.core.simple.JdbcClient;
 import org.springframework.jdbc.support.GeneratedKeyHolder;
@@ -24,13 +23,11 @@ class Recommendations {
 
     private final Adviser adviser;
     private final JdbcClient jdbc;
-    private final Seasons seasons;
     private final Clock clock;
 
-    Recommendations(Adviser adviser, JdbcClient jdbc, Seasons seasons, Clock clock) {
+    Recommendations(Adviser adviser, JdbcClient jdbc, Clock clock) {
         this.adviser = adviser;
         this.jdbc = jdbc;
-        this.seasons = seasons;
         this.clock = clock;
     }
 
@@ -39,8 +36,7 @@ class Recommendations {
 
     /** The season to be decided when none is named. */
     int season(long stockId) {
-        int advised = adviser.season(stockId);
-        return advised == 0 ? seasons.current() : advised;
+        return adviser.season(stockId);
     }
 
     Optional<Adviser.Advice> current(long stockId, int season) {

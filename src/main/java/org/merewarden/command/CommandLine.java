@@ -22,9 +22,11 @@ public final class CommandLine {
     public static final int SOME_NOT_SETTLED = 3;
 
     private static final String ASSESS = "assess";
+    private static final String ADVISE = "advise";
     private static final String HELP = "--help";
     private static final String USAGE = """
             java -jar merewarden.jar assess FOLDER --out RESULTS.csv [--threads N] [--seed N] [--growth logistic|gompertz|fitted]
+            java -jar merewarden.jar advise FOLDER --out LIMITS.csv [the same options]
             java -jar merewarden.jar [--PROPERTY=VALUE ...]        the server
 
             assess reads the tables of FOLDER (stocks.csv, catches.csv and what else there is of water-bodies, effort, surveys,
@@ -42,6 +44,13 @@ public final class CommandLine {
             sample is worth, the same in all its rows. collapse_course (a probability) and log_evidence are single numbers, in the
             column mean. fold_margin, tipping_biomass_t and collapse_course hold the median of the last season's estimated removals
             for ever (0 where none are estimated). A stock that could not be assessed has rows without numbers.
+
+            advise assesses the same way and puts the program's own policy to every stock: LIMITS.csv has one row per stock with the
+            limit of total removals recommended for the season after the last closed one. limits.csv of FOLDER, if it is there,
+            tells last season's limit, for steadiness and payback. decided_by is the rule that settled the amount; ceiling_t is
+            empty where even no catch, or any catch, is within the tolerated risk; below_limit_chance is the chance of B < B lim at
+            the end of at least one season of the horizon at the limit; recovered_by is the season by whose end that chance is
+            tolerable with nothing taken, where even no catch is too risky.
 
             Exit status: 0 all stocks settled, 3 some not, 2 the input is unusable (nothing written), 1 the program failed.
             The figures are model estimates, to be reviewed by a qualified fisheries scientist.
@@ -66,13 +75,16 @@ public final class CommandLine {
             out.print(USAGE);
             return SETTLED;
         }
-        if (args.isEmpty() || !args.get(0).equals(ASSESS)) {
+        if (args.isEmpty() || !List.of(ASSESS, ADVISE).contains(args.get(0))) {
             err.println("unknown command “" + String.join(" ", args) + "”; --help tells what there is");
             return UNUSABLE;
         }
         try {
-            AssessOptions options = AssessOptions.of(args.subList(1, args.size()));
-            return new Assess(options, out, err).run() ? SETTLED : SOME_NOT_SETTLED;
+            FolderOptions options = FolderOptions.of(args.subList(1, args.size()));
+            boolean settled = args.get(0).equals(ASSESS)
+                    ? new Assess(options, out, err).run()
+                    : new Advise(options, out, err).run();
+            return settled ? SETTLED : SOME_NOT_SETTLED;
         } catch (RefusedImport e) {
             e.messages().forEach(err::println);
             return UNUSABLE;

@@ -21,16 +21,21 @@ final class ReadableTable {
     static String of(List<StockResult> results) {
         List<List<String>> rows = new ArrayList<>(List.of(HEADER));
         results.forEach(r -> rows.add(row(r)));
-        int[] widths = IntStream.range(0, HEADER.size())
-                .map(i -> rows.stream().mapToInt(r -> r.get(i).length()).max().orElse(0))
-                .toArray();
-        String table = rows.stream().map(r -> aligned(r, widths)).collect(Collectors.joining("\n"));
-        return table + "\n" + notSettled(results) + """
+        return aligned(rows) + notSettled(results) + """
 
                 In brackets: the middle 80 % of the draws. B/BMSY at the start of the coming season. Margin and collapse course:
                 if the last assessed season's removals were taken for ever.
                 Model estimates; to be reviewed by a qualified fisheries scientist before any limit rests on them.
                 """;
+    }
+
+    /** Columns as wide as their widest cell; the first row is the header. */
+    static String aligned(List<List<String>> rows) {
+        int[] widths = IntStream.range(0, rows.get(0).size())
+                .mapToObj(i -> rows.stream().mapToInt(r -> r.get(i).length()))
+                .mapToInt(lengths -> lengths.max().orElse(0))
+                .toArray();
+        return rows.stream().map(r -> aligned(r, widths)).collect(Collectors.joining("\n")) + "\n";
     }
 
     private static List<String> row(StockResult result) {

@@ -26,6 +26,10 @@ record StockResult(
     }
 
     String verdictWord() {
+        return word(verdict);
+    }
+
+    static String word(Verdict verdict) {
         return verdict.settled() ? "settled" : "not-settled";
     }
 }

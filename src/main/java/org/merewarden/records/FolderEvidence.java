@@ -7,12 +7,16 @@ import java.util.Comparator;
 import java.util.HashMap;
 import java.util.List;
 import java.util.Map;
+import java.util.Objects;
+import java.util.OptionalDouble;
 import java.util.OptionalInt;
 import java.util.stream.Collectors;
+import java.util.stream.Stream;
 import org.merewarden.core.evidence.Evidence;
 import org.merewarden.intake.Batch;
 import org.merewarden.intake.CheckedTable;
 import org.merewarden.intake.FolderTables;
+import org.merewarden.intake.Problem;
 import org.merewarden.intake.RefusedImport;
 import org.merewarden.intake.TableRow;
 import org.merewarden.waterbody.RegisterTables;
@@ -40,6 +44,7 @@ public final class FolderEvidence {
         this.content = content;
         content.of(WATER_BODIES).forEach(row -> waterBodies.put(row.need("code"), row));
         group(STOCKS);
+        group(PaperLimits.DEFINITION.name());
         RecordTables.ALL.forEach(table -> group(table.name()));
     }
 
@@ -65,7 +70,14 @@ public final class FolderEvidence {
                     table.definition(), (row, batch) -> table.problems(row, StockReferences.NONE, batch));
             tables.add(registered ? checked : withoutRegister(checked));
         }
+        CheckedTable limits = new CheckedTable(PaperLimits.DEFINITION, FolderEvidence::limitProblems);
+        tables.add(registered ? limits : withoutRegister(limits));
         return new FolderEvidence(FolderTables.read(folder, tables, List.of(WATER_BODIES, STOCKS)));
+    }
+
+    private static Stream<Problem> limitProblems(TableRow row, Batch batch) {
+        Problem unknown = StockReferences.NONE.stockProblem(row, batch);
+        return unknown == null ? PaperLimits.problem(row).stream() : Stream.of(unknown);
     }
 
     private static CheckedTable withoutRegister(CheckedTable table) {
@@ -106,6 +118,16 @@ public final class FolderEvidence {
                         .thenComparing(FolderEvidence::speciesKey))
                 .map(row -> new StockEvidence(row.need("water_body"), speciesKey(row), evidence(row)))
                 .toList();
+    }
+
+    /** The catch limit of a season, t of total removals, as it was issued last; empty where none is on paper. */
+    public OptionalDouble limit(StockEvidence stock, int season) {
+        return rows(PaperLimits.DEFINITION.name(), stock.waterBody()).stream()
+                .filter(row -> speciesKey(row).equals(stock.speciesKey()) && PaperLimits.season(row) == season)
+                .max(Comparator.comparing(row -> Objects.requireNonNull(row.date("issued_on"))))
+                .filter(row -> row.need("kind").equals("catch"))
+                .map(row -> OptionalDouble.of(Objects.requireNonNull(row.number("amount"))))
+                .orElse(OptionalDouble.empty());
     }
 
     private static String speciesKey(TableRow row) {

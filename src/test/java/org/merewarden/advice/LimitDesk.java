@@ -11,9 +11,11 @@ import static org.springframework.test.web.servlet.request.MockMvcRequestBuilder
 
 import java.util.LinkedHashMap;
 import java.util.Map;
+import java.util.Objects;
 import java.util.Optional;
 import org.jspecify.annotations.Nullable;
 import org.merewarden.web.OfficeSettings;
+import org.merewarden.web.Seasons;
 import org.springframework.beans.factory.annotation.Autowired;
 import org.springframework.jdbc.core.simple.JdbcClient;
 import org.springframework.stereotype.Component;
@@ -40,6 +42,9 @@ class LimitDesk {
     @Autowired
     private OfficeSettings settings;
 
+    @Autowired
+    private Seasons seasons;
+
     private @Nullable Object real;
 
     /** The rule recommends this for the stock, and nothing for any other. */
@@ -63,6 +68,7 @@ class LimitDesk {
     }
 
     private void put(Adviser adviser) {
+        when(adviser.season(anyLong())).thenReturn(seasons.current());
         if (real == null) {
             real = ReflectionTestUtils.getField(recommendations, "adviser");
         }
@@ -152,6 +158,6 @@ class LimitDesk {
     }
 
     private MockMvc web() {
-        return java.util.Objects.requireNonNull(mvc);
+        return Objects.requireNonNull(mvc);
     }
 }

@@ -47,7 +47,8 @@ class ImportRulesTest {
             Map.entry("core.evidence", ""),
             Map.entry("core.prior", "core.dynamics core.evidence"),
             Map.entry("core.inference", "core.dynamics core.evidence core.prior"),
-            Map.entry("core.policy", "core.dynamics core.inference core.evidence"));
+            Map.entry("core.outlook", "core.dynamics core.inference"),
+            Map.entry("core.policy", "core.dynamics core.inference core.outlook"));
 
     private static final JavaClasses PRODUCTION = new ClassFileImporter()
             .withImportOption(new ImportOption.DoNotIncludeTests())

@@ -31,6 +31,10 @@ class ResultsFileTest {
                 new Verdict(false, List.of("why")));
     }
 
+    private static void write(Path out) throws IOException {
+        new OutputFile(out, ResultsFile.HEADER).write(ResultsFile.rows(result()).toList());
+    }
+
     @Test
     void isWrittenAsDescribedAndReplacesWhatIsThere() throws IOException {
         Path out = folder.resolve("r.csv");
@@ -38,7 +42,7 @@ class ResultsFileTest {
         Locale before = Locale.getDefault();
         Locale.setDefault(Locale.GERMANY);
         try {
-            ResultsFile.write(out, List.of(result()));
+            write(out);
         } finally {
             Locale.setDefault(before);
         }
@@ -76,10 +80,10 @@ class ResultsFileTest {
 
     @Test
     void aPlaceThatCannotBeWrittenIsRefusedBeforehand() {
-        assertThatThrownBy(() -> ResultsFile.check(folder, folder))
+        assertThatThrownBy(() -> new OutputFile(folder, ResultsFile.HEADER).check(folder))
                 .isInstanceOf(UsageProblem.class)
                 .hasMessageContaining("is a folder");
-        assertThatThrownBy(() -> ResultsFile.check(folder.resolve("none/r.csv"), folder))
+        assertThatThrownBy(() -> new OutputFile(folder.resolve("none/r.csv"), ResultsFile.HEADER).check(folder))
                 .isInstanceOf(UsageProblem.class)
                 .hasMessageContaining("none is no folder to write in");
     }
@@ -87,11 +91,11 @@ class ResultsFileTest {
     @Test
     void aTableOfTheFolderIsNotReplacedButOlderResultsAre() throws Exception {
         Path table = Files.writeString(folder.resolve("catches.csv"), "water_body,species,year,catch_t\n");
-        assertThatThrownBy(() -> ResultsFile.check(table, folder))
+        assertThatThrownBy(() -> new OutputFile(table, ResultsFile.HEADER).check(folder))
                 .isInstanceOf(UsageProblem.class)
                 .hasMessageContaining("catches.csv is a file of FOLDER that holds no results");
         Path older = folder.resolve("r.csv");
-        ResultsFile.write(older, List.of(result()));
-        ResultsFile.check(older, folder);
+        write(older);
+        new OutputFile(older, ResultsFile.HEADER).check(folder);
     }
 }

@@ -35,6 +35,14 @@ public final class CatchBalance {
         return catchTonnes == 0 ? 0 : root(-1, 0, law.bmsy());
     }
 
+    /**
+     * Whether constant removals H (t/yr) from the given biomass (t) run the stock down to nothing: H &gt; MSY, or biomass
+     * below the tipping biomass.
+     */
+    public static boolean collapses(SurplusProduction law, double biomassTonnes, double catchTonnes) {
+        return catchTonnes > law.msy() || (biomassTonnes < law.bmsy() && law.rate(biomassTonnes) < catchTonnes);
+    }
+
     /** The stable equilibrium, t. K for H = 0. */
     public double stableBiomass() {
         return catchTonnes == 0 ? law.capacityTonnes() : root(1, law.bmsy(), law.capacityTonnes());

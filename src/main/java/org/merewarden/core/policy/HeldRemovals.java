@@ -58,18 +58,13 @@ public final class HeldRemovals {
 
     /** Part of the draws on a collapse course, 0–1; NaN without draws. */
     public double collapseProbability() {
-        return share(posterior.draws(), i -> collapseCourse(law(i), posterior.presentBiomass(i), removals));
+        return share(posterior.draws(), i -> CatchBalance.collapses(law(i), posterior.presentBiomass(i), removals));
     }
 
     /** The draws that have the quantity, in order; none where fewer than half do. */
     public static double[] known(double[] ofDraws) {
         double[] values = DoubleStream.of(ofDraws).filter(Double::isFinite).toArray();
         return values.length * 2 < ofDraws.length ? new double[0] : values;
-    }
-
-    /** Whether constant removals H from biomass B run the stock down to nothing. */
-    static boolean collapseCourse(SurplusProduction law, double biomass, double removals) {
-        return removals > law.msy() || (biomass < law.bmsy() && law.rate(biomass) < removals);
     }
 
     static double share(int draws, IntPredicate holds) {

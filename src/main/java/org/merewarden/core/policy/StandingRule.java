@@ -2,6 +2,7 @@ package org.merewarden.core.policy;
 
 import java.util.stream.IntStream;
 import org.jspecify.annotations.Nullable;
+import org.merewarden.core.dynamics.CatchBalance;
 import org.merewarden.core.dynamics.SurplusProduction;
 import org.merewarden.core.inference.EvidenceStrength;
 import org.merewarden.core.inference.Posterior;
@@ -104,7 +105,7 @@ public final class StandingRule {
                 .mapToDouble(i -> posterior.presentBiomass(i) / posterior.capacity(i))
                 .toArray();
         double biomass = Quantiles.of(relative, 0.5) * law.capacityTonnes();
-        return !HeldRemovals.collapseCourse(law, biomass, removals)
+        return !CatchBalance.collapses(law, biomass, removals)
                 && biomass >= policy.limitFraction() * law.capacityTonnes();
     }
 

@@ -9,6 +9,7 @@ import java.util.Map;
 import org.junit.jupiter.api.Test;
 import org.junit.jupiter.params.ParameterizedTest;
 import org.junit.jupiter.params.provider.CsvSource;
+import org.merewarden.core.dynamics.CatchBalance;
 import org.merewarden.core.dynamics.ConstantRemovals;
 import org.merewarden.core.dynamics.SurplusProduction;
 import org.merewarden.core.inference.EvidenceStrength;
@@ -107,6 +108,6 @@ class StandingRuleTest {
         // the closed-form flow under constant removals is another piece of code: it ends at zero or it does not
         var law = new SurplusProduction(0.4, 1000, 1);
         boolean ends = Double.isFinite(new ConstantRemovals(law, removals).extinctionTime(biomass));
-        assertThat(HeldRemovals.collapseCourse(law, biomass, removals)).isEqualTo(ends);
+        assertThat(CatchBalance.collapses(law, biomass, removals)).isEqualTo(ends);
     }
 }

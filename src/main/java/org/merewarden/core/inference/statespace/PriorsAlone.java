@@ -4,6 +4,7 @@ import java.util.List;
 import java.util.Map;
 import java.util.SplittableRandom;
 import java.util.random.RandomGenerator;
+import java.util.stream.IntStream;
 import org.merewarden.core.dynamics.SurplusProduction;
 import org.merewarden.core.evidence.Evidence;
 import org.merewarden.core.inference.Diagnostics;
@@ -41,6 +42,9 @@ final class PriorsAlone {
                     * SurplusProduction.fromReferencePoints(msy[i], fmsy[i], shape[i])
                             .capacity();
         }
+        double[] processSd = IntStream.range(0, draws)
+                .mapToDouble(i -> draw(priors.processSd(), random))
+                .toArray();
         return new Posterior(
                 "priors alone",
                 lastClosedYear + 1,
@@ -50,7 +54,7 @@ final class PriorsAlone {
                 biomass,
                 new double[draws][0],
                 new double[draws][0],
-                Map.of(),
+                Map.of("process_sd", processSd),
                 Map.of("msy_t", Quantiles.of(msy, 0.5), "fmsy", Quantiles.of(fmsy, 0.5)),
                 EvidenceStrength.NONE,
                 new Verdict(true, sentences(priors)),

@@ -9,14 +9,14 @@ import java.util.Map;
 import java.util.Set;
 
 /**
- * What {@code assess} was asked for.
+ * What {@code assess} or {@code advise} was asked for.
  *
  * @param folder of the tables
- * @param out file of the results
+ * @param out file to write
  * @param threads stocks assessed at the same time, 1–{@value #MOST_THREADS}
  * @param seed combined with the seed that each stock's evidence names; 0 leaves that alone
  */
-record AssessOptions(Path folder, Path out, int threads, long seed, Growth growth) {
+record FolderOptions(Path folder, Path out, int threads, long seed, Growth growth) {
     static final int MOST_THREADS = 1024;
     private static final String OUT = "--out";
     private static final String THREADS = "--threads";
@@ -24,7 +24,7 @@ record AssessOptions(Path folder, Path out, int threads, long seed, Growth growt
     private static final String GROWTH = "--growth";
     private static final Set<String> KNOWN = Set.of(OUT, THREADS, SEED, GROWTH);
 
-    static AssessOptions of(List<String> words) throws UsageProblem {
+    static FolderOptions of(List<String> words) throws UsageProblem {
         List<String> folders = new ArrayList<>();
         Map<String, String> options = new HashMap<>();
         for (int i = 0; i < words.size(); i++) {
@@ -44,9 +44,9 @@ record AssessOptions(Path folder, Path out, int threads, long seed, Growth growt
         }
         String out = options.get(OUT);
         if (out == null) {
-            throw new UsageProblem("--out RESULTS.csv is missing: the file to write");
+            throw new UsageProblem("--out FILE.csv is missing: the file to write");
         }
-        return new AssessOptions(
+        return new FolderOptions(
                 path("FOLDER", folders.get(0)),
                 path(OUT, out),
                 threads(options.getOrDefault(

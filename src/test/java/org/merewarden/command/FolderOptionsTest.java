@@ -9,18 +9,18 @@ import org.junit.jupiter.api.Test;
 import org.junit.jupiter.params.ParameterizedTest;
 import org.junit.jupiter.params.provider.CsvSource;
 
-class AssessOptionsTest {
+class FolderOptionsTest {
     @Test
     void everyOptionIsRead() throws Exception {
-        AssessOptions options = AssessOptions.of(
+        FolderOptions options = FolderOptions.of(
                 List.of("--seed", "-7", "lakes", "--out", "r.csv", "--threads", "3", "--growth", "fitted"));
-        assertThat(options).isEqualTo(new AssessOptions(Path.of("lakes"), Path.of("r.csv"), 3, -7, Growth.FITTED));
+        assertThat(options).isEqualTo(new FolderOptions(Path.of("lakes"), Path.of("r.csv"), 3, -7, Growth.FITTED));
     }
 
     @Test
     void whatIsLeftOutHasADefault() throws Exception {
-        assertThat(AssessOptions.of(List.of("lakes", "--out", "r.csv")))
-                .isEqualTo(new AssessOptions(
+        assertThat(FolderOptions.of(List.of("lakes", "--out", "r.csv")))
+                .isEqualTo(new FolderOptions(
                         Path.of("lakes"),
                         Path.of("r.csv"),
                         Runtime.getRuntime().availableProcessors(),
@@ -31,7 +31,7 @@ class AssessOptionsTest {
     @ParameterizedTest
     @CsvSource(delimiter = '|', textBlock = """
         --out r.csv                           | FOLDER is missing
-        lakes                                 | --out RESULTS.csv is missing
+        lakes                                 | --out FILE.csv is missing
         lakes --out                           | --out needs a value
         lakes --out --seed 1                  | --out needs a value
         lakes other --out r.csv               | one FOLDER is needed, got “lakes”, “other”
@@ -44,7 +44,7 @@ class AssessOptionsTest {
         lakes --out r.csv --growth schaefer   | --growth must be one of logistic, gompertz, fitted, got “schaefer”
         """)
     void whatCannotBeFollowedIsNamed(String words, String message) {
-        assertThatThrownBy(() -> AssessOptions.of(List.of(words.split(" "))))
+        assertThatThrownBy(() -> FolderOptions.of(List.of(words.split(" "))))
                 .isInstanceOf(UsageProblem.class)
                 .hasMessageContaining(message);
     }

@@ -1,0 +1,209 @@
+package org.merewarden.advice;
+
+import java.util.ArrayList;
+import java.util.List;
+import java.util.Locale;
+import java.util.Optional;
+import org.jspecify.annotations.Nullable;
+import org.merewarden.advice.OutlookDrawings.RiskCurve;
+import org.merewarden.advice.OutlookPage.Part;
+import org.merewarden.assessment.AssessmentView;
+import org.merewarden.assessment.Assessments;
+import org.merewarden.core.evidence.EffortRecord;
+import org.merewarden.core.outlook.Course;
+import org.merewarden.core.policy.LimitRule;
+import org.merewarden.core.policy.Policy;
+import org.merewarden.core.policy.Recommendation;
+import org.merewarden.waterbody.StockView;
+import org.merewarden.web.Figures;
+import org.merewarden.web.Texts;
+import org.springframework.stereotype.Component;
+
+/** Says what the rule makes of a stock, whatever of it is known. */
+@Component
+class OutlookPages {
+    private final Adviser adviser;
+    private final Assessments assessments;
+    private final Alternatives alternatives;
+    private final AlternativeRows rows;
+    private final OutlookDrawings drawings;
+    private final StepWords words;
+    private final Texts texts;
+
+    OutlookPages(
+            Adviser adviser,
+            Assessments assessments,
+            Alternatives alternatives,
+            AlternativeRows rows,
+            OutlookDrawings drawings,
+            StepWords words,
+            Texts texts) {
+        this.adviser = adviser;
+        this.assessments = assessments;
+        this.alternatives = alternatives;
+        this.rows = rows;
+        this.drawings = drawings;
+        this.words = words;
+        this.texts = texts;
+    }
+
+    OutlookPage page(StockView stock, int season, WhatIf ask) {
+        return adviser.work(stock.id(), season)
+                .map(working -> worked(stock, working, ask))
+                .orElseGet(() -> nothing(stock, season, ask));
+    }
+
+    private OutlookPage worked(StockView stock, AdviceWorking w, WhatIf ask) {
+        List<Alternative> all = alternatives.of(w, ask);
+        RiskCurve curve = drawings.curve(w);
+        return new OutlookPage(
+                w.season(),
+                w.policyNumber(),
+                Figures.percent(w.policy().intervalProbability()),
+                lede(w),
+                cautions(w.assessment()),
+                words.of(w),
+                words.earlier(w),
+                parts(w),
+                effort(w),
+                drawings.draw(w, curve, stock.title()),
+                drawings.rows(w, curve),
+                drawings.biomass(w, all, stock.title()),
+                all.stream().map(Alternative::name).toList(),
+                rows.of(w, all),
+                rows.bySeason(w, all),
+                stress(w, ask),
+                typed(ask.ownTonnes()),
+                typed(100 * ask.halfGrowth()));
+    }
+
+    /** Where the rule has nothing to work on: what is missing, in a sentence. */
+    private OutlookPage nothing(StockView stock, int season, WhatIf ask) {
+        Optional<AssessmentView> latest = assessments.latest(stock.id());
+        String key = latest.isEmpty() ? "unassessed" : season <= latest.get().lastYear() ? "past" : "no-draws";
+        return new OutlookPage(
+                season,
+                0,
+                "",
+                texts.of("outlook.lede." + key, String.valueOf(season)),
+                latest.map(this::cautions).orElse(List.of()),
+                List.of(),
+                null,
+                List.of(),
+                List.of(),
+                null,
+                List.of(),
+                null,
+                List.of(),
+                List.of(),
+                List.of(),
+                null,
+                typed(ask.ownTonnes()),
+                typed(100 * ask.halfGrowth()));
+    }
+
+    private static String typed(@Nullable Double value) {
+        return value == null
+                ? ""
+                : java.math.BigDecimal.valueOf(value).stripTrailingZeros().toPlainString();
+    }
+
+    private String lede(AdviceWorking w) {
+        Recommendation r = w.recommendation();
+        Policy policy = w.policy();
+        String season = String.valueOf(w.season());
+        String horizon = String.valueOf(policy.horizonYears());
+        if (r.limitTonnes() > 0) {
+            return texts.of(
+                    r.provisional() ? "outlook.lede.provisional" : "outlook.lede.limit",
+                    season,
+                    StepWords.exact(r.limitTonnes()),
+                    horizon,
+                    Figures.chances(r.risk()));
+        }
+        if (!Double.isNaN(r.ceilingTonnes())) {
+            return texts.of("outlook.lede.nothing", season, horizon, Figures.chances(r.risk()));
+        }
+        Integer recovery = r.recoverySeasons();
+        return texts.of(
+                        "outlook.lede.closed",
+                        season,
+                        horizon,
+                        Figures.chances(r.risk()),
+                        Figures.percent(policy.tolerance()))
+                + " "
+                + (recovery == null
+                        ? texts.of("outlook.lede.never")
+                        : texts.of("outlook.lede.recovery", String.valueOf(w.season() + recovery - 1)));
+    }
+
+    private List<String> cautions(AssessmentView assessment) {
+        List<String> cautions = new ArrayList<>();
+        if (!assessment.settled()) {
+            cautions.add(texts.of("advice.caution.unsettled"));
+        }
+        String strength = assessment.strength().toLowerCase(Locale.ROOT);
+        if (strength.equals("none") || strength.equals("thin")) {
+            cautions.add(texts.of("advice.caution." + strength));
+        }
+        return cautions;
+    }
+
+    private List<Part> parts(AdviceWorking w) {
+        double limit = w.recommendation().limitTonnes();
+        Policy.SetAsides set = w.policy().setAsides();
+        List<Part> parts = new ArrayList<>();
+        parts.add(new Part(texts.of("outlook.part.limit"), StepWords.exact(limit)));
+        part("subsistence", set.subsistence() * limit).ifPresent(parts::add);
+        part("angling", set.angling() * limit).ifPresent(parts::add);
+        part("research", set.research() * limit).ifPresent(parts::add);
+        part("other", set.other() * limit).ifPresent(parts::add);
+        return parts.size() == 1 ? List.of() : parts;
+    }
+
+    private Optional<Part> part(String name, double tonnes) {
+        return tonnes > 0
+                ? Optional.of(new Part(texts.of("outlook.part." + name), StepWords.exact(tonnes)))
+                : Optional.empty();
+    }
+
+    /** For each series of effort whose catchability the assessment knows. */
+    private List<String> effort(AdviceWorking w) {
+        var parameters = w.outlook().posterior().parameters();
+        List<EffortRecord> effort = assessments.evidence(w.assessment().id()).effort();
+        List<String> sentences = new ArrayList<>();
+        for (String series :
+                effort.stream().map(EffortRecord::series).distinct().sorted().toList()) {
+            double[] q = parameters.getOrDefault(
+                    "catchability:" + series + " (effort)", parameters.get("catchability:" + series));
+            if (q != null) {
+                sentences.add(texts.of(
+                        "outlook.effort",
+                        series,
+                        Figures.withUnit(new LimitRule(w.policy()).effort(w.outlook(), q), unit(effort, series))));
+            }
+        }
+        return sentences;
+    }
+
+    private String unit(List<EffortRecord> effort, String series) {
+        return effort.stream()
+                .filter(e -> e.series().equals(series))
+                .map(EffortRecord::unit)
+                .filter(unit -> unit != null && !unit.isBlank())
+                .findFirst()
+                .orElseGet(() -> texts.of("outlook.effort.unit"));
+    }
+
+    private String stress(AdviceWorking w, WhatIf ask) {
+        var weakened = w.outlook().withDepensation(ask.halfGrowth());
+        double limit = w.recommendation().limitTonnes();
+        return texts.of(
+                "outlook.stress",
+                Figures.percent(ask.halfGrowth()),
+                StepWords.exact(limit),
+                Figures.percent(weakened.risk(Course.ofCatch(limit))),
+                Figures.percent(w.recommendation().risk()),
+                Figures.percent(weakened.risk(Course.CLOSURE)));
+    }
+}

@@ -1,0 +1,220 @@
+package org.merewarden.advice;
+
+import static org.assertj.core.api.Assertions.assertThat;
+import static org.assertj.core.api.Assertions.within;
+import static org.springframework.security.test.web.servlet.request.SecurityMockMvcRequestPostProcessors.user;
+import static org.springframework.test.web.servlet.request.MockMvcRequestBuilders.get;
+import static org.springframework.test.web.servlet.result.MockMvcResultMatchers.status;
+
+import java.time.LocalDate;
+import java.time.OffsetDateTime;
+import java.util.UUID;
+import java.util.stream.DoubleStream;
+import org.junit.jupiter.api.BeforeEach;
+import org.junit.jupiter.api.Test;
+import org.merewarden.TestRegion;
+import org.merewarden.WholeApplication;
+import org.merewarden.advice.AdviceWorking.Basis;
+import org.merewarden.advice.AdviceWorking.Between;
+import org.merewarden.assessment.AssessForTests;
+import org.merewarden.core.outlook.Course;
+import org.merewarden.core.outlook.Outlook;
+import org.merewarden.core.policy.LimitRule;
+import org.merewarden.core.policy.Policy;
+import org.merewarden.core.policy.Recommendation;
+import org.merewarden.records.SeasonInProgress;
+import org.merewarden.web.Figures;
+import org.merewarden.web.Seasons;
+import org.springframework.beans.factory.annotation.Autowired;
+import org.springframework.jdbc.core.simple.JdbcClient;
+import org.springframework.test.web.servlet.MockMvc;
+
+/** The rule put to stored stocks: what stands between assessment and limit, and what the page says of it. */
+@WholeApplication
+class AdviserTest {
+    @Autowired
+    private JdbcClient jdbc;
+
+    @Autowired
+    private MockMvc mvc;
+
+    @Autowired
+    private AssessForTests assess;
+
+    @Autowired
+    private Adviser adviser;
+
+    @Autowired
+    private SeasonInProgress log;
+
+    @Autowired
+    private Seasons seasons;
+
+    private TestRegion region;
+    private String lake;
+    private long stock;
+    private int current;
+
+    @BeforeEach
+    void register() {
+        region = new TestRegion(jdbc);
+        lake = "adv-" + UUID.randomUUID().toString().substring(0, 8);
+        stock = region.stock(region.lake(lake, "Advised Lake " + lake), "FPE");
+        current = seasons.current();
+    }
+
+    /** Twelve seasons of catches and an index, up to the season before the current one, and an assessment of them. */
+    private void assessed() {
+        double[] catches = {30, 40, 45, 45, 40, 30, 15, 10, 10, 10, 12, 15};
+        double[] index = {19, 16, 13.5, 11.5, 10, 9.5, 10, 11, 12, 13, 13.5, 14};
+        region.catches(stock, current - 12, DoubleStream.of(catches).boxed().toList());
+        region.index(stock, current - 12, DoubleStream.of(index).boxed().toList());
+        assess.assess(stock, current - 1);
+    }
+
+    private void landed(LocalDate date, double kg) {
+        jdbc.sql("insert into landing (entry_key, entry_kind, season_year, landed_on, water_body_id, stock_id, species,"
+                        + " sector, weight_kg, live_weight_kg, presentation, conversion_factor, fate, recorded_at,"
+                        + " recorded_by) select ?, 'landing', ?, ?, water_body_id, id, 'FPE', 'commercial', ?, ?, 'whole', 1,"
+                        + " 'kept', ?, 'test' from stock where id = ?")
+                .params(UUID.randomUUID().toString(), current, date, kg, kg, OffsetDateTime.now(), stock)
+                .update();
+    }
+
+    @Test
+    void withoutAnAssessmentThereIsNoAdvice() {
+        assertThat(adviser.advise(stock, current)).isEmpty();
+    }
+
+    @Test
+    void theSeasonAfterTheAssessedOneHasNothingBetween() {
+        assessed();
+        AdviceWorking working = adviser.work(stock, current).orElseThrow();
+        assertThat(working.between()).isEmpty();
+        assertThat(working.outlook().firstSeason()).isEqualTo(current);
+        // recorded removals of the season before; no limit
+        assertThat(working.earlier().removalsTonnes()).isEqualTo(15);
+        assertThat(working.earlier().limitTonnes()).isNaN();
+        assertThat(adviser.advise(stock, current - 1)).isEmpty();
+    }
+
+    @Test
+    void aSeasonInProgressWithoutLandingsTakesItsFullLimit() {
+        assessed();
+        long notice = region.limit(stock, current, 16);
+        AdviceWorking working = adviser.work(stock, current + 1).orElseThrow();
+        assertThat(working.between()).containsExactly(new Between(current, 16, 0.2, Basis.LIMIT));
+        assertThat(working.earlier().limitTonnes()).isEqualTo(16);
+        assertThat(working.earlier().removalsTonnes()).isNaN();
+        assertThat(working.earlierNotice()).isEqualTo(notice);
+        assertThat(adviser.season(stock)).isEqualTo(current + 1);
+    }
+
+    @Test
+    void aSeasonInProgressEndsWhereItsLandingsLead() {
+        assessed();
+        long limit = region.limit(stock, current, 16);
+        jdbc.sql("update catch_limit set reported_fraction = 0.8, set_aside_angling_t = 2 where id = ?")
+                .param(limit)
+                .update();
+        // 4 t in the first quarter of the year: 16.2 t to be logged by its end
+        landed(LocalDate.of(current, 3, 31), 4000);
+        double days = LocalDate.of(current, 12, 31).getDayOfYear();
+        double passed = LocalDate.of(current, 3, 31).getDayOfYear() / days;
+        Between between =
+                adviser.work(stock, current + 1).orElseThrow().between().get(0);
+        assertThat(between.basis()).isEqualTo(Basis.LANDINGS);
+        assertThat(between.tonnes()).isCloseTo(4 / passed / 0.8 + 2, within(1e-9));
+        assertThat(between.cv()).isCloseTo(0.05 + 0.3 * (1 - passed), within(1e-12));
+        assertThat(log.expected(current).get(stock).recordedUpTo()).isEqualTo(LocalDate.of(current, 3, 31));
+    }
+
+    @Test
+    void withNeitherLandingsNorLimitTheLastRemovalsGoOn() {
+        assessed();
+        Between between =
+                adviser.work(stock, current + 1).orElseThrow().between().get(0);
+        assertThat(between.basis()).isEqualTo(Basis.LAST_REMOVALS);
+        assertThat(between.tonnes()).isBetween(12.0, 18.0);
+    }
+
+    @Test
+    void theRecommendationIsTheRulesOwnAndTheSameEveryTime() {
+        assessed();
+        region.limit(stock, current, 16);
+        AdviceWorking working = adviser.work(stock, current + 1).orElseThrow();
+        Recommendation again = new LimitRule(Policy.DEFAULT).recommend(working.outlook(), working.earlier());
+        assertThat(working.recommendation()).isEqualTo(again);
+        Adviser.Advice advice = adviser.advise(stock, current + 1).orElseThrow();
+        assertThat(advice.limitTonnes()).isEqualTo(again.limitTonnes());
+        assertThat(advice.working()).contains("\"rule\":\"RAMP\"").contains("\"LIMIT\"");
+        assertThat(advice.provisional()).isFalse();
+    }
+
+    @Test
+    void evidenceNoneGivesAProvisionalCeiling() throws Exception {
+        assess.assess(stock, current - 1);
+        assertThat(adviser.advise(stock, current).orElseThrow().provisional()).isTrue();
+        assertThat(page("")).contains("provisional ceiling").contains("Evidence strength none");
+    }
+
+    @Test
+    void thePageShowsTheRulesNumbers() throws Exception {
+        assessed();
+        region.limit(stock, current, 16);
+        AdviceWorking working = adviser.work(stock, current + 1).orElseThrow();
+        Recommendation r = working.recommendation();
+        String page = page("");
+        assertThat(page)
+                .contains("For season " + (current + 1) + " the rule recommends a limit of "
+                        + StepWords.exact(r.limitTonnes()))
+                .contains("the full limit of " + Figures.tonnes(16.0))
+                .contains(Figures.tonnes(r.ceilingTonnes()))
+                .contains(Figures.percent(r.risk()))
+                .contains("Risk curve of")
+                .contains("Biomass ahead of");
+        for (Recommendation.Step step : r.steps()) {
+            assertThat(page).contains(StepWords.exact(step.tonnes()));
+        }
+    }
+
+    @Test
+    void aReadersOwnCatchStandsBesideTheOthersAndInTheAddress() throws Exception {
+        assessed();
+        Outlook outlook = adviser.work(stock, current).orElseThrow().outlook();
+        String page = page("?season=" + current + "&own=60&weak=20");
+        assertThat(page)
+                .contains("yours: " + Figures.tonnes(60.0))
+                .contains("above tolerance")
+                .contains("value=\"60\"")
+                .contains("halved at 20% of K");
+        assertThat(outlook.risk(Course.ofCatch(60))).isGreaterThan(0.1);
+        assertThat(page).contains(Figures.percent(outlook.risk(Course.ofCatch(60))));
+    }
+
+    @Test
+    void whatCannotBeAskedIsNotAsked() throws Exception {
+        assessed();
+        assertThat(page("?own=-5&weak=0")).doesNotContain("yours:").contains("halved at 10% of K");
+    }
+
+    @Test
+    void anUnassessedStockIsToldSo() throws Exception {
+        assertThat(page("")).contains("not assessed yet").doesNotContain("Risk curve of");
+    }
+
+    private String page(String query) throws Exception {
+        return mvc.perform(get("/stocks/" + lake + "/FPE/advice" + query)
+                        .with(user("ines").roles("BIOLOGIST")))
+                .andExpect(status().isOk())
+                .andReturn()
+                .getResponse()
+                .getContentAsString();
+    }
+
+    @Test
+    void seasonsWithoutLandingsAreAbsentFromTheLog() {
+        assertThat(log.expected(current)).doesNotContainKey(stock);
+        assertThat(log.loggedKilograms(stock, current)).isEmpty();
+    }
+}
