@@ -69,6 +69,8 @@ class SecurityConfiguration {
         rule.requestMatchers(POST, "/limits/*/issue", "/limits/*/refuse", "/limits/*/withdraw")
                 .hasRole(APPROVER);
         rule.requestMatchers(POST, "/policy/*/adopt", "/policy/*/refuse").hasRole(APPROVER);
+        rule.requestMatchers(POST, "/limits/*/discard", "/limits/*/objections", "/limits/*/signed-pages")
+                .hasAnyRole(BIOLOGIST, APPROVER);
         rule.requestMatchers(POST, "/landings/**", "/season/*/complete").hasAnyRole(CLERK, BIOLOGIST, APPROVER);
         rule.requestMatchers(
                         POST,

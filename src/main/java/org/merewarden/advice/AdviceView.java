@@ -1,84 +1,35 @@
 package org.merewarden.advice;
 
-import java.util.List;
 import java.util.Optional;
-import java.util.stream.DoubleStream;
 import org.jspecify.annotations.Nullable;
 import org.merewarden.assessment.AssessmentView;
 import org.merewarden.assessment.Assessments;
-import org.merewarden.core.inference.Posterior;
 import org.merewarden.core.policy.LimitArithmetic;
-import org.merewarden.core.policy.Policy;
-import org.merewarden.core.policy.StandingRule;
 import org.merewarden.waterbody.StockView;
 import org.merewarden.web.Figures;
-import org.merewarden.web.Who;
 import org.springframework.context.MessageSource;
 import org.springframework.context.i18n.LocaleContextHolder;
 import org.springframework.stereotype.Component;
 
-/** What the advice page says, in finished strings. */
+/** What is in force, in finished strings. */
 @Component
 class AdviceView {
-    private static final double[] SHARES_OF_MSY = {0, 0.25, 0.5, 0.75, 0.9, 1, 1.1};
-
     private final Assessments assessments;
     private final Limits limits;
-    private final LimitHistory history;
     private final Standings standings;
     private final MessageSource messages;
 
-    AdviceView(
-            Assessments assessments, Limits limits, LimitHistory history, Standings standings, MessageSource messages) {
+    AdviceView(Assessments assessments, Limits limits, Standings standings, MessageSource messages) {
         this.assessments = assessments;
         this.limits = limits;
-        this.history = history;
         this.standings = standings;
         this.messages = messages;
     }
 
-    /** One constant catch with what it would mean in the long run. */
-    record Alternative(
-            String name, String catchTonnes, String collapse, boolean aboveTolerance, String margin, String tipping) {}
-
-    /** A proposal that waits for a decision. */
-    record Open(
-            long id,
-            String season,
-            String amount,
-            String setAsides,
-            String toBeLogged,
-            String validity,
-            String by,
-            String at,
-            String reason,
-            boolean own) {}
-
-    /** A past decision. */
-    record Past(long limitId, String act, String at, String by, String reason, boolean inForce) {}
-
-    /** The page's strings. */
-    record Page(
-            String title,
-            String lede,
-            List<String> cautions,
-            List<Alternative> alternatives,
-            List<Open> open,
-            List<Past> past,
-            boolean settled) {}
-
-    Page page(StockView stock) {
-        Optional<AssessmentView> assessment = assessments.latest(stock.id());
+    /** What is allowed now, and what that would do. */
+    String lede(StockView stock) {
         int season = limits.presentSeason();
-        Optional<LimitView> limit = limits.inForce(stock.id(), season);
-        return new Page(
-                stock.title(),
-                lede(stock, assessment, limit, season),
-                cautions(assessment),
-                assessment.map(a -> alternatives(a, limit)).orElse(List.of()),
-                history.open(stock.id()).stream().map(this::open).toList(),
-                past(stock.id(), limit),
-                assessment.isPresent() && assessment.get().settled());
+        return lede(stock, assessments.latest(stock.id()), limits.inForce(stock.id(), season), season);
     }
 
     private String lede(StockView stock, Optional<AssessmentView> assessment, Optional<LimitView> limit, int season) {
@@ -98,90 +49,11 @@ class AdviceView {
                 .orElse(allowed + " " + text("advice.lede.noDraws"));
     }
 
-    private List<String> cautions(Optional<AssessmentView> assessment) {
-        if (assessment.isEmpty()) {
-            return List.of(text("advice.caution.unassessed"));
-        }
-        var cautions = new java.util.ArrayList<String>();
-        if (!assessment.get().settled()) {
-            cautions.add(text("advice.caution.unsettled"));
-        }
-        if (assessment.get().strength().equals("NONE")) {
-            cautions.add(text("advice.caution.none"));
-        } else if (assessment.get().strength().equals("THIN")) {
-            cautions.add(text("advice.caution.thin"));
-        }
-        return cautions;
-    }
-
-    private List<Alternative> alternatives(AssessmentView assessment, Optional<LimitView> limit) {
-        Posterior posterior = assessments.posterior(assessment.id());
-        Double msy = assessment.msyTonnes();
-        if (posterior.draws() == 0 || msy == null) {
-            return List.of();
-        }
-        var rows = new java.util.ArrayList<Alternative>();
-        Double allowed = limit.map(LimitView::amountTonnes).orElse(null);
-        if (allowed != null) {
-            rows.add(alternative(text("advice.alternative.limit"), posterior, allowed));
-        }
-        DoubleStream.of(SHARES_OF_MSY)
-                .mapToObj(share -> alternative(
-                        share == 0
-                                ? text("advice.alternative.none")
-                                : text("advice.alternative.share", Figures.percent(share)),
-                        posterior,
-                        share * msy))
-                .forEach(rows::add);
-        return rows;
-    }
-
-    private Alternative alternative(String name, Posterior posterior, double tonnes) {
-        StandingRule.Result result = new StandingRule(Policy.DEFAULT).judge(posterior, tonnes);
-        return new Alternative(
-                name,
-                Figures.sig(tonnes),
-                Figures.percent(result.collapseProbability()),
-                result.collapseProbability() > Policy.DEFAULT.tolerance(),
-                Figures.percent(result.margin()) + " (" + Figures.percent(result.marginLow()) + " to "
-                        + Figures.percent(result.marginHigh()) + ")",
-                Figures.sig(result.tippingBiomassTonnes()));
-    }
-
-    private Open open(long id) {
-        NewLimit limit = history.find(id).orElseThrow();
-        LimitHistory.Decision proposal = history.ofLimit(id).get(0);
-        return new Open(
-                id,
-                season(limit.season()),
-                limit.amount() == null ? limit.kind() : Figures.withUnit(limit.amount(), limit.unit()),
-                Figures.tonnes(limit.setAsidesTonnes()),
-                toBeLogged(limit),
-                Figures.date(limit.validFrom()) + " – " + Figures.date(limit.validTo()),
-                proposal.decidedBy(),
-                proposal.when(),
-                proposal.reason(),
-                proposal.decidedBy().equals(Who.name()));
-    }
-
     static String toBeLogged(NewLimit limit) {
         Double amount = limit.amount();
         return limit.kind().equals("catch") && amount != null
                 ? Figures.tonnes(LimitArithmetic.toBeLogged(amount, limit.setAsidesTonnes(), limit.reportedFraction()))
                 : Figures.UNKNOWN;
-    }
-
-    private List<Past> past(long stockId, Optional<LimitView> inForce) {
-        return history.decisions(stockId).stream()
-                .map(d -> new Past(
-                        d.limitId(),
-                        text("advice.act." + d.act()),
-                        d.when(),
-                        d.decidedBy(),
-                        d.reason(),
-                        d.act().equals(LimitWriter.ISSUED)
-                                && inForce.map(l -> l.id() == d.limitId()).orElse(false)))
-                .toList();
     }
 
     static String amount(LimitView limit) {

@@ -1,35 +1,31 @@
 package org.merewarden.advice;
 
 import java.time.Clock;
-import java.util.List;
+import java.time.Instant;
 import java.util.Optional;
 import org.jspecify.annotations.Nullable;
 import org.merewarden.activity.ActivityLog;
 import org.merewarden.assessment.AssessmentView;
 import org.merewarden.assessment.Assessments;
-import org.merewarden.waterbody.Register;
-import org.merewarden.waterbody.StockView;
 import org.merewarden.web.NotFound;
 import org.merewarden.web.OfficeSettings;
 import org.merewarden.web.Who;
 import org.springframework.stereotype.Service;
 import org.springframework.transaction.annotation.Transactional;
 
-/** Proposing, issuing, refusing and withdrawing limits. Proposer and issuer differ unless the office allows it. */
+/** Issuing, refusing and withdrawing limits. Proposer and issuer differ unless the office allows it. */
 @Service
 class Decisions {
-    /** A decision that the rules do not allow; the message says which rule, for the page. */
-    static final class NotAllowed extends RuntimeException {
-        NotAllowed(String messageKey) {
-            super(messageKey);
-        }
-    }
+    /** What the store holds of a reason, less the words that are added to it. */
+    static final int LONGEST_REASON = 4000;
+
+    private static final String OWN = " (own proposal, as the office's settings allow)";
 
     private final LimitWriter writer;
     private final LimitHistory history;
     private final StandingKeeper standings;
     private final Assessments assessments;
-    private final Register register;
+    private final LimitSubjects subjects;
     private final OfficeSettings settings;
     private final ActivityLog activity;
     private final Clock clock;
@@ -39,7 +35,7 @@ class Decisions {
             LimitHistory history,
             StandingKeeper standings,
             Assessments assessments,
-            Register register,
+            LimitSubjects subjects,
             OfficeSettings settings,
             ActivityLog activity,
             Clock clock) {
@@ -47,109 +43,136 @@ class Decisions {
         this.history = history;
         this.standings = standings;
         this.assessments = assessments;
-        this.register = register;
+        this.subjects = subjects;
         this.settings = settings;
         this.activity = activity;
         this.clock = clock;
     }
 
-    /** What the store holds of a reason, less the words that an own proposal adds. */
-    static final int LONGEST_REASON = 4000;
-
-    private static void checkLength(@Nullable String reason) {
-        if (reason != null && reason.length() > LONGEST_REASON) {
-            throw new NotAllowed("advice.reason.long");
-        }
-    }
-
-    /** Writes the proposal down; returns the number of the notice-to-be. */
-    @Transactional
-    public long propose(NewLimit limit, String reason) {
-        long id = writer.add(limit, Who.name());
-        writer.decide(id, LimitWriter.PROPOSED, Who.name(), clock.instant(), reason);
-        activity.record("proposed limit", subject(id, limit), null, describe(limit) + "; " + reason);
-        return id;
-    }
-
     /**
-     * Issues a proposed limit and puts it in force.
+     * Issues a proposed limit. It is in force at once, or waits for the moment that it names.
      *
-     * @param remark the issuer's words; required where the stock has no settled assessment
+     * @param remark the issuer's words; required where the assessment behind the limit is missing, superseded or
+     *     unsettled
+     * @return whether it is in force
      */
     @Transactional
-    public void issue(long id, @Nullable String remark) {
-        checkLength(remark);
-        NewLimit limit = open(id);
-        LimitHistory.Decision proposal = history.ofLimit(id).get(0);
-        boolean own = proposal.decidedBy().equals(Who.name());
-        if (own && !settings.get(OfficeSettings.OWN_PROPOSALS).equals("yes")) {
+    public boolean issue(long id, @Nullable String remark) {
+        LimitFile file = open(id, remark);
+        NewLimit limit = file.limit();
+        boolean own = file.first().decidedBy().equals(Who.name());
+        if (own && !ownProposals()) {
             throw new NotAllowed("advice.issue.own");
         }
-        if (remark == null && !settled(limit.stockId())) {
-            throw new NotAllowed("advice.issue.unsettled");
+        Optional<String> doubt = doubt(limit);
+        if (remark == null && doubt.isPresent()) {
+            throw new NotAllowed("advice.issue." + doubt.get());
         }
-        String reason = (remark == null ? proposal.reason() : remark)
-                + (own ? " (own proposal, as the office's settings allow)" : "");
-        writer.decide(id, LimitWriter.ISSUED, Who.name(), clock.instant(), reason);
-        writer.putInForce(id, limit, Who.name());
+        String reason = (remark == null ? file.first().reason() : remark)
+                + doubt.map(d -> " (assessment " + d + ")").orElse("")
+                + (own ? OWN : "");
+        String before = subjects.standing(limit);
+        boolean now = hold(id, limit, reason);
+        activity.record(
+                "issued limit",
+                subjects.subject(id, limit),
+                before,
+                subjects.describe(limit) + "; "
+                        + (now ? "" : "from " + limit.terms().effectiveAt() + "; ") + reason);
+        return now;
+    }
+
+    private boolean hold(long id, NewLimit limit, String reason) {
+        writer.lockStock(limit.stockId());
+        Instant now = clock.instant();
+        Instant from = limit.holdsFrom(now);
+        writer.decide(id, LimitWriter.ISSUED, Who.name(), from, reason);
+        writer.allocate(id, limit);
+        if (from.isAfter(now)) {
+            writer.putPending(id, from);
+            return false;
+        }
+        writer.putInForce(id, limit, Who.name(), now);
         standings.refresh(limit.stockId());
-        activity.record("issued limit", subject(id, limit), "proposed", describe(limit) + "; " + reason);
+        return true;
     }
 
     @Transactional
     public void refuse(long id, String reason) {
-        checkLength(reason);
-        NewLimit limit = open(id);
+        NewLimit limit = open(id, reason).limit();
         writer.decide(id, LimitWriter.REFUSED, Who.name(), clock.instant(), reason);
-        activity.record("refused limit", subject(id, limit), "proposed", reason);
+        activity.record("refused limit", subjects.subject(id, limit), "proposed: " + subjects.describe(limit), reason);
     }
 
-    /** Takes an issued limit out of force. */
+    /** Takes an issued limit out of force, or keeps it from coming into force. */
     @Transactional
     public void withdraw(long id, String reason) {
         checkLength(reason);
-        writer.lock(id);
-        NewLimit limit = find(id);
-        List<String> acts =
-                history.ofLimit(id).stream().map(LimitHistory.Decision::act).toList();
-        if (!acts.contains(LimitWriter.ISSUED)
-                || acts.contains(LimitWriter.WITHDRAWN)
-                || acts.contains(LimitWriter.SUPERSEDED)) {
+        LimitFile file = locked(id);
+        if (!file.standing()) {
             throw new NotAllowed("advice.withdraw.notInForce");
         }
+        NewLimit limit = file.limit();
         writer.decide(id, LimitWriter.WITHDRAWN, Who.name(), clock.instant(), reason);
+        boolean waited = writer.endPending(id);
         writer.endForce(id);
         standings.refresh(limit.stockId());
-        activity.record("withdrew limit", subject(id, limit), "in force", reason);
+        activity.record(
+                "withdrew limit",
+                subjects.subject(id, limit),
+                (waited ? "pending: " : "in force: ") + subjects.describe(limit),
+                reason);
     }
 
-    /** Whether the stock's latest assessment settled; a stock without one has none to rest on. */
-    boolean settled(long stockId) {
-        Optional<AssessmentView> latest = assessments.latest(stockId);
-        return latest.isPresent() && latest.get().settled();
+    /** Whether an approver may issue what they proposed themselves. */
+    boolean ownProposals() {
+        return settings.get(OfficeSettings.OWN_PROPOSALS).equals("yes");
+    }
+
+    /**
+     * What is wrong with the assessment behind a limit: missing, superseded or unsettled. A closure rests on none, and
+     * its own reason is always written.
+     */
+    Optional<String> doubt(NewLimit limit) {
+        return doubt(limit, assessments.latest(limit.stockId()));
+    }
+
+    static Optional<String> doubt(NewLimit limit, Optional<AssessmentView> latest) {
+        if (limit.terms().closure()) {
+            return Optional.empty();
+        }
+        if (latest.isEmpty()) {
+            return Optional.of("missing");
+        }
+        Long behind = limit.assessmentId();
+        if (behind == null || latest.get().id() != behind) {
+            return Optional.of("superseded");
+        }
+        return latest.get().settled() ? Optional.empty() : Optional.of("unsettled");
     }
 
     NewLimit find(long id) {
         return history.find(id).orElseThrow(() -> new NotFound("limit " + id));
     }
 
-    private NewLimit open(long id) {
-        // two people deciding at once: the second waits and then finds it decided
-        writer.lock(id);
-        NewLimit limit = find(id);
-        if (!history.open(limit.stockId()).contains(id)) {
+    private LimitFile open(long id, @Nullable String reason) {
+        checkLength(reason);
+        LimitFile file = locked(id);
+        if (!file.open()) {
             throw new NotAllowed("advice.decided");
         }
-        return limit;
+        return file;
     }
 
-    private String subject(long id, NewLimit limit) {
-        StockView stock = register.stock(limit.stockId()).orElseThrow();
-        return "notice " + id + ", " + stock.title() + ", season " + limit.season();
+    /** Two people deciding at once: the second waits and then finds it decided. */
+    private LimitFile locked(long id) {
+        writer.lock(id);
+        return history.file(id).orElseThrow(() -> new NotFound("limit " + id));
     }
 
-    static String describe(NewLimit limit) {
-        String amount = limit.amount() == null ? limit.kind() : limit.amount() + " " + limit.unit();
-        return amount + (limit.setAsidesTonnes() > 0 ? ", set aside " + limit.setAsidesTonnes() + " t" : "");
+    private static void checkLength(@Nullable String reason) {
+        if (reason != null && reason.length() > LONGEST_REASON) {
+            throw new NotAllowed("advice.reason.long");
+        }
     }
 }

@@ -7,7 +7,9 @@ import java.time.LocalDate;
 import java.time.OffsetDateTime;
 import java.time.ZoneOffset;
 import java.util.List;
+import java.util.Map;
 import java.util.Optional;
+import java.util.stream.Collectors;
 import org.merewarden.web.Figures;
 import org.springframework.jdbc.core.simple.JdbcClient;
 import org.springframework.stereotype.Repository;
@@ -21,31 +23,84 @@ class LimitHistory {
         this.jdbc = jdbc;
     }
 
-    /** One decision. Act: PROPOSED, ISSUED, REFUSED, WITHDRAWN or SUPERSEDED; the instant from which it has effect. */
-    record Decision(long limitId, String act, Instant effectiveAt, String decidedBy, String reason, boolean fromPaper) {
+    /**
+     * One decision.
+     *
+     * @param act DRAFTED, DISCARDED, PROPOSED, ISSUED, REFUSED, WITHDRAWN or SUPERSEDED
+     * @param effectiveAt the instant from which it has effect
+     */
+    record Decision(
+            long limitId,
+            String act,
+            Instant decidedAt,
+            Instant effectiveAt,
+            String decidedBy,
+            String reason,
+            boolean fromPaper) {
 
-        /** When it took effect, for people; papers know the day only. */
+        /** When it was decided, for people; papers know the day only. */
         String when() {
             return fromPaper && act.equals(LimitWriter.ISSUED)
                     ? Figures.date(LocalDate.ofInstant(effectiveAt, ZoneOffset.UTC))
-                    : Figures.dateTime(effectiveAt);
+                    : Figures.dateTime(decidedAt);
+        }
+
+        /** When it was decided; papers are stored later than they were decided. */
+        Instant at() {
+            return fromPaper ? effectiveAt : decidedAt;
+        }
+
+        /** Whether it has effect from another moment than that of the decision. */
+        boolean laterEffect() {
+            return !fromPaper && effectiveAt.isAfter(decidedAt);
         }
     }
 
-    /** The decisions about a stock's limits, newest first. */
-    List<Decision> decisions(long stockId) {
-        return jdbc.sql("""
-                        select d.limit_id, d.act, d.effective_at, d.decided_by, d.reason, l.origin
-                        from limit_decision d join catch_limit l on l.id = d.limit_id
-                        where l.stock_id = ? order by d.effective_at desc, d.id desc""").param(stockId).query(LimitHistory::decision).list();
+    private static final String DECISIONS = """
+            select d.limit_id, d.act, d.decided_at, d.effective_at, d.decided_by, d.reason, l.origin
+            from limit_decision d join catch_limit l on l.id = d.limit_id
+            """;
+
+    /** All limits of the stock with their decisions, newest first; two statements. */
+    List<LimitFile> files(long stockId) {
+        Map<Long, List<Decision>> acts = decisions(stockId).stream().collect(Collectors.groupingBy(Decision::limitId));
+        return jdbc
+                .sql("select * from catch_limit where stock_id = ? order by id desc")
+                .param(stockId)
+                .query((row, n) -> new LimitFile(
+                        row.getLong("id"), limit(row, n), acts.getOrDefault(row.getLong("id"), List.of())))
+                .list()
+                .stream()
+                .filter(file -> !file.acts().isEmpty())
+                .toList();
+    }
+
+    Optional<LimitFile> file(long limitId) {
+        return find(limitId).map(limit -> new LimitFile(limitId, limit, ofLimit(limitId)));
+    }
+
+    /** The limit that was written down from the form with this key. */
+    Optional<Long> ofKey(String entryKey) {
+        return jdbc.sql("select id from catch_limit where entry_key = ?")
+                .param(entryKey)
+                .query(Long.class)
+                .optional();
+    }
+
+    /** The decisions about a stock's limits, in the order in which they were taken. */
+    private List<Decision> decisions(long stockId) {
+        return jdbc.sql(DECISIONS + "where l.stock_id = ? order by d.id")
+                .param(stockId)
+                .query(LimitHistory::decision)
+                .list();
     }
 
     /** What was decided about one limit, oldest first. */
     List<Decision> ofLimit(long limitId) {
-        return jdbc.sql("""
-                        select d.limit_id, d.act, d.effective_at, d.decided_by, d.reason, l.origin
-                        from limit_decision d join catch_limit l on l.id = d.limit_id
-                        where d.limit_id = ? order by d.id""").param(limitId).query(LimitHistory::decision).list();
+        return jdbc.sql(DECISIONS + "where d.limit_id = ? order by d.id")
+                .param(limitId)
+                .query(LimitHistory::decision)
+                .list();
     }
 
     private static Decision decision(ResultSet row, int n) throws SQLException {
@@ -53,9 +108,10 @@ class LimitHistory {
                 row.getLong(1),
                 row.getString(2),
                 row.getObject(3, OffsetDateTime.class).toInstant(),
-                row.getString(4),
+                row.getObject(4, OffsetDateTime.class).toInstant(),
                 row.getString(5),
-                row.getString(6).equals("entered"));
+                row.getString(6),
+                row.getString(7).equals("entered"));
     }
 
     Optional<NewLimit> find(long limitId) {
@@ -65,13 +121,12 @@ class LimitHistory {
                 .optional();
     }
 
-    /** Limits of the stock that were proposed and neither issued nor refused nor withdrawn, newest first. */
-    List<Long> open(long stockId) {
-        return jdbc.sql("""
-                        select l.id from catch_limit l where l.stock_id = ? and l.origin = 'decided'
-                            and not exists (select 1 from limit_decision d where d.limit_id = l.id
-                                and d.act <> 'PROPOSED')
-                        order by l.id desc""").param(stockId).query(Long.class).list();
+    /** Numbers of limits that are issued and wait for their moment. */
+    List<Long> due(Instant now) {
+        return jdbc.sql("select limit_id from limit_pending where effective_at <= ? order by effective_at, limit_id")
+                .param(now.atOffset(ZoneOffset.UTC))
+                .query(Long.class)
+                .list();
     }
 
     static NewLimit limit(ResultSet row, int n) throws SQLException {
@@ -92,6 +147,18 @@ class LimitHistory {
                 row.getString("legal_basis"),
                 row.getString("objection"),
                 row.getObject("assessment_id", Long.class),
-                row.getString("origin"));
+                row.getString("origin"),
+                terms(row));
+    }
+
+    private static Terms terms(ResultSet row) throws SQLException {
+        OffsetDateTime effective = row.getObject("effective_at", OffsetDateTime.class);
+        return new Terms(
+                row.getString("purpose"),
+                effective == null ? null : effective.toInstant(),
+                row.getObject("review_by", LocalDate.class),
+                row.getObject("recommendation_id", Long.class),
+                row.getString("difference_reason"),
+                row.getString("entry_key"));
     }
 }

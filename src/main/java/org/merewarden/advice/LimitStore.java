@@ -5,7 +5,10 @@ import java.sql.SQLException;
 import java.time.LocalDate;
 import java.time.OffsetDateTime;
 import java.util.List;
+import java.util.Map;
 import java.util.Optional;
+import java.util.Set;
+import java.util.stream.Collectors;
 import org.merewarden.web.Seasons;
 import org.springframework.jdbc.core.simple.JdbcClient;
 import org.springframework.stereotype.Repository;
@@ -18,7 +21,8 @@ class LimitStore implements Limits {
                 l.set_aside_subsistence_t + l.set_aside_angling_t + l.set_aside_research_t + l.set_aside_other_t
                     as set_asides_t,
                 l.reported_fraction, l.valid_from, l.valid_to, l.measures, l.legal_basis, l.objection,
-                d.reason, d.effective_at, d.decided_by
+                d.reason, d.effective_at, d.decided_by, l.purpose,
+                case when l.origin = 'entered' then d.effective_at else d.decided_at end as issued_at
             from catch_limit l
             join limit_decision d on d.limit_id = l.id and d.act = 'ISSUED'
             """;
@@ -72,6 +76,25 @@ class LimitStore implements Limits {
                 .list();
     }
 
+    /** The allocations of all limits of a stock, by limit. */
+    Map<Long, List<AllocationView>> allocationsOfStock(long stockId) {
+        return jdbc
+                .sql(ALLOCATIONS + "where l.stock_id = ? order by c.name")
+                .param(stockId)
+                .query(LimitStore::allocation)
+                .list()
+                .stream()
+                .collect(Collectors.groupingBy(AllocationView::limitId));
+    }
+
+    /** Numbers of the stock's limits that are in force, one for each season. */
+    Set<Long> numbersInForce(long stockId) {
+        return jdbc.sql("select limit_id from limit_in_force where stock_id = ?")
+                .param(stockId)
+                .query(Long.class)
+                .set();
+    }
+
     private static AllocationView allocation(ResultSet row, int n) throws SQLException {
         return new AllocationView(
                 row.getLong(1),
@@ -116,7 +139,9 @@ class LimitStore implements Limits {
                 row.getString("legal_basis"),
                 row.getString("objection"),
                 row.getString("reason"),
-                row.getObject("effective_at", OffsetDateTime.class).toInstant(),
-                row.getString("decided_by"));
+                row.getObject("issued_at", OffsetDateTime.class).toInstant(),
+                row.getString("decided_by"),
+                row.getString("purpose"),
+                row.getObject("effective_at", OffsetDateTime.class).toInstant());
     }
 }

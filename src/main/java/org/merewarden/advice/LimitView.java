@@ -12,6 +12,8 @@ import org.jspecify.annotations.Nullable;
  * @param amount in {@code unit}: t for a catch limit, net-nights or the like for effort
  * @param setAsidesTonnes subsistence, angling, research and others together
  * @param toBeLoggedTonnes (removals − set-asides) × expected reported fraction; null unless the kind is catch
+ * @param purpose season, revision of the season's limit, or closure (then the amount is 0 t)
+ * @param effectiveAt from when it is in force
  */
 public record LimitView(
         long id,
@@ -30,7 +32,9 @@ public record LimitView(
         @Nullable String objection,
         String reason,
         Instant issuedAt,
-        String issuedBy) {
+        String issuedBy,
+        String purpose,
+        Instant effectiveAt) {
 
     /** Total removals allowed, t; null unless the kind is catch. */
     public @Nullable Double amountTonnes() {

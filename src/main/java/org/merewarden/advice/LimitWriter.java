@@ -6,8 +6,10 @@ import java.time.Instant;
 import java.time.OffsetDateTime;
 import java.time.ZoneOffset;
 import java.util.List;
+import java.util.Map;
 import java.util.Objects;
 import java.util.Optional;
+import org.jspecify.annotations.Nullable;
 import org.merewarden.core.policy.LimitArithmetic;
 import org.merewarden.waterbody.Register;
 import org.merewarden.waterbody.RightView;
@@ -15,9 +17,11 @@ import org.springframework.jdbc.core.simple.JdbcClient;
 import org.springframework.jdbc.support.GeneratedKeyHolder;
 import org.springframework.stereotype.Repository;
 
-/** Writes limits, their decisions and allocations. Rows are added, never edited. */
+/** Writes limits, their decisions and allocations. Rows are added, never edited; what is in force or waits for its moment is kept beside them. */
 @Repository
 class LimitWriter {
+    static final String DRAFTED = "DRAFTED";
+    static final String DISCARDED = "DISCARDED";
     static final String PROPOSED = "PROPOSED";
     static final String ISSUED = "ISSUED";
     static final String REFUSED = "REFUSED";
@@ -35,14 +39,17 @@ class LimitWriter {
     }
 
     long add(NewLimit limit, String by) {
+        Terms terms = limit.terms();
         var keys = new GeneratedKeyHolder();
         jdbc.sql("""
                         insert into catch_limit (stock_id, season_year, kind, amount, unit, set_aside_subsistence_t,
                             set_aside_angling_t, set_aside_research_t, set_aside_other_t, reported_fraction,
                             valid_from, valid_to, measures, legal_basis, objection, assessment_id, origin,
+                            purpose, effective_at, review_by, recommendation_id, difference_reason, entry_key,
                             created_at, created_by)
                         values (:stock, :season, :kind, :amount, :unit, :subsistence, :angling, :research, :other,
-                            :reported, :from, :to, :measures, :basis, :objection, :assessment, :origin, :at, :by)""")
+                            :reported, :from, :to, :measures, :basis, :objection, :assessment, :origin, :purpose, :effective,
+                            :review, :recommendation, :difference, :key, :at, :by)""")
                 .param("stock", limit.stockId())
                 .param("season", limit.season())
                 .param("kind", limit.kind())
@@ -60,6 +67,12 @@ class LimitWriter {
                 .param("objection", limit.objection(), Types.VARCHAR)
                 .param("assessment", limit.assessmentId(), Types.BIGINT)
                 .param("origin", limit.origin())
+                .param("purpose", terms.purpose())
+                .param("effective", stored(terms.effectiveAt()), Types.TIMESTAMP_WITH_TIMEZONE)
+                .param("review", terms.reviewBy(), Types.DATE)
+                .param("recommendation", terms.recommendationId(), Types.BIGINT)
+                .param("difference", terms.differenceReason(), Types.VARCHAR)
+                .param("key", terms.entryKey(), Types.VARCHAR)
                 .param("at", now())
                 .param("by", by)
                 .update(keys, "id");
@@ -80,20 +93,42 @@ class LimitWriter {
                 .update();
     }
 
-    /** Puts an issued limit in force and allocates it by the rights; the one before is superseded. */
-    void putInForce(long limitId, NewLimit limit, String by) {
+    /** One decision about a stock's limits at a time. */
+    void lockStock(long stockId) {
+        jdbc.sql("select id from stock where id = ? for update")
+                .param(stockId)
+                .query(Long.class)
+                .optional();
+    }
+
+    /** Puts an issued limit in force; the one before is superseded from then on. */
+    void putInForce(long limitId, NewLimit limit, String by, Instant effective) {
         Optional<Long> before = jdbc.sql("select limit_id from limit_in_force where stock_id = ? and season_year = ?")
                 .params(limit.stockId(), limit.season())
                 .query(Long.class)
                 .optional();
         before.ifPresent(old -> {
-            decide(old, SUPERSEDED, by, clock.instant(), "superseded by notice " + limitId);
+            decide(old, SUPERSEDED, by, effective, "superseded by notice " + limitId);
             endForce(old);
         });
         jdbc.sql("insert into limit_in_force (stock_id, season_year, limit_id) values (?, ?, ?)")
                 .params(limit.stockId(), limit.season(), limitId)
                 .update();
-        allocate(limitId, limit);
+    }
+
+    /** Keeps an issued limit until its moment. */
+    void putPending(long limitId, Instant effective) {
+        jdbc.sql("insert into limit_pending (limit_id, effective_at) values (?, ?)")
+                .params(limitId, effective.atOffset(ZoneOffset.UTC))
+                .update();
+    }
+
+    /** Whether it was waiting; of two that ask, one hears yes. */
+    boolean endPending(long limitId) {
+        return jdbc.sql("delete from limit_pending where limit_id = ?")
+                        .param(limitId)
+                        .update()
+                == 1;
     }
 
     /** Puts a limit from papers in force, unless one that was issued later is; then it is superseded as it comes. */
@@ -108,7 +143,8 @@ class LimitWriter {
         if (later.isPresent()) {
             decide(limitId, SUPERSEDED, by, clock.instant(), "superseded by notice " + later.get());
         } else {
-            putInForce(limitId, limit, by);
+            putInForce(limitId, limit, by, clock.instant());
+            allocate(limitId, limit);
         }
     }
 
@@ -116,24 +152,43 @@ class LimitWriter {
         jdbc.sql("delete from limit_in_force where limit_id = ?").param(limitId).update();
     }
 
-    private void allocate(long limitId, NewLimit limit) {
-        Double amount = limit.amount();
-        if (!limit.kind().equals("catch") || amount == null) {
+    /** Allocates by the rights, unless it was done by hand. */
+    void allocate(long limitId, NewLimit limit) {
+        Double kilograms = limit.toBeLoggedKilograms();
+        if (kilograms == null || allocated(limitId)) {
             return;
         }
         List<RightView> rights = register.rightsOfStock(limit.stockId());
-        double kilograms = 1000 * LimitArithmetic.toBeLogged(amount, limit.setAsidesTonnes(), limit.reportedFraction());
         long[] parts = LimitArithmetic.allocate(
                 kilograms, rights.stream().mapToDouble(RightView::sharePercent).toArray());
         for (int i = 0; i < parts.length; i++) {
-            jdbc.sql("insert into allocation (limit_id, cooperative_id, share_percent, amount_kg) values (?, ?, ?, ?)")
-                    .params(
-                            limitId,
-                            rights.get(i).cooperativeId(),
-                            rights.get(i).sharePercent(),
-                            parts[i])
-                    .update();
+            insert(limitId, rights.get(i), parts[i]);
         }
+    }
+
+    private boolean allocated(long limitId) {
+        return jdbc.sql("select count(*) from allocation where limit_id = ?")
+                        .param(limitId)
+                        .query(Integer.class)
+                        .single()
+                > 0;
+    }
+
+    /** Keeps what was allocated by hand, kg by cooperative; those without a right to the stock get nothing. */
+    void allocateByHand(long limitId, long stockId, Map<Long, Long> kilograms) {
+        for (RightView right : kilograms.isEmpty() ? List.<RightView>of() : register.rightsOfStock(stockId)) {
+            insert(limitId, right, kilograms.getOrDefault(right.cooperativeId(), 0L));
+        }
+    }
+
+    private void insert(long limitId, RightView right, long kilograms) {
+        jdbc.sql("insert into allocation (limit_id, cooperative_id, share_percent, amount_kg) values (?, ?, ?, ?)")
+                .params(limitId, right.cooperativeId(), right.sharePercent(), kilograms)
+                .update();
+    }
+
+    private static @Nullable OffsetDateTime stored(@Nullable Instant instant) {
+        return instant == null ? null : instant.atOffset(ZoneOffset.UTC);
     }
 
     private OffsetDateTime now() {

@@ -178,7 +178,8 @@ class LimitsTable implements TableHandler {
                 row.text("legal_basis"),
                 null,
                 null,
-                "entered");
+                "entered",
+                Terms.OF_PAPER);
     }
 
     private static String reason(TableRow row) {
@@ -197,11 +198,11 @@ class LimitsTable implements TableHandler {
     private Map<String, Stored> stored() {
         return jdbc
                 .sql("""
-                        select l.*, d.effective_at, d.reason as decided_reason from catch_limit l
+                        select l.*, d.effective_at as issued_at, d.reason as decided_reason from catch_limit l
                         join limit_decision d on d.limit_id = l.id and d.act = 'ISSUED'
                         where l.origin = 'entered'""")
                 .query((row, n) -> new Stored(
-                        row.getObject("effective_at", OffsetDateTime.class)
+                        row.getObject("issued_at", OffsetDateTime.class)
                                 .atZoneSameInstant(ZoneOffset.UTC)
                                 .toLocalDate(),
                         row.getString("decided_reason"),

@@ -86,7 +86,7 @@ class OutlookPages {
                 0,
                 "",
                 texts.of("outlook.lede." + key, String.valueOf(season)),
-                latest.map(this::cautions).orElse(List.of()),
+                latest.map(this::cautions).orElseGet(() -> List.of(texts.of("advice.caution.unassessed"))),
                 List.of(),
                 null,
                 List.of(),

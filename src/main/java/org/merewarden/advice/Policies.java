@@ -68,14 +68,14 @@ class Policies implements PolicyInForce {
     /**
      * Writes a version down; returns its number.
      *
-     * @throws Decisions.NotAllowed where it changes nothing of the version in force
+     * @throws NotAllowed where it changes nothing of the version in force
      */
     @Transactional
     public int propose(Policy policy, String reason) {
         store.lock();
         PolicyVersion inForce = inForce(store.all());
         if (policy.equals(inForce.policy())) {
-            throw new Decisions.NotAllowed("policy.form.same");
+            throw new NotAllowed("policy.form.same");
         }
         int number = store.add(policy, Who.name(), clock.instant());
         store.decide(number, PolicyVersion.PROPOSED, Who.name(), clock.instant(), reason);
@@ -97,7 +97,7 @@ class Policies implements PolicyInForce {
         PolicyVersion version = open(all, number);
         boolean own = version.proposer().filter(Who.name()::equals).isPresent();
         if (own && !settings.get(OfficeSettings.OWN_PROPOSALS).equals("yes")) {
-            throw new Decisions.NotAllowed("policy.own");
+            throw new NotAllowed("policy.own");
         }
         String written = reason + (own ? " (own proposal, as the office’s settings allow)" : "");
         store.decide(number, PolicyVersion.ADOPTED, Who.name(), clock.instant(), written);
@@ -121,17 +121,17 @@ class Policies implements PolicyInForce {
     private static PolicyVersion open(List<PolicyVersion> all, int number) {
         PolicyVersion version = find(all, number);
         if (version.state() != PolicyVersion.State.OPEN) {
-            throw new Decisions.NotAllowed("policy.decided");
+            throw new NotAllowed("policy.decided");
         }
         return version;
     }
 
     private static void checkReason(String reason) {
         if (reason.isBlank()) {
-            throw new Decisions.NotAllowed("policy.reason.needed");
+            throw new NotAllowed("policy.reason.needed");
         }
         if (reason.length() > Decisions.LONGEST_REASON) {
-            throw new Decisions.NotAllowed("policy.reason.long");
+            throw new NotAllowed("policy.reason.long");
         }
     }
 

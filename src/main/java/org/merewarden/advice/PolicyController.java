@@ -68,7 +68,7 @@ class PolicyController {
         try {
             act.run();
             redirect.addFlashAttribute("done", words.word(doneKey, name));
-        } catch (Decisions.NotAllowed e) {
+        } catch (NotAllowed e) {
             redirect.addFlashAttribute("refused", words.word(String.valueOf(e.getMessage()), name));
         }
         return "redirect:/policy/" + number;

@@ -93,7 +93,7 @@ class PolicyFormController {
                 int number = policies.propose(form.toPolicy(), String.valueOf(form.reason));
                 redirect.addFlashAttribute("done", words.word("policy.proposed", Integer.toString(number)));
                 return "redirect:/policy/" + number + "?against=" + before;
-            } catch (Decisions.NotAllowed e) {
+            } catch (NotAllowed e) {
                 result.reject("rule", words.word(String.valueOf(e.getMessage())));
             }
         }

@@ -61,7 +61,7 @@ class PolicyTrials implements JobHandler {
     /**
      * Queues a trial of the version against the one in force.
      *
-     * @throws Decisions.NotAllowed where the version is in force itself or its trial is under way
+     * @throws NotAllowed where the version is in force itself or its trial is under way
      */
     @Transactional
     public void start(int number) {
@@ -70,13 +70,13 @@ class PolicyTrials implements JobHandler {
         PolicyVersion version = Policies.find(all, number);
         int against = Policies.inForce(all).number();
         if (version.inForce()) {
-            throw new Decisions.NotAllowed("policy.trial.inForce");
+            throw new NotAllowed("policy.trial.inForce");
         }
         if (store.latest(number)
                 .flatMap(t -> jobs.find(t.jobId()))
                 .filter(JobView::active)
                 .isPresent()) {
-            throw new Decisions.NotAllowed("policy.trial.underWay");
+            throw new NotAllowed("policy.trial.underWay");
         }
         String subject = "policy version " + number + " against version " + against;
         store.add(jobs.submit(KIND, subject, Integer.toString(number)), number, against, Who.name(), clock.instant());

@@ -92,6 +92,7 @@ class DecisionsTest {
                 .param("validFrom", season + "-01-01")
                 .param("validTo", season + "-12-31")
                 .param("reason", "Held at last year’s level.")
+                .param("differenceReason", "Whatever is recommended.")
                 .with(csrf());
     }
 

@@ -38,6 +38,8 @@ class EveryPageBrowserTest {
             "/stocks/pellowin-lake/PLN/assessments/1",
             "/stocks/lurrow-tarn/FPE/assessments/1",
             "/stocks/pellowin-lake/PLN/advice",
+            "/stocks/pellowin-lake/PLN/advice?season=2026&revise=true",
+            "/limits/1/papers",
             "/notices/1",
             "/water-bodies",
             "/water-bodies/skelder-water",

@@ -82,12 +82,17 @@ class WholeJobBrowserTest {
         try (Office office = person("biologist").go(STOCK)) {
             office.follow("Advice");
             office.page().getByLabel("Amount (total").fill("3.6");
+            office.page().getByText("Set-asides and reported fraction").click();
             office.page().getByLabel("Set aside for angling").fill("0.4");
             office.page().getByLabel("Expected reported fraction").fill("0.9");
             office.page()
                     .getByLabel("Reason", new com.microsoft.playwright.Page.GetByLabelOptions())
                     .last()
                     .fill("Nearer the fold than last year.");
+            Locator difference = office.page().getByLabel("Why it differs from the recommendation");
+            if (difference.count() > 0) {
+                difference.fill("The cooperatives agreed to less.");
+            }
             office.press("Propose");
             assertThat(office.text()).contains("3.6 t for season");
             // (3.6 − 0.4) × 0.9 = 2.88

@@ -142,7 +142,9 @@ final class Made {
                 null,
                 "for a test",
                 Instant.EPOCH,
-                "anna");
+                "anna",
+                "season",
+                Instant.EPOCH);
     }
 
     static LimitView catchLimit(long stockId, double tonnes) {

@@ -98,7 +98,7 @@ class PostgresTest {
                 "/assessments",
                 "/shares",
                 "/activity",
-"/policy",
+                "/policy",
                 "/policy/1?against=1",
                 "/policy/new",
                 "/notices/1",
@@ -120,6 +120,7 @@ class PostgresTest {
                         .param("validFrom", "2026-01-01")
                         .param("validTo", "2026-12-31")
                         .param("reason", "Lower than before.")
+                        .param("differenceReason", "Whatever is recommended.")
                         .with(BIOLOGIST)
                         .with(csrf()))
                 .andExpect(status().is3xxRedirection());

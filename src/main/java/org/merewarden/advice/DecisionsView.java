@@ -1,0 +1,132 @@
+package org.merewarden.advice;
+
+import java.util.Comparator;
+import java.util.HashMap;
+import java.util.List;
+import java.util.Map;
+import java.util.Objects;
+import java.util.Set;
+import java.util.stream.Stream;
+import org.jspecify.annotations.Nullable;
+import org.merewarden.web.Figures;
+import org.merewarden.web.Texts;
+import org.merewarden.web.Who;
+import org.springframework.stereotype.Component;
+
+/** What was drafted, proposed and decided about a stock's limits, in finished strings. */
+@Component
+class DecisionsView {
+    private final OpenProposals proposals;
+    private final Decisions decisions;
+    private final LimitStore limits;
+    private final Texts texts;
+
+    DecisionsView(OpenProposals proposals, Decisions decisions, LimitStore limits, Texts texts) {
+        this.proposals = proposals;
+        this.decisions = decisions;
+        this.limits = limits;
+        this.texts = texts;
+    }
+
+    /** Something written down that is not in force: a draft, or a limit that waits for its moment. */
+    record Waiting(String id, String what) {}
+
+    /** A limit that is issued and holds or will hold. */
+    record Standing(String id, String season, String what) {}
+
+    /** A past act. */
+    record Past(
+            String limitId,
+            String act,
+            String what,
+            String at,
+            String by,
+            String reason,
+            boolean issued,
+            boolean inForce,
+            @Nullable String from) {}
+
+    /**
+     * The page's strings.
+     *
+     * @param inForce the limits in force, latest season first
+     * @param standing the same and those that wait for their moment
+     * @param closesAtOnce the reader's closure is issued in the act that proposes it
+     */
+    record Page(
+            List<OpenProposals.Open> open,
+            List<Waiting> pending,
+            List<Waiting> drafts,
+            List<Standing> inForce,
+            List<Standing> standing,
+            List<Past> past,
+            boolean closesAtOnce) {}
+
+    Page page(long stockId, List<LimitFile> files) {
+        Set<Long> inForce = limits.numbersInForce(stockId);
+        return new Page(
+                proposals.open(stockId, files),
+                files.stream()
+                        .filter(f -> f.standing() && !inForce.contains(f.id()))
+                        .map(this::pending)
+                        .toList(),
+                files.stream().filter(LimitFile::draft).map(this::draft).toList(),
+                standing(files.stream().filter(f -> inForce.contains(f.id()))),
+                standing(files.stream().filter(LimitFile::standing)),
+                past(files, inForce),
+                Who.has("APPROVER") && decisions.ownProposals());
+    }
+
+    private List<Standing> standing(Stream<LimitFile> files) {
+        return files.sorted(Comparator.comparing((LimitFile f) -> -f.limit().season()))
+                .map(f -> new Standing(
+                        Long.toString(f.id()), AdviceView.season(f.limit().season()), proposals.what(f.limit())))
+                .toList();
+    }
+
+    private Waiting pending(LimitFile file) {
+        LimitHistory.Decision issued = file.latest();
+        return new Waiting(
+                Long.toString(file.id()),
+                texts.of(
+                        "advice.pending.what",
+                        Long.toString(file.id()),
+                        proposals.what(file.limit()),
+                        Figures.dateTime(issued.effectiveAt()),
+                        issued.decidedBy()));
+    }
+
+    private Waiting draft(LimitFile file) {
+        return new Waiting(
+                Long.toString(file.id()),
+                texts.of(
+                        "advice.draft.what",
+                        Long.toString(file.id()),
+                        proposals.what(file.limit()),
+                        file.first().decidedBy(),
+                        file.first().when()));
+    }
+
+    private List<Past> past(List<LimitFile> files, Set<Long> inForce) {
+        Map<Long, NewLimit> byId = new HashMap<>();
+        files.forEach(f -> byId.put(f.id(), f.limit()));
+        return files.stream()
+                .flatMap(f -> f.newestFirst().stream())
+                .sorted(Comparator.comparing(LimitHistory.Decision::at).reversed())
+                .map(act -> past(act, Objects.requireNonNull(byId.get(act.limitId())), inForce))
+                .toList();
+    }
+
+    private Past past(LimitHistory.Decision act, NewLimit limit, Set<Long> inForce) {
+        return new Past(
+                Long.toString(act.limitId()),
+                texts.of("advice.act." + act.act()),
+                proposals.what(limit),
+                act.when(),
+                act.decidedBy(),
+                act.reason(),
+                act.act().equals(LimitWriter.ISSUED),
+                act.act().equals(LimitWriter.ISSUED) && inForce.contains(act.limitId()),
+                act.laterEffect() ? texts.of("advice.past.from", Figures.dateTime(act.effectiveAt())) : null);
+    }
+}

@@ -1,0 +1,159 @@
+package org.merewarden.advice;
+
+import java.time.Instant;
+import java.time.LocalTime;
+import java.time.ZonedDateTime;
+import java.util.Comparator;
+import java.util.List;
+import java.util.Optional;
+import java.util.UUID;
+import org.jspecify.annotations.Nullable;
+import org.merewarden.core.policy.Policy;
+import org.merewarden.web.OfficeSettings;
+import org.merewarden.web.Seasons;
+import org.springframework.stereotype.Component;
+
+/** Fills the form in with what is known, so that the usual limit takes a look and a reason. */
+@Component
+class LimitPrefill {
+    private static final double KILOGRAMS = 1000;
+
+    private final Recommendations recommendations;
+    private final LimitStore limits;
+    private final Seasons seasons;
+    private final OfficeSettings settings;
+
+    LimitPrefill(Recommendations recommendations, LimitStore limits, Seasons seasons, OfficeSettings settings) {
+        this.recommendations = recommendations;
+        this.limits = limits;
+        this.seasons = seasons;
+        this.settings = settings;
+    }
+
+    /**
+     * What a form is filled in from.
+     *
+     * @param last the latest limit up to the season that was not withdrawn and is no closure
+     * @param setAsides the written rule's, where it sets anything aside and recommends an amount
+     */
+    record Sources(
+            int season,
+            Optional<Adviser.Advice> advice,
+            Optional<LimitFile> last,
+            Optional<Policy.SetAsides> setAsides) {
+        /** The last limit's set-asides may be kept. */
+        boolean lastSetAsides() {
+            return setAsides.isEmpty()
+                    && last.isPresent()
+                    && last.get().limit().kind().equals("catch")
+                    && advice.map(a -> last.get().limit().setAsidesTonnes() <= a.limitTonnes())
+                            .orElse(true);
+        }
+    }
+
+    Sources sources(int season, Optional<Adviser.Advice> advice, List<LimitFile> files) {
+        Optional<LimitFile> last = files.stream()
+                .filter(file ->
+                        file.limit().season() <= season && !file.limit().terms().closure())
+                .filter(file -> issued(file) != null && !file.state().equals(LimitWriter.WITHDRAWN))
+                .max(Comparator.comparing((LimitFile file) -> file.limit().season())
+                        .thenComparing(file -> effective(file)));
+        Optional<Policy.SetAsides> shares = advice.map(a -> recommendations.setAsides(a.policyNumber()))
+                .filter(s -> s.subsistence() + s.angling() + s.research() + s.other() > 0);
+        return new Sources(season, advice, last, shares);
+    }
+
+    private static Instant effective(LimitFile file) {
+        LimitHistory.Decision issued = issued(file);
+        return issued == null ? Instant.MIN : issued.effectiveAt();
+    }
+
+    private static LimitHistory.@Nullable Decision issued(LimitFile file) {
+        return file.acts().stream()
+                .filter(act -> act.act().equals(LimitWriter.ISSUED))
+                .findFirst()
+                .orElse(null);
+    }
+
+    /** The next limit: the recommendation for the season, on the last limit's terms. */
+    LimitForm season(Sources sources) {
+        LimitForm form = new LimitForm();
+        form.key = UUID.randomUUID().toString();
+        sources.last().ifPresent(last -> terms(form, last.limit(), sources.lastSetAsides()));
+        form.season = sources.season();
+        form.validFrom = seasons.start(sources.season());
+        form.validTo = seasons.end(sources.season());
+        sources.advice().ifPresent(advice -> {
+            form.kind = "catch";
+            form.unit = "t";
+            form.amount = advice.limitTonnes();
+            sources.setAsides().ifPresent(shares -> setAsides(form, shares, advice.limitTonnes()));
+        });
+        return form;
+    }
+
+    /** The limit of the season once more, to be changed from the next full hour on. */
+    LimitForm revision(Sources sources) {
+        LimitForm form = season(sources);
+        form.purpose = Terms.REVISION;
+        sources.last().ifPresent(last -> {
+            terms(form, last.limit(), true);
+            form.amount = last.limit().amount();
+        });
+        ZonedDateTime next = ZonedDateTime.now(settings.zone()).plusHours(1);
+        form.effectiveDate = next.toLocalDate();
+        form.effectiveTime = LocalTime.of(next.getHour(), 0);
+        return form;
+    }
+
+    /** A draft, to be gone on with. */
+    LimitForm draft(LimitFile draft) {
+        NewLimit limit = draft.limit();
+        LimitForm form = new LimitForm();
+        form.key = UUID.randomUUID().toString();
+        form.draft = draft.id();
+        form.season = limit.season();
+        terms(form, limit, true);
+        form.amount = limit.amount();
+        form.validFrom = limit.validFrom();
+        form.validTo = limit.validTo();
+        form.reason = draft.first().reason();
+        form.purpose = limit.terms().purpose();
+        form.differenceReason = limit.terms().differenceReason();
+        form.reviewBy = limit.terms().reviewBy();
+        Instant effective = limit.terms().effectiveAt();
+        if (effective != null) {
+            form.effectiveDate = effective.atZone(settings.zone()).toLocalDate();
+            form.effectiveTime = effective.atZone(settings.zone()).toLocalTime();
+        }
+        limits.allocationsOf(draft.id()).forEach(a -> form.hand.put(a.cooperativeId(), (double) a.amountKg()));
+        return form;
+    }
+
+    private static void terms(LimitForm form, NewLimit limit, boolean withSetAsides) {
+        form.kind = limit.kind();
+        form.unit = limit.unit();
+        form.reportedFraction = limit.reportedFraction();
+        form.measures = limit.measures();
+        form.legalBasis = limit.legalBasis();
+        form.objection = limit.objection();
+        if (withSetAsides) {
+            form.subsistence = limit.subsistenceTonnes();
+            form.angling = limit.anglingTonnes();
+            form.research = limit.researchTonnes();
+            form.other = limit.otherTonnes();
+        }
+    }
+
+    private static void setAsides(LimitForm form, Policy.SetAsides shares, double tonnes) {
+        form.subsistence = part(shares.subsistence(), tonnes);
+        form.angling = part(shares.angling(), tonnes);
+        form.research = part(shares.research(), tonnes);
+        form.other = part(shares.other(), tonnes);
+    }
+
+    /** Rounded down to whole kilograms, so that the parts are never more than the whole. */
+    private static double part(double share, double tonnes) {
+        return Math.floor(share * tonnes * KILOGRAMS) / KILOGRAMS;
+    }
+}

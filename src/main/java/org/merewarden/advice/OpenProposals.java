@@ -1,0 +1,129 @@
+package org.merewarden.advice;
+
+import java.util.LinkedHashMap;
+import java.util.List;
+import java.util.Map;
+import java.util.Objects;
+import java.util.Optional;
+import org.jspecify.annotations.Nullable;
+import org.merewarden.assessment.AssessmentView;
+import org.merewarden.assessment.Assessments;
+import org.merewarden.web.Figures;
+import org.merewarden.web.Texts;
+import org.merewarden.web.Who;
+import org.springframework.stereotype.Component;
+
+/** Proposals that wait for a decision, with all that an approver weighs, in finished strings. */
+@Component
+class OpenProposals {
+    private final Assessments assessments;
+    private final Recommendations recommendations;
+    private final AllocationTable allocations;
+    private final Texts texts;
+
+    OpenProposals(Assessments assessments, Recommendations recommendations, AllocationTable allocations, Texts texts) {
+        this.assessments = assessments;
+        this.recommendations = recommendations;
+        this.allocations = allocations;
+        this.texts = texts;
+    }
+
+    /**
+     * A proposal that waits for a decision.
+     *
+     * @param facts name and value, in order
+     * @param doubt what is wrong with the assessment behind it, so that its issuer must write why
+     */
+    record Open(
+            String id,
+            String title,
+            String by,
+            String at,
+            String reason,
+            boolean own,
+            @Nullable String provisional,
+            @Nullable String doubt,
+            boolean measures,
+            List<String[]> facts,
+            List<AllocationTable.Part> parts) {}
+
+    List<Open> open(long stockId, List<LimitFile> files) {
+        List<LimitFile> waiting = files.stream().filter(LimitFile::open).toList();
+        if (waiting.isEmpty()) {
+            return List.of();
+        }
+        Optional<AssessmentView> latest = assessments.latest(stockId);
+        Map<Long, Recommendations.Kept> recommended = recommendations.ofStock(stockId);
+        Map<Long, List<AllocationTable.Part>> parts = allocations.ofProposals(stockId, waiting);
+        return waiting.stream()
+                .map(file -> open(file, latest, recommended, parts.getOrDefault(file.id(), List.of())))
+                .toList();
+    }
+
+    private Open open(
+            LimitFile file,
+            Optional<AssessmentView> latest,
+            Map<Long, Recommendations.Kept> recommended,
+            List<AllocationTable.Part> parts) {
+        NewLimit limit = file.limit();
+        LimitHistory.Decision proposal = file.latest();
+        Long number = limit.terms().recommendationId();
+        Recommendations.Kept beside = number == null ? null : recommended.get(number);
+        return new Open(
+                Long.toString(file.id()),
+                texts.of("advice.open.what", Long.toString(file.id()), what(limit)),
+                proposal.decidedBy(),
+                proposal.when(),
+                proposal.reason(),
+                proposal.decidedBy().equals(Who.name()),
+                limit.terms().reviewBy() == null
+                        ? null
+                        : texts.of(
+                                "advice.open.provisional",
+                                Figures.date(limit.terms().reviewBy())),
+                Decisions.doubt(limit, latest)
+                        .map(d -> texts.of("advice.open.doubt." + d))
+                        .orElse(null),
+                limit.kind().equals("measures only"),
+                facts(limit, beside),
+                parts);
+    }
+
+    private List<String[]> facts(NewLimit limit, Recommendations.@Nullable Kept beside) {
+        Map<String, @Nullable String> facts = new LinkedHashMap<>();
+        facts.put("amount", amount(limit));
+        if (!limit.terms().closure()) {
+            facts.put("recommended", recommended(beside));
+        }
+        facts.put("difference", limit.terms().differenceReason());
+        facts.put("from", Figures.dateTime(limit.terms().effectiveAt()));
+        facts.put("setAsides", limit.kind().equals("catch") ? Figures.tonnes(limit.setAsidesTonnes()) : null);
+        facts.put("toBeLogged", AdviceView.toBeLogged(limit));
+        facts.put("validity", Figures.date(limit.validFrom()) + " – " + Figures.date(limit.validTo()));
+        return facts.entrySet().stream()
+                .filter(f -> f.getValue() != null && !f.getValue().equals(Figures.UNKNOWN))
+                .map(f -> new String[] {texts.of("advice.open." + f.getKey()), Objects.requireNonNull(f.getValue())})
+                .toList();
+    }
+
+    private String recommended(Recommendations.@Nullable Kept beside) {
+        return beside == null
+                ? texts.of("advice.open.recommended.nothing")
+                : texts.of(
+                        "advice.open.recommended.by",
+                        Figures.tonnes(beside.limitTonnes()),
+                        Integer.toString(beside.policyNumber()));
+    }
+
+    /** "12.5 t for season 2026", "closed, season 2026". */
+    String what(NewLimit limit) {
+        String season = AdviceView.season(limit.season());
+        return limit.terms().closure()
+                ? texts.of("advice.what.closure", season)
+                : texts.of("advice.what." + limit.terms().purpose(), amount(limit), season);
+    }
+
+    static String amount(NewLimit limit) {
+        return limit.amount() == null ? limit.kind() : Figures.withUnit(limit.amount(), limit.unit());
+    }
+}
