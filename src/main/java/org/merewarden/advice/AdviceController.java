@@ -71,7 +71,7 @@ class AdviceController {
             Model model) {
         StockView stock = pages.stock(lake, species);
         int of = season == null ? recommendations.season(stock.id()) : season;
-        if (of < 1800 || of > 2200) {
+        if (of < 1800 || !recommendations.advisable(of)) {
             throw new NotFound("season " + of);
         }
         return pages.fresh(stock, of, revise, Optional.ofNullable(draft), WhatIf.of(own, weak), model);
@@ -95,7 +95,7 @@ class AdviceController {
                 : recommendations.current(stock.id(), form.season);
         rules.check(form, stock.id(), advice, draft, result);
         if (result.hasErrors()) {
-            return pages.again(stock, form, new ClosureForm(), model, response);
+            return pages.again(stock, form, model, response);
         }
         Long assessment = advice.map(Adviser.Advice::assessmentId)
                 .or(() -> assessments.latest(stock.id()).map(AssessmentView::id))

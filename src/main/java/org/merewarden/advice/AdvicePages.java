@@ -4,7 +4,6 @@ import jakarta.servlet.http.HttpServletResponse;
 import java.util.List;
 import java.util.Objects;
 import java.util.Optional;
-import java.util.UUID;
 import org.merewarden.waterbody.Register;
 import org.merewarden.waterbody.StockView;
 import org.merewarden.web.NotFound;
@@ -58,11 +57,16 @@ class AdvicePages {
         LimitPrefill.Sources sources = sources(stock, of, files);
         LimitForm form = begun.map(prefill::draft)
                 .orElseGet(() -> revision ? prefill.revision(sources) : prefill.season(sources));
-        return page(stock, form, new ClosureForm(), sources, files, ask, model);
+        return page(stock, form, prefill.closure(), sources, files, ask, model);
     }
 
-    /** The page once more with the forms as they were sent. */
-    String again(StockView stock, LimitForm form, ClosureForm closure, Model model, HttpServletResponse response) {
+    /** The page once more with the limit as it was sent. */
+    String again(StockView stock, LimitForm form, Model model, HttpServletResponse response) {
+        return again(stock, form, prefill.closure(), model, response);
+    }
+
+    private String again(
+            StockView stock, LimitForm form, ClosureForm closure, Model model, HttpServletResponse response) {
         response.setStatus(HttpStatus.UNPROCESSABLE_CONTENT.value());
         List<LimitFile> files = history.files(stock.id());
         int season = Objects.requireNonNullElseGet(form.season, () -> recommendations.season(stock.id()));
@@ -88,12 +92,11 @@ class AdvicePages {
             List<LimitFile> files,
             WhatIf ask,
             Model model) {
-        if (closure.closeKey == null) {
-            closure.closeKey = UUID.randomUUID().toString();
-        }
         model.addAttribute("stock", stock);
         model.addAttribute("inForce", advice.lede(stock));
-        model.addAttribute("outlook", outlook.page(stock, sources.season(), ask));
+        int looked =
+                recommendations.advisable(sources.season()) ? sources.season() : recommendations.season(stock.id());
+        model.addAttribute("outlook", outlook.page(stock, looked, ask));
         model.addAttribute("deciding", decisions.page(stock.id(), files));
         model.addAttribute("proposing", proposals.page(stock.id(), form, sources));
         model.addAttribute("form", form);

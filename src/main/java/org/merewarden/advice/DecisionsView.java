@@ -9,6 +9,7 @@ import java.util.Set;
 import java.util.stream.Stream;
 import org.jspecify.annotations.Nullable;
 import org.merewarden.web.Figures;
+import org.merewarden.web.Seasons;
 import org.merewarden.web.Texts;
 import org.merewarden.web.Who;
 import org.springframework.stereotype.Component;
@@ -19,12 +20,14 @@ class DecisionsView {
     private final OpenProposals proposals;
     private final Decisions decisions;
     private final LimitStore limits;
+    private final Seasons seasons;
     private final Texts texts;
 
-    DecisionsView(OpenProposals proposals, Decisions decisions, LimitStore limits, Texts texts) {
+    DecisionsView(OpenProposals proposals, Decisions decisions, LimitStore limits, Seasons seasons, Texts texts) {
         this.proposals = proposals;
         this.decisions = decisions;
         this.limits = limits;
+        this.seasons = seasons;
         this.texts = texts;
     }
 
@@ -49,15 +52,15 @@ class DecisionsView {
     /**
      * The page's strings.
      *
-     * @param inForce the limits in force, latest season first
-     * @param standing the same and those that wait for their moment
+     * @param revisable the limits in force for this season and later ones
+     * @param standing all limits in force and those that wait for their moment
      * @param closesAtOnce the reader's closure is issued in the act that proposes it
      */
     record Page(
             List<OpenProposals.Open> open,
             List<Waiting> pending,
             List<Waiting> drafts,
-            List<Standing> inForce,
+            List<Standing> revisable,
             List<Standing> standing,
             List<Past> past,
             boolean closesAtOnce) {}
@@ -71,7 +74,8 @@ class DecisionsView {
                         .map(this::pending)
                         .toList(),
                 files.stream().filter(LimitFile::draft).map(this::draft).toList(),
-                standing(files.stream().filter(f -> inForce.contains(f.id()))),
+                standing(files.stream()
+                        .filter(f -> inForce.contains(f.id()) && f.limit().season() >= seasons.current())),
                 standing(files.stream().filter(LimitFile::standing)),
                 past(files, inForce),
                 Who.has("APPROVER") && decisions.ownProposals());

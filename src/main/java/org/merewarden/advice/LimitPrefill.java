@@ -1,8 +1,10 @@
 package org.merewarden.advice;
 
+import java.time.Clock;
 import java.time.Instant;
-import java.time.LocalTime;
-import java.time.ZonedDateTime;
+import java.time.LocalDate;
+import java.time.LocalDateTime;
+import java.time.temporal.ChronoUnit;
 import java.util.Comparator;
 import java.util.List;
 import java.util.Optional;
@@ -22,12 +24,15 @@ class LimitPrefill {
     private final LimitStore limits;
     private final Seasons seasons;
     private final OfficeSettings settings;
+    private final Clock clock;
 
-    LimitPrefill(Recommendations recommendations, LimitStore limits, Seasons seasons, OfficeSettings settings) {
+    LimitPrefill(
+            Recommendations recommendations, LimitStore limits, Seasons seasons, OfficeSettings settings, Clock clock) {
         this.recommendations = recommendations;
         this.limits = limits;
         this.seasons = seasons;
         this.settings = settings;
+        this.clock = clock;
     }
 
     /**
@@ -100,10 +105,24 @@ class LimitPrefill {
             terms(form, last.limit(), true);
             form.amount = last.limit().amount();
         });
-        ZonedDateTime next = ZonedDateTime.now(settings.zone()).plusHours(1);
-        form.effectiveDate = next.toLocalDate();
-        form.effectiveTime = LocalTime.of(next.getHour(), 0);
+        LocalDateTime next = nextHour();
+        LocalDate first = seasons.start(sources.season());
+        form.effectiveDate = next.toLocalDate().isBefore(first) ? first : next.toLocalDate();
+        form.effectiveTime = next.toLocalTime();
         return form;
+    }
+
+    /** A closure from the next full hour on. */
+    ClosureForm closure() {
+        ClosureForm form = new ClosureForm();
+        form.closeKey = UUID.randomUUID().toString();
+        form.closeOn = nextHour().toLocalDate();
+        form.closeAt = nextHour().toLocalTime();
+        return form;
+    }
+
+    private LocalDateTime nextHour() {
+        return LocalDateTime.now(clock.withZone(settings.zone())).plusHours(1).truncatedTo(ChronoUnit.HOURS);
     }
 
     /** A draft, to be gone on with. */

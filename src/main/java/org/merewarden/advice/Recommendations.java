@@ -10,6 +10,7 @@ import java.util.Optional;
 import java.util.function.Function;
 import java.util.stream.Collectors;
 import org.merewarden.core.policy.Policy;
+import org.merewarden.web.Seasons;
 import org.merewarden.web.Who;
 import org.springframework.jdbc.core.simple.JdbcClient;
 import org.springframework.jdbc.support.GeneratedKeyHolder;
@@ -21,13 +22,17 @@ class Recommendations {
     /** Part of an amount by which two may be apart and count as the same: decimals do not always come back exactly. */
     private static final double SAME = 1e-9;
 
+    private static final int FARTHEST = 5;
+
     private final Adviser adviser;
     private final JdbcClient jdbc;
+    private final Seasons seasons;
     private final Clock clock;
 
-    Recommendations(Adviser adviser, JdbcClient jdbc, Clock clock) {
+    Recommendations(Adviser adviser, JdbcClient jdbc, Seasons seasons, Clock clock) {
         this.adviser = adviser;
         this.jdbc = jdbc;
+        this.seasons = seasons;
         this.clock = clock;
     }
 
@@ -39,8 +44,13 @@ class Recommendations {
         return adviser.season(stockId);
     }
 
+    /** Whether the season is near enough: the work of advising grows with the seasons between. */
+    boolean advisable(int season) {
+        return season <= seasons.current() + FARTHEST;
+    }
+
     Optional<Adviser.Advice> current(long stockId, int season) {
-        return adviser.advise(stockId, season);
+        return !advisable(season) ? Optional.empty() : adviser.advise(stockId, season);
     }
 
     /** Puts it on record and returns its number. */

@@ -14,6 +14,7 @@ import org.junit.jupiter.api.TestInstance;
 import org.merewarden.TestRegion;
 import org.merewarden.WholeApplication;
 import org.merewarden.assessment.AssessForTests;
+import org.merewarden.web.Seasons;
 import org.springframework.beans.factory.annotation.Autowired;
 import org.springframework.jdbc.core.simple.JdbcClient;
 
@@ -33,11 +34,16 @@ class RecommendationsTest {
     @Autowired
     private AssessForTests assess;
 
+    @Autowired
+    private Seasons seasons;
+
     private TestRegion region;
     private long stock;
+    private int now;
 
     @BeforeAll
     void register() {
+        now = seasons.current();
         region = new TestRegion(jdbc);
         stock = region.stock(region.lake("rec-lake", "Recommended Lake"), "FPE");
         region.stock(region.lake("rec-bare", "Unassessed Lake"), "FRO");
@@ -57,7 +63,7 @@ class RecommendationsTest {
     @Test
     void anotherAmountThanTheRecommendedNeedsAReasonThatNamesBoth() throws Exception {
         desk.recommend(stock, 10.0001, false, 1);
-        Map<String, String> fields = desk.fields(2121);
+        Map<String, String> fields = desk.fields(now + 1);
         int before = limits();
         var answer = desk.send(STOCK + "/limits", fields, BIOLOGIST).andExpect(status().is(422));
         assertThat(LimitDesk.body(answer))
@@ -73,14 +79,14 @@ class RecommendationsTest {
         assertThat(kept.values())
                 .containsExactly(
                         10.0001,
-                        2121,
+                        now + 1,
                         1,
                         desk.assessment(stock),
                         "{\"made\":\"for a test\"}",
                         "ines",
                         "The ministry allows one season of grace.");
         assertThat(desk.page(STOCK + "/advice", APPROVER))
-                .contains("12.5 t for season 2121")
+                .contains("12.5 t for season " + (now + 1))
                 .contains("10 t (policy version 1)")
                 .contains("The ministry allows one season of grace.");
     }
@@ -89,7 +95,7 @@ class RecommendationsTest {
     void theRecommendedAmountNeedsNoReason() throws Exception {
         // a relative difference of 1e-10 is the same amount
         desk.recommend(stock, 12.5 * (1 + 1e-10), false, 1);
-        Map<String, String> fields = desk.fields(2122);
+        Map<String, String> fields = desk.fields(now + 2);
         fields.put("differenceReason", "There is none.");
         long id = desk.propose(STOCK, fields, BIOLOGIST);
         assertThat(jdbc.sql("select count(*) from catch_limit where id = ? and recommendation_id is not null"
@@ -100,33 +106,33 @@ class RecommendationsTest {
                 .isEqualTo(1);
         // a relative difference of 1e-8 is another one
         desk.recommend(stock, 12.5 * (1 + 1e-8), false, 1);
-        desk.send(STOCK + "/limits", desk.fields(2122), BIOLOGIST).andExpect(status().is(422));
+        desk.send(STOCK + "/limits", desk.fields(now + 2), BIOLOGIST).andExpect(status().is(422));
     }
 
     @Test
     void aProvisionalCeilingNeedsItsDayOfReview() throws Exception {
         desk.recommend(stock, 12.5, true, 1);
-        Map<String, String> fields = desk.fields(2123);
+        Map<String, String> fields = desk.fields(now + 3);
         assertThat(LimitDesk.body(desk.send(STOCK + "/limits", fields, BIOLOGIST)))
                 .contains("A provisional ceiling needs a day by which it is looked at again.");
-        for (String day : List.of("2122-12-31", "2125-01-01")) {
+        for (String day : List.of((now + 2) + "-12-31", (now + 5) + "-01-01")) {
             fields.put("reviewBy", day);
             assertThat(LimitDesk.body(
                             desk.send(STOCK + "/limits", fields, BIOLOGIST).andExpect(status().is(422))))
                     .contains("is too early or too late");
         }
-        fields.put("reviewBy", "2124-12-31");
+        fields.put("reviewBy", (now + 4) + "-12-31");
         desk.propose(STOCK, fields, BIOLOGIST);
         assertThat(desk.page(STOCK + "/advice", APPROVER))
-                .contains("A provisional ceiling, to be looked at again by 31 Dec 2124.");
+                .contains("A provisional ceiling, to be looked at again by 31 Dec " + (now + 4) + ".");
     }
 
     @Test
     void anUnassessedStockHasNothingToDifferFrom() throws Exception {
-        assertThat(desk.page(BARE + "/advice?season=2124", BIOLOGIST))
-                .contains("There is no recommendation for season 2124")
+        assertThat(desk.page(BARE + "/advice?season=" + (now + 1), BIOLOGIST))
+                .contains("There is no recommendation for season " + (now + 1))
                 .doesNotContain("differenceReason");
-        long id = desk.propose(BARE, desk.fields(2124), BIOLOGIST);
+        long id = desk.propose(BARE, desk.fields(now + 1), BIOLOGIST);
         assertThat(desk.page(BARE + "/advice", APPROVER)).contains("nothing; there was no usable assessment");
         assertThat(LimitDesk.said(desk.act(id, "issue", "", APPROVER), "refused"))
                 .contains("no assessment stands behind it");
@@ -141,27 +147,28 @@ class RecommendationsTest {
     @Test
     void theFormIsFilledInFromTheRecommendationAndTheLastLimit() throws Exception {
         desk.recommendNothing();
-        Map<String, String> last = desk.fields(2025);
+        Map<String, String> last = desk.fields(now - 1);
         last.put("measures", "Mesh 45 mm at least.");
         last.put("legalBasis", "Waters Act 12.");
         long id = desk.propose(STOCK, last, BIOLOGIST);
         desk.act(id, "issue", "Agreed.", APPROVER).andExpect(status().is3xxRedirection());
         desk.recommend(stock, 31.2, false, 1);
-        String page = desk.page(STOCK + "/advice?season=2026", BIOLOGIST);
+        String page = desk.page(STOCK + "/advice?season=" + now, BIOLOGIST);
         assertThat(value(page, "amount")).isEqualTo("31.2");
-        assertThat(value(page, "season")).isEqualTo("2026");
-        assertThat(value(page, "validFrom")).isEqualTo("2026-01-01");
-        assertThat(value(page, "validTo")).isEqualTo("2026-12-31");
+        assertThat(value(page, "season")).isEqualTo(Integer.toString(now));
+        assertThat(value(page, "validFrom")).isEqualTo(now + "-01-01");
+        assertThat(value(page, "validTo")).isEqualTo(now + "-12-31");
         assertThat(value(page, "angling")).isEqualTo("1.0");
         assertThat(value(page, "reportedFraction")).isEqualTo("0.85");
         assertThat(value(page, "legalBasis")).isEqualTo("Waters Act 12.");
         assertThat(page)
-                .contains("Filled in from the recommendation. Last limit: 12.5 t, season 2025 (notice " + id + ").")
+                .contains("At first filled in from the recommendation. Last limit: 12.5 t, season " + (now - 1)
+                        + " (notice " + id + ").")
                 .contains("Filled in from the last limit, notice " + id)
                 .contains("Mesh 45 mm at least.");
         // 2.5 t are more than the whole of this one
         desk.recommend(stock, 2, false, 1);
-        assertThat(value(desk.page(STOCK + "/advice?season=2026", BIOLOGIST), "angling"))
+        assertThat(value(desk.page(STOCK + "/advice?season=" + now, BIOLOGIST), "angling"))
                 .isEqualTo("0.0");
         jdbc.sql("insert into policy_version select 901, limit_fraction, ramp_line, ramp_target_fraction,"
                         + " ramp_low_fraction, ramp_high_fraction, catch_quantile, horizon_years, tolerance,"
@@ -170,10 +177,23 @@ class RecommendationsTest {
                         + " created_by from policy_version where number = 1")
                 .update();
         desk.recommend(stock, 31.2, false, 901);
-        String byPolicy = desk.page(STOCK + "/advice?season=2026", BIOLOGIST);
+        String byPolicy = desk.page(STOCK + "/advice?season=" + now, BIOLOGIST);
         assertThat(value(byPolicy, "subsistence")).isEqualTo("3.12");
         assertThat(value(byPolicy, "angling")).isEqualTo("1.56");
         assertThat(byPolicy).contains("the policy’s shares of the recommended amount");
+    }
+
+    @Test
+    void aSeasonFarAheadIsNotAdvised() throws Exception {
+        // the work grows with the seasons between, whoever asks
+        desk.recommend(stock, 10, false, 1);
+        long id = desk.propose(STOCK, desk.fields(now + 6), BIOLOGIST);
+        assertThat(jdbc.sql("select recommendation_id from catch_limit where id = ?")
+                        .param(id)
+                        .query(Long.class)
+                        .optional())
+                .isEmpty();
+        assertThat(desk.page(STOCK + "/advice?season=" + (now + 6), BIOLOGIST)).isEmpty();
     }
 
     /** The value in a field of the page. */
@@ -187,13 +207,15 @@ class RecommendationsTest {
     @Test
     void aDraftIsReplacedDiscardedOrProposed() throws Exception {
         desk.recommend(stock, 10, true, 1);
-        Map<String, String> fields = desk.fields(2126);
+        Map<String, String> fields = desk.fields(now + 4);
         fields.put("act", "draft");
         fields.put("reason", "");
         long first = desk.propose(STOCK, fields, BIOLOGIST);
         assertThat(desk.state(first)).isEqualTo("DRAFTED");
         String page = desk.page(STOCK + "/advice", BIOLOGIST);
-        assertThat(page).contains("Draft " + first + ": 12.5 t for season 2126").doesNotContain("issue-" + first);
+        assertThat(page)
+                .contains("Draft " + first + ": 12.5 t for season " + (now + 4))
+                .doesNotContain("issue-" + first);
         assertThat(desk.page("/notices/" + first, BIOLOGIST)).contains("DRAFT: not yet proposed");
         assertThat(LimitDesk.said(desk.act(first, "issue", "Now.", APPROVER), "refused"))
                 .contains("was decided already");
@@ -213,7 +235,7 @@ class RecommendationsTest {
         assertThat(LimitDesk.body(desk.send(STOCK + "/limits", fields, BIOLOGIST)))
                 .contains("Write down why", "why they differ", "looked at again");
         assertThat(desk.state(second)).isEqualTo("DRAFTED");
-        fields.putAll(Map.of("reason", "Now.", "differenceReason", "Grace.", "reviewBy", "2126-06-01"));
+        fields.putAll(Map.of("reason", "Now.", "differenceReason", "Grace.", "reviewBy", (now + 4) + "-06-01"));
         long proposed = desk.propose(STOCK, fields, BIOLOGIST);
         assertThat(desk.state(second)).isEqualTo("DISCARDED");
         assertThat(desk.state(proposed)).isEqualTo("PROPOSED");
@@ -237,7 +259,7 @@ class RecommendationsTest {
     @Test
     void aFormThatIsSentTwiceIsStoredOnce() throws Exception {
         desk.recommendNothing();
-        Map<String, String> fields = desk.fields(2127);
+        Map<String, String> fields = desk.fields(now + 5);
         fields.put("key", "form-2127");
         long id = desk.propose(STOCK, fields, BIOLOGIST);
         int before = limits();

@@ -131,7 +131,8 @@ class RevisionsTest {
         assertThat(standingOn()).isEqualTo(8);
         assertThat(desk.page(STOCK + "/advice", BIOLOGIST))
                 .contains("Notice " + third + ": revised to 5 t, season " + season)
-                .contains("23:58");
+                .contains("23:58")
+                .contains("Revise the limit in force: revised to 8 t, season " + season);
         pending.takeEffect(moment);
         pending.takeEffect(moment);
         assertThat(limits.inForce(stock, season).orElseThrow().id()).isEqualTo(third);

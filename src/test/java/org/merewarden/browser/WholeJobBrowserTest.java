@@ -84,6 +84,7 @@ class WholeJobBrowserTest {
             office.page().getByLabel("Amount (total").fill("3.6");
             office.page().getByText("Set-asides and reported fraction").click();
             office.page().getByLabel("Set aside for angling").fill("0.4");
+            office.page().getByLabel("Set aside for others").fill("0");
             office.page().getByLabel("Expected reported fraction").fill("0.9");
             office.page()
                     .getByLabel("Reason", new com.microsoft.playwright.Page.GetByLabelOptions())
