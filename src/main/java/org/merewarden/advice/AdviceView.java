@@ -52,7 +52,7 @@ class AdviceView {
     static String toBeLogged(NewLimit limit) {
         Double amount = limit.amount();
         return limit.kind().equals("catch") && amount != null
-                ? Figures.tonnes(LimitArithmetic.toBeLogged(amount, limit.setAsidesTonnes(), limit.reportedFraction()))
+                ? Figures.decided(LimitArithmetic.toBeLogged(amount, limit.setAsidesTonnes(), limit.reportedFraction()))
                 : Figures.UNKNOWN;
     }
 

@@ -22,6 +22,9 @@ import tools.jackson.databind.json.JsonMapper;
 /** Puts the rule to a stock: the same assessment, policy, season and log give the same recommendation. */
 @Service
 class Adviser {
+    /** The work grows with the seasons between, and so does what is not known of them. */
+    private static final int MOST_BETWEEN = 10;
+
     private final Assessments assessments;
     private final Limits limits;
     private final SeasonsBetween between;
@@ -60,7 +63,10 @@ class Adviser {
             boolean provisional,
             String working) {}
 
-    /** By the policy in force; empty where there is no assessment with draws, or the season is assessed already. */
+    /**
+     * By the policy in force; empty where there is no assessment with draws, where the season is assessed already, or where
+     * more than {@value #MOST_BETWEEN} seasons stand between.
+     */
     Optional<Advice> advise(long stockId, int season) {
         return work(stockId, season).map(this::advice);
     }
@@ -85,7 +91,9 @@ class Adviser {
     /** By any version of the policy. */
     Optional<AdviceWorking> work(long stockId, int season, Policy policy, int policyNumber) {
         Optional<AssessmentView> latest = assessments.latest(stockId);
-        if (latest.isEmpty() || season <= latest.get().lastYear()) {
+        if (latest.isEmpty()
+                || season <= latest.get().lastYear()
+                || season > latest.get().lastYear() + 1 + MOST_BETWEEN) {
             return Optional.empty();
         }
         Posterior posterior = assessments.posterior(latest.get().id());
@@ -103,7 +111,11 @@ class Adviser {
         List<Between> notAssessed = between.of(stockId, last, season, assessment.lastRemovalsTonnes(), logged);
         Optional<LimitView> before = limits.inForce(stockId, season - 1);
         EarlierSeason earlier = new EarlierSeason(
-                before.map(LimitView::amountTonnes).orElse(Double.NaN), removals(assessment, season - 1, notAssessed));
+                before.map(LimitView::amountTonnes).orElse(Double.NaN),
+                before.filter(LimitView::closure).isPresent()
+                        // what was taken before the closure was taken under the limit before it
+                        ? Double.NaN
+                        : removals(assessment, season - 1, notAssessed));
         Outlook outlook = new Outlook(
                 posterior,
                 notAssessed.stream()

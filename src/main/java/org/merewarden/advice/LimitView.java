@@ -40,4 +40,9 @@ public record LimitView(
     public @Nullable Double amountTonnes() {
         return kind.equals("catch") ? amount : null;
     }
+
+    /** Whether it closed the stock within its season. */
+    public boolean closure() {
+        return purpose.equals(Terms.CLOSURE);
+    }
 }

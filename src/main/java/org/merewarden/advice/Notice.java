@@ -6,9 +6,14 @@ import org.jspecify.annotations.Nullable;
 /**
  * A limit as its notice says it, in finished strings.
  *
- * @param kind catch, effort or measures-only
+ * @param kind catch, effort, measures-only or closure
  * @param amount total removals for a catch limit
  * @param issued when it was issued; null for a draft
+ * @param effective the moment from which a revision or closure holds; null where it holds from its issue
+ * @param review the day by which a provisional ceiling is looked at again; null where it is none
+ * @param recommended what the rule recommended; null where it recommended nothing
+ * @param difference why the amount is another one; null where it is not
+ * @param objections how many are noted
  * @param reason of the act that issued it; of the proposal where it was never issued
  * @param strength of the evidence, in a text's key; null where nothing was assessed
  * @param state the latest act
@@ -26,6 +31,10 @@ record Notice(
         String reported,
         String toBeLogged,
         String validity,
+        @Nullable String effective,
+        @Nullable String review,
+        @Nullable String recommended,
+        @Nullable String difference,
         @Nullable String measures,
         @Nullable String legalBasis,
         @Nullable String objection,
@@ -33,7 +42,8 @@ record Notice(
         @Nullable String strength,
         String state,
         List<Part> parts,
-        List<Act> acts) {
+        List<Act> acts,
+        int objections) {
 
     /** What of the limit is kept for a purpose. */
     record SetAside(String purpose, String amount) {}

@@ -22,6 +22,8 @@ class Notices {
     private final Assessments assessments;
     private final OfficeSettings settings;
     private final LimitStore limits;
+    private final Recommendations recommendations;
+    private final LimitPapers papers;
 
     Notices(
             Register register,
@@ -29,13 +31,17 @@ class Notices {
             LimitHistory history,
             Assessments assessments,
             OfficeSettings settings,
-            LimitStore limits) {
+            LimitStore limits,
+            Recommendations recommendations,
+            LimitPapers papers) {
         this.register = register;
         this.decisions = decisions;
         this.history = history;
         this.assessments = assessments;
         this.settings = settings;
         this.limits = limits;
+        this.recommendations = recommendations;
+        this.papers = papers;
     }
 
     Notice notice(long id) {
@@ -52,12 +58,20 @@ class Notices {
                 stock.title(),
                 stock.path(),
                 AdviceView.season(limit.season()),
-                limit.kind().replace(' ', '-'),
-                limit.amount() == null ? "" : Figures.withUnit(limit.amount(), limit.unit()),
+                limit.terms().closure() ? Terms.CLOSURE : limit.kind().replace(' ', '-'),
+                amount(limit),
                 setAsides(limit),
                 Figures.percent(limit.reportedFraction()),
                 AdviceView.toBeLogged(limit),
                 Figures.date(limit.validFrom()) + " – " + Figures.date(limit.validTo()),
+                limit.terms().effectiveAt() == null
+                        ? null
+                        : Figures.dateTime(limit.terms().effectiveAt()),
+                limit.terms().reviewBy() == null
+                        ? null
+                        : Figures.date(limit.terms().reviewBy()),
+                recommended(limit),
+                limit.terms().differenceReason(),
                 limit.measures(),
                 limit.legalBasis(),
                 limit.objection(),
@@ -65,7 +79,24 @@ class Notices {
                 strength(stock.id(), limit),
                 acts.get(acts.size() - 1).act(),
                 parts(id),
-                acts.stream().map(d -> act(d, reason)).toList());
+                acts.stream().map(d -> act(d, reason)).toList(),
+                papers.objections(id).size());
+    }
+
+    /** To the kilogram: a decided amount is no estimate. */
+    private static String amount(NewLimit limit) {
+        Double amount = limit.amount();
+        if (amount == null) {
+            return "";
+        }
+        return limit.kind().equals("catch") ? Figures.decided(amount) : Figures.withUnit(amount, limit.unit());
+    }
+
+    private @Nullable String recommended(NewLimit limit) {
+        Long id = limit.terms().recommendationId();
+        Recommendations.Kept kept =
+                id == null ? null : recommendations.ofStock(limit.stockId()).get(id);
+        return kept == null ? null : Figures.decided(kept.limitTonnes());
     }
 
     private static Notice.Act act(LimitHistory.Decision d, String told) {
@@ -84,18 +115,16 @@ class Notices {
 
     private static List<Notice.SetAside> setAsides(NewLimit limit) {
         return List.of(
-                new Notice.SetAside("subsistence", Figures.tonnes(limit.subsistenceTonnes())),
-                new Notice.SetAside("angling", Figures.tonnes(limit.anglingTonnes())),
-                new Notice.SetAside("research", Figures.tonnes(limit.researchTonnes())),
-                new Notice.SetAside("other", Figures.tonnes(limit.otherTonnes())));
+                new Notice.SetAside("subsistence", Figures.decided(limit.subsistenceTonnes())),
+                new Notice.SetAside("angling", Figures.decided(limit.anglingTonnes())),
+                new Notice.SetAside("research", Figures.decided(limit.researchTonnes())),
+                new Notice.SetAside("other", Figures.decided(limit.otherTonnes())));
     }
 
     private List<Notice.Part> parts(long id) {
         return limits.allocationsOf(id).stream()
                 .map(a -> new Notice.Part(
-                        a.cooperativeName(),
-                        Figures.sig(a.sharePercent()) + " %",
-                        Figures.withUnit((double) a.amountKg(), "kg")))
+                        a.cooperativeName(), Figures.sig(a.sharePercent()) + " %", Figures.whole(a.amountKg(), "kg")))
                 .toList();
     }
 }

@@ -108,7 +108,8 @@ class OutlookPages {
                 : java.math.BigDecimal.valueOf(value).stripTrailingZeros().toPlainString();
     }
 
-    private String lede(AdviceWorking w) {
+    /** The recommendation and its risk, in a sentence or two. */
+    String lede(AdviceWorking w) {
         Recommendation r = w.recommendation();
         Policy policy = w.policy();
         String season = String.valueOf(w.season());

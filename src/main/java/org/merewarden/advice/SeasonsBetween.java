@@ -12,7 +12,8 @@ import org.springframework.stereotype.Component;
 
 /**
  * The removals of the seasons between an assessment and the limit: where landings are logged, the final catch to which
- * they lead, scaled back to total removals; else the full limit; else the last assessed season's removals.
+ * they lead, scaled back to total removals (after a closure those so far); else the full limit; else the last assessed
+ * season's removals.
  */
 @Component
 class SeasonsBetween {
@@ -54,7 +55,9 @@ class SeasonsBetween {
         if (logged != null) {
             double reported = limit.map(LimitView::reportedFraction).orElse(1.0);
             double setAsides = limit.map(LimitView::setAsidesTonnes).orElse(0.0);
-            return new Between(season, logged.finalTonnes() / reported + setAsides, logged.cv(), Basis.LANDINGS);
+            boolean closed = limit.filter(LimitView::closure).isPresent();
+            double commercial = closed ? logged.loggedTonnes() : logged.finalTonnes();
+            return new Between(season, commercial / reported + setAsides, logged.cv(), Basis.LANDINGS);
         }
         Double allowed = limit.map(LimitView::amountTonnes).orElse(null);
         if (allowed != null) {

@@ -95,7 +95,8 @@ public class AssessmentWords {
 
     private String inSentence(Learned learned) {
         return texts.orElse(
-                        "word." + learned.prior().parameter(), learned.prior().parameter())
+                        "assessment.word." + learned.prior().parameter(),
+                        learned.prior().parameter())
                 + (learned.series().isEmpty() ? "" : " " + texts.get("word.of-series", learned.series()));
     }
 

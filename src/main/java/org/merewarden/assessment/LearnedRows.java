@@ -89,7 +89,7 @@ class LearnedRows {
     }
 
     private String name(Prior prior, String series) {
-        String name = texts.orElse("parameter." + prior.parameter(), prior.parameter());
+        String name = texts.orElse("assessment.parameter." + prior.parameter(), prior.parameter());
         return series.isEmpty() ? name : name + ": " + series;
     }
 }

@@ -33,11 +33,15 @@ record MeetingPack(String season, List<String> sentences, List<Row> rows, List<S
      * @param missing why there are no drawings; null where there are
      * @param equilibrium finished SVG; null where no assessment has draws, or the stock lives from stocking alone
      * @param biomass finished SVG; null without an assessed season
+     * @param recommendation what the rule recommends, in a sentence; null where it has nothing to work on
+     * @param risk its risk curve, finished SVG; null likewise
      */
     record Sheet(
             String title,
             List<String> lede,
             @Nullable String missing,
             @Nullable String equilibrium,
-            @Nullable String biomass) {}
+            @Nullable String biomass,
+            @Nullable String recommendation,
+            @Nullable String risk) {}
 }

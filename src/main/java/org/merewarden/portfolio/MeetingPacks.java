@@ -6,9 +6,11 @@ import static java.util.stream.Collectors.joining;
 import java.util.ArrayList;
 import java.util.List;
 import java.util.Map;
+import java.util.Optional;
 import java.util.function.Function;
 import java.util.stream.Collectors;
 import org.jspecify.annotations.Nullable;
+import org.merewarden.advice.RiskOfLimits;
 import org.merewarden.advice.WaitingLimits;
 import org.merewarden.advice.WaitingLimits.Proposal;
 import org.merewarden.assessment.AssessmentView;
@@ -27,6 +29,7 @@ class MeetingPacks {
     private final Portfolio portfolio;
     private final Assessments assessments;
     private final WaitingLimits proposals;
+    private final RiskOfLimits risks;
     private final RowBuilder rows;
     private final StockWords words;
     private final DiagramTexts diagrams;
@@ -37,6 +40,7 @@ class MeetingPacks {
             Portfolio portfolio,
             Assessments assessments,
             WaitingLimits proposals,
+            RiskOfLimits risks,
             RowBuilder rows,
             StockWords words,
             DiagramTexts diagrams,
@@ -45,6 +49,7 @@ class MeetingPacks {
         this.portfolio = portfolio;
         this.assessments = assessments;
         this.proposals = proposals;
+        this.risks = risks;
         this.rows = rows;
         this.words = words;
         this.diagrams = diagrams;
@@ -99,12 +104,17 @@ class MeetingPacks {
                 : drawing(
                         history.onPaper(posterior, assessments.evidence(a.id())),
                         texts.get("pack.history", e.stock().title()));
+        Optional<RiskOfLimits.Risk> risk = risks.of(e.stock());
         return new MeetingPack.Sheet(
                 e.stock().title(),
                 words.lede(e, season),
                 equilibrium == null && biomass == null ? texts.get("pack.no-drawing") : null,
                 equilibrium,
-                biomass);
+                biomass,
+                risk.map(RiskOfLimits.Risk::recommendation).orElse(null),
+                risk.map(r -> drawing(
+                                r.curve(), texts.get("pack.risk", e.stock().title())))
+                        .orElse(null));
     }
 
     private @Nullable String equilibrium(Entry e, AssessmentView a, Posterior posterior) {

@@ -66,6 +66,21 @@ public final class Figures {
         return withUnit(tonnes, "t");
     }
 
+    /** A decided amount of tonnes, which is no estimate: to the kilogram, with its unit. */
+    public static String decided(@Nullable Double tonnes) {
+        if (tonnes == null || !Double.isFinite(tonnes)) {
+            return UNKNOWN;
+        }
+        NumberFormat format = NumberFormat.getNumberInstance(locale());
+        format.setMaximumFractionDigits(3);
+        return format.format(tonnes) + NO_BREAK_SPACE + "t";
+    }
+
+    /** All digits of a whole number with its unit: "12,345 kg". */
+    public static String whole(long count, String unit) {
+        return NumberFormat.getIntegerInstance(locale()).format(count) + NO_BREAK_SPACE + unit;
+    }
+
     /** Three significant digits and the unit, kept on one line. */
     public static String withUnit(@Nullable Double value, String unit) {
         String figure = sig(value);

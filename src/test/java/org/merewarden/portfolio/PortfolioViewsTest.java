@@ -79,7 +79,7 @@ class PortfolioViewsTest {
         assertThat(row.margin()).isEqualTo("60% (15%)");
         assertThat(row.limit()).isEqualTo("12\u00a0t");
         assertThat(row.taken()).isEqualTo("3.4\u00a0t");
-        assertThat(row.takenBar()).contains("3.4&nbsp;t of 9.9&nbsp;t to be logged");
+        assertThat(row.takenBar()).contains("3.4\u00a0t of 9.9\u00a0t to be logged");
         assertThat(row.evidence()).isEqualTo("strong");
         assertThat(row.assessed()).isEqualTo("3 Feb 2026");
     }

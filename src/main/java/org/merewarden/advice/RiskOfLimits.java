@@ -1,0 +1,28 @@
+package org.merewarden.advice;
+
+import java.util.Optional;
+import org.merewarden.waterbody.StockView;
+import org.springframework.stereotype.Service;
+
+/** What the rule makes of a stock, for other features: its recommendation in a sentence and the risk curve. */
+@Service
+public class RiskOfLimits {
+    private final Adviser adviser;
+    private final OutlookPages pages;
+    private final OutlookDrawings drawings;
+
+    RiskOfLimits(Adviser adviser, OutlookPages pages, OutlookDrawings drawings) {
+        this.adviser = adviser;
+        this.pages = pages;
+        this.drawings = drawings;
+    }
+
+    /** @param curve finished SVG, wide as a page */
+    public record Risk(String recommendation, String curve) {}
+
+    /** For the season that is to be advised next; empty where the rule has nothing to work on. */
+    public Optional<Risk> of(StockView stock) {
+        return adviser.work(stock.id(), adviser.season(stock.id()))
+                .map(w -> new Risk(pages.lede(w), drawings.draw(w, drawings.curve(w), stock.title())));
+    }
+}
