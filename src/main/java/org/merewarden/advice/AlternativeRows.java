@@ -42,7 +42,10 @@ class AlternativeRows {
                         all,
                         a -> plain(a.projection().expectedCatch())),
                 row(texts.of("outlook.row.bad"), all, a -> plain(a.projection().catchQuantile(BAD_YEAR))),
-                row(texts.of("outlook.row.biomass", String.valueOf(last)), all, a -> biomass(a, policy)));
+                row(
+                        texts.of("outlook.row.biomass", String.valueOf(last)),
+                        all,
+                        a -> biomass(a, policy.horizonYears(), policy)));
     }
 
     /** The chance of B &lt; B lim at the end of each season. */
@@ -52,6 +55,13 @@ class AlternativeRows {
                         String.valueOf(working.season() + t),
                         all,
                         a -> chance(a.projection().belowLimit()[t], working.policy())))
+                .toList();
+    }
+
+    /** Biomass at the end of each season, t. */
+    List<Row> biomass(AdviceWorking working, List<Alternative> all) {
+        return IntStream.rangeClosed(1, working.policy().horizonYears())
+                .mapToObj(t -> row(String.valueOf(working.season() + t - 1), all, a -> biomass(a, t, working.policy())))
                 .toList();
     }
 
@@ -67,9 +77,9 @@ class AlternativeRows {
         return new Cell(Figures.percent(p), p > policy.tolerance());
     }
 
-    private static Cell biomass(Alternative a, Policy policy) {
+    private static Cell biomass(Alternative a, int season, Policy policy) {
         double tail = (1 - policy.intervalProbability()) / 2;
-        double[] q = a.projection().biomassQuantiles(a.projection().seasons(), tail, 0.5, 1 - tail);
+        double[] q = a.projection().biomassQuantiles(season, tail, 0.5, 1 - tail);
         return new Cell(Figures.interval(q[1], q[0], q[2]), false);
     }
 }

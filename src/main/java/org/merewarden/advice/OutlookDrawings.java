@@ -50,11 +50,20 @@ class OutlookDrawings {
     }
 
     String draw(AdviceWorking working, RiskCurve curve, String stock) {
+        return draw(working, curve, stock, 680, 320);
+    }
+
+    /** For a column of paper. */
+    String onPaper(AdviceWorking working, RiskCurve curve, String stock) {
+        return draw(working, curve, stock, 380, 220);
+    }
+
+    private String draw(AdviceWorking working, RiskCurve curve, String stock, double width, double height) {
         double most = curve.tonnes()[STEPS];
         double tolerance = 100 * working.policy().tolerance();
         double msy = Quantiles.of(working.outlook().posterior().msyTonnes(), 0.5);
         double limit = working.recommendation().limitTonnes();
-        Plot plot = new Plot(680, 320, 0, most, 105);
+        Plot plot = new Plot(width, height, 0, most, 105);
         List<Point> line = IntStream.rangeClosed(0, STEPS)
                 .mapToObj(i -> new Point(curve.tonnes()[i], 100 * curve.risks()[i]))
                 .toList();

@@ -29,6 +29,7 @@ record OutlookPage(
         List<String> alternatives,
         List<Row> rows,
         List<Row> bySeason,
+        List<Row> biomass,
         @Nullable String stress,
         String own,
         String halfGrowth) {

@@ -72,6 +72,7 @@ class OutlookPages {
                 all.stream().map(Alternative::name).toList(),
                 rows.of(w, all),
                 rows.bySeason(w, all),
+                rows.biomass(w, all),
                 stress(w, ask),
                 typed(ask.ownTonnes()),
                 typed(100 * ask.halfGrowth()));
@@ -94,6 +95,7 @@ class OutlookPages {
                 null,
                 List.of(),
                 null,
+                List.of(),
                 List.of(),
                 List.of(),
                 List.of(),

@@ -17,12 +17,12 @@ public class RiskOfLimits {
         this.drawings = drawings;
     }
 
-    /** @param curve finished SVG, wide as a page */
+    /** @param curve finished SVG for a column of paper */
     public record Risk(String recommendation, String curve) {}
 
     /** For the season that is to be advised next; empty where the rule has nothing to work on. */
     public Optional<Risk> of(StockView stock) {
         return adviser.work(stock.id(), adviser.season(stock.id()))
-                .map(w -> new Risk(pages.lede(w), drawings.draw(w, drawings.curve(w), stock.title())));
+                .map(w -> new Risk(pages.lede(w), drawings.onPaper(w, drawings.curve(w), stock.title())));
     }
 }
