@@ -1,9 +1,7 @@
 package org.merewarden.advice;
 
 import java.util.List;
-import java.util.Map;
 import java.util.Optional;
-import java.util.stream.IntStream;
 import org.merewarden.advice.AdviceWorking.Basis;
 import org.merewarden.advice.AdviceWorking.Between;
 import org.merewarden.assessment.AssessmentView;
@@ -14,7 +12,6 @@ import org.merewarden.core.outlook.SeasonBetween;
 import org.merewarden.core.policy.EarlierSeason;
 import org.merewarden.core.policy.LimitRule;
 import org.merewarden.core.policy.Policy;
-import org.merewarden.records.SeasonInProgress;
 import org.merewarden.web.Seasons;
 import org.springframework.stereotype.Service;
 import tools.jackson.databind.json.JsonMapper;
@@ -106,9 +103,7 @@ class Adviser {
             AssessmentView assessment, Posterior posterior, int season, Policy policy, int policyNumber) {
         long stockId = assessment.stockId();
         int last = posterior.lastYear();
-        Map<Integer, Map<Long, SeasonInProgress.Logged>> logged =
-                between.logged(IntStream.range(last + 1, season).boxed().toList());
-        List<Between> notAssessed = between.of(stockId, last, season, assessment.lastRemovalsTonnes(), logged);
+        List<Between> notAssessed = between.of(stockId, last, season, assessment.lastRemovalsTonnes());
         Optional<LimitView> before = limits.inForce(stockId, season - 1);
         EarlierSeason earlier = new EarlierSeason(
                 before.map(LimitView::amountTonnes).orElse(Double.NaN),

@@ -1,7 +1,6 @@
 package org.merewarden.advice;
 
 import java.util.List;
-import java.util.Map;
 import java.util.Optional;
 import java.util.stream.IntStream;
 import org.jspecify.annotations.Nullable;
@@ -28,29 +27,15 @@ class SeasonsBetween {
         this.limits = limits;
     }
 
-    /** What the log says, read once for many stocks: by season. */
-    Map<Integer, Map<Long, SeasonInProgress.Logged>> logged(List<Integer> seasons) {
-        return seasons.stream().distinct().collect(java.util.stream.Collectors.toMap(season -> season, log::expected));
-    }
-
     /** @param lastRemovals of the last assessed season, t; null where unknown */
-    List<Between> of(
-            long stockId,
-            int lastAssessed,
-            int season,
-            @Nullable Double lastRemovals,
-            Map<Integer, Map<Long, SeasonInProgress.Logged>> logged) {
+    List<Between> of(long stockId, int lastAssessed, int season, @Nullable Double lastRemovals) {
         return IntStream.range(lastAssessed + 1, season)
-                .mapToObj(each -> between(
-                        stockId,
-                        each,
-                        lastRemovals,
-                        logged.getOrDefault(each, Map.of()).get(stockId)))
+                .mapToObj(each -> between(stockId, each, lastRemovals))
                 .toList();
     }
 
-    private Between between(
-            long stockId, int season, @Nullable Double lastRemovals, SeasonInProgress.@Nullable Logged logged) {
+    private Between between(long stockId, int season, @Nullable Double lastRemovals) {
+        SeasonInProgress.Logged logged = log.expected(stockId, season).orElse(null);
         Optional<LimitView> limit = limits.inForce(stockId, season);
         if (logged != null) {
             double reported = limit.map(LimitView::reportedFraction).orElse(1.0);

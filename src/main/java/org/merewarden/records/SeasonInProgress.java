@@ -2,6 +2,7 @@ package org.merewarden.records;
 
 import java.time.LocalDate;
 import java.util.Map;
+import java.util.Optional;
 
 /**
  * What the log of a season that is not closed yet says. The room that keeps the log implements it, so that advice, which
@@ -19,8 +20,8 @@ public interface SeasonInProgress {
      */
     record Logged(double loggedTonnes, double finalTonnes, double cv, LocalDate recordedUpTo) {}
 
-    /** By stock id; a stock without landings, or whose season has too few days to tell a pace, is absent. */
-    Map<Long, Logged> expected(int season);
+    /** Empty without landings, or where the season has too few days to tell a pace. */
+    Optional<Logged> expected(long stockId, int season);
 
     /** Kilograms logged so far by cooperative id. */
     Map<Long, Double> loggedKilograms(long stockId, int season);

@@ -4,6 +4,7 @@ import java.time.LocalDate;
 import java.time.temporal.ChronoUnit;
 import java.util.HashMap;
 import java.util.Map;
+import java.util.Optional;
 import org.merewarden.records.SeasonInProgress;
 import org.merewarden.web.Seasons;
 import org.springframework.stereotype.Service;
@@ -33,18 +34,18 @@ class LoggedSoFar implements SeasonInProgress {
     }
 
     @Override
-    public Map<Long, Logged> expected(int season) {
+    public Optional<Logged> expected(long stockId, int season) {
+        return uptakes.of(stockId, season).flatMap(uptake -> expected(uptake, season));
+    }
+
+    private Optional<Logged> expected(UptakeView uptake, int season) {
         LocalDate start = seasons.start(season);
         long days = ChronoUnit.DAYS.between(start, seasons.end(season)) + 1;
-        Map<Long, Logged> expected = new HashMap<>();
-        for (UptakeView uptake : uptakes.ofSeason(season)) {
-            LocalDate last = uptake.recordedUpTo();
-            long passed = last == null ? 0 : Math.min(days, ChronoUnit.DAYS.between(start, last) + 1);
-            if (last != null && passed >= StraightLinePace.FEWEST_DAYS && uptake.takenKg() > 0) {
-                expected.put(uptake.stockId(), logged(uptake.takenKg() / 1000, (double) passed / days, last));
-            }
-        }
-        return expected;
+        LocalDate last = uptake.recordedUpTo();
+        long passed = last == null ? 0 : Math.min(days, ChronoUnit.DAYS.between(start, last) + 1);
+        return last == null || passed < StraightLinePace.FEWEST_DAYS || uptake.takenKg() <= 0
+                ? Optional.empty()
+                : Optional.of(logged(uptake.takenKg() / 1000, (double) passed / days, last));
     }
 
     /** @param passed part of the season, in (0, 1] */

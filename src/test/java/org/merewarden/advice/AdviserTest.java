@@ -126,7 +126,31 @@ class AdviserTest {
         assertThat(between.basis()).isEqualTo(Basis.LANDINGS);
         assertThat(between.tonnes()).isCloseTo(4 / passed / 0.8 + 2, within(1e-9));
         assertThat(between.cv()).isCloseTo(0.05 + 0.3 * (1 - passed), within(1e-12));
-        assertThat(log.expected(current).get(stock).recordedUpTo()).isEqualTo(LocalDate.of(current, 3, 31));
+        assertThat(log.expected(stock, current).orElseThrow().recordedUpTo()).isEqualTo(LocalDate.of(current, 3, 31));
+    }
+
+    /** Closed after 4 t: no more is expected, and what was taken before the closure is not paid back. */
+    @Test
+    void aClosedSeasonEndsWithWhatWasTaken() {
+        assessed();
+        long limit = region.limit(stock, current, 0);
+        jdbc.sql("update catch_limit set purpose = 'closure', effective_at = ? where id = ?")
+                .params(OffsetDateTime.now(), limit)
+                .update();
+        landed(LocalDate.of(current, 3, 31), 4000);
+        AdviceWorking working = adviser.work(stock, current + 1).orElseThrow();
+        assertThat(working.between().get(0).tonnes()).isCloseTo(4, within(1e-9));
+        assertThat(working.earlier().limitTonnes()).isZero();
+        assertThat(working.earlier().removalsTonnes()).isNaN();
+        assertThat(working.recommendation().after(Recommendation.Rule.LAST_SEASON))
+                .isEqualTo(working.recommendation().after(Recommendation.Rule.RISK));
+    }
+
+    @Test
+    void aSeasonFarAheadIsNotAdvised() {
+        assessed();
+        assertThat(adviser.work(stock, current + 10)).isPresent();
+        assertThat(adviser.work(stock, current + 11)).isEmpty();
     }
 
     @Test
@@ -214,7 +238,7 @@ class AdviserTest {
 
     @Test
     void seasonsWithoutLandingsAreAbsentFromTheLog() {
-        assertThat(log.expected(current)).doesNotContainKey(stock);
+        assertThat(log.expected(stock, current)).isEmpty();
         assertThat(log.loggedKilograms(stock, current)).isEmpty();
     }
 }
