@@ -30,7 +30,12 @@ record AdviceWorking(
 
     /** What the removals of a season between rest on. */
     enum Basis {
+        /** The season is over: what is logged. */
+        LOGGED,
+        /** Where the landings so far lead. */
         LANDINGS,
+        /** Closed before its end: what was logged until then. */
+        CLOSED,
         LIMIT,
         LAST_REMOVALS,
         NOTHING

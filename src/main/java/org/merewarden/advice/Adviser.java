@@ -88,15 +88,18 @@ class Adviser {
     /** By any version of the policy. */
     Optional<AdviceWorking> work(long stockId, int season, Policy policy, int policyNumber) {
         Optional<AssessmentView> latest = assessments.latest(stockId);
-        if (latest.isEmpty()
-                || season <= latest.get().lastYear()
-                || season > latest.get().lastYear() + 1 + MOST_BETWEEN) {
+        if (latest.isEmpty() || season <= latest.get().lastYear() || tooFar(latest.get(), season)) {
             return Optional.empty();
         }
         Posterior posterior = assessments.posterior(latest.get().id());
         return posterior.draws() == 0
                 ? Optional.empty()
                 : Optional.of(work(latest.get(), posterior, season, policy, policyNumber));
+    }
+
+    /** Whether too many seasons stand between the assessment and the one to be advised. */
+    static boolean tooFar(AssessmentView assessment, int season) {
+        return season > assessment.lastYear() + 1 + MOST_BETWEEN;
     }
 
     private AdviceWorking work(
@@ -139,7 +142,7 @@ class Adviser {
             return assessments.evidence(assessment.id()).removals(season).orElse(Double.NaN);
         }
         return notAssessed.stream()
-                .filter(b -> b.season() == season && b.basis() == Basis.LANDINGS)
+                .filter(b -> b.season() == season && (b.basis() == Basis.LANDINGS || b.basis() == Basis.LOGGED))
                 .mapToDouble(Between::tonnes)
                 .findFirst()
                 .orElse(Double.NaN);

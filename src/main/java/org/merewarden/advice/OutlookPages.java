@@ -81,7 +81,7 @@ class OutlookPages {
     /** Where the rule has nothing to work on: what is missing, in a sentence. */
     private OutlookPage nothing(StockView stock, int season, WhatIf ask) {
         Optional<AssessmentView> latest = assessments.latest(stock.id());
-        String key = latest.isEmpty() ? "unassessed" : season <= latest.get().lastYear() ? "past" : "no-draws";
+        String key = latest.map(a -> why(a, season)).orElse("unassessed");
         return new OutlookPage(
                 season,
                 0,
@@ -102,6 +102,13 @@ class OutlookPages {
                 null,
                 typed(ask.ownTonnes()),
                 typed(100 * ask.halfGrowth()));
+    }
+
+    private static String why(AssessmentView latest, int season) {
+        if (season <= latest.lastYear()) {
+            return "past";
+        }
+        return Adviser.tooFar(latest, season) ? "old" : "no-draws";
     }
 
     private static String typed(@Nullable Double value) {

@@ -19,6 +19,9 @@ class SeasonsBetween {
     /** Of removals that are not logged: the spread that removals without a stated one have in an assessment. */
     private static final double USUAL_CV = 0.2;
 
+    /** Of what is logged of a season that is closed or over. */
+    private static final double LATE_SLIPS = 0.05;
+
     private final SeasonInProgress log;
     private final Limits limits;
 
@@ -35,14 +38,18 @@ class SeasonsBetween {
     }
 
     private Between between(long stockId, int season, @Nullable Double lastRemovals) {
-        SeasonInProgress.Logged logged = log.expected(stockId, season).orElse(null);
+        Optional<SeasonInProgress.Logged> logged = log.logged(stockId, season);
         Optional<LimitView> limit = limits.inForce(stockId, season);
-        if (logged != null) {
-            double reported = limit.map(LimitView::reportedFraction).orElse(1.0);
-            double setAsides = limit.map(LimitView::setAsidesTonnes).orElse(0.0);
-            boolean closed = limit.filter(LimitView::closure).isPresent();
-            double commercial = closed ? logged.loggedTonnes() : logged.finalTonnes();
-            return new Between(season, commercial / reported + setAsides, logged.cv(), Basis.LANDINGS);
+        if (limit.filter(LimitView::closure).isPresent()) {
+            return closed(season, logged, limits.beforeClosure(stockId, season));
+        }
+        if (logged.isPresent() && logged.get().paced()) {
+            Basis basis = logged.get().over() ? Basis.LOGGED : Basis.LANDINGS;
+            return new Between(
+                    season,
+                    removals(logged.get().finalTonnes(), limit),
+                    logged.get().cv(),
+                    basis);
         }
         Double allowed = limit.map(LimitView::amountTonnes).orElse(null);
         if (allowed != null) {
@@ -51,5 +58,17 @@ class SeasonsBetween {
         return lastRemovals == null
                 ? new Between(season, 0, 0, Basis.NOTHING)
                 : new Between(season, lastRemovals, USUAL_CV, Basis.LAST_REMOVALS);
+    }
+
+    /** Nothing more is taken; what was, was taken under the limit that was closed. */
+    private static Between closed(int season, Optional<SeasonInProgress.Logged> logged, Optional<LimitView> before) {
+        double commercial = logged.map(SeasonInProgress.Logged::loggedTonnes).orElse(0.0);
+        return new Between(season, removals(commercial, before), LATE_SLIPS, Basis.CLOSED);
+    }
+
+    /** Total removals behind commercial landings as logged, t. */
+    private static double removals(double loggedTonnes, Optional<LimitView> limit) {
+        return loggedTonnes / limit.map(LimitView::reportedFraction).orElse(1.0)
+                + limit.map(LimitView::setAsidesTonnes).orElse(0.0);
     }
 }

@@ -5,7 +5,7 @@ import java.util.Map;
 import java.util.Optional;
 
 /**
- * What the log of a season that is not closed yet says. The room that keeps the log implements it, so that advice, which
+ * What the log of a season that is not assessed yet says. The room that keeps the log implements it, so that advice, which
  * stands before that room, can read it; asked anew each time, it is never out of date.
  */
 public interface SeasonInProgress {
@@ -13,15 +13,20 @@ public interface SeasonInProgress {
     /**
      * Commercial landings that count against the limit, live weight.
      *
-     * @param loggedTonnes so far, t
-     * @param finalTonnes expected at the season's end, t, >= loggedTonnes
+     * @param loggedTonnes so far, t, > 0
+     * @param finalTonnes expected at the season's end, t, >= loggedTonnes; NaN where too few days have passed to tell a pace
      * @param cv of finalTonnes, >= 0
+     * @param over whether the season's last day has passed
      * @param recordedUpTo day of the last record
      */
-    record Logged(double loggedTonnes, double finalTonnes, double cv, LocalDate recordedUpTo) {}
+    record Logged(double loggedTonnes, double finalTonnes, double cv, boolean over, LocalDate recordedUpTo) {
+        public boolean paced() {
+            return Double.isFinite(finalTonnes);
+        }
+    }
 
-    /** Empty without landings, or where the season has too few days to tell a pace. */
-    Optional<Logged> expected(long stockId, int season);
+    /** Empty without landings. */
+    Optional<Logged> logged(long stockId, int season);
 
     /** Kilograms logged so far by cooperative id. */
     Map<Long, Double> loggedKilograms(long stockId, int season);

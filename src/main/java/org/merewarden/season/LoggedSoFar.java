@@ -3,62 +3,90 @@ package org.merewarden.season;
 import java.time.LocalDate;
 import java.time.temporal.ChronoUnit;
 import java.util.HashMap;
+import java.util.List;
 import java.util.Map;
 import java.util.Optional;
+import org.jspecify.annotations.Nullable;
 import org.merewarden.records.SeasonInProgress;
 import org.merewarden.web.Seasons;
 import org.springframework.stereotype.Service;
 
 /**
- * The final catch of a season in progress, if landings go on at the average so far:
+ * The final catch of a season, if every cooperative goes on landing at its average so far:
  *
  * <pre>
- *   final = taken · days of the season / days up to the last record      cv = 0.05 + 0.3 · part of the season left
+ *   final = Σ taken · days of the season / days up to the cooperative's last record
+ *   cv    = 0.05 + 0.3 · part of the season left after the latest record
  * </pre>
  *
- * <p>The spread is our judgement. It knows no season's pattern; see {@link StraightLinePace}.
+ * <p>Each by its own days, for one that went silent in spring says nothing of the others' pace. Fewer than {@value
+ * StraightLinePace#FEWEST_DAYS} days count as that many; where nobody's records reach so far, there is no pace. A season
+ * that is over ends with what is logged, but for late slips. The spread is our judgement; it knows no season's pattern.
  */
 @Service
 class LoggedSoFar implements SeasonInProgress {
     private static final double LATE_SLIPS = 0.05;
     private static final double REST_OF_SEASON = 0.3;
 
-    private final Uptakes uptakes;
     private final Takings takings;
+    private final Completeness completeness;
     private final Seasons seasons;
 
-    LoggedSoFar(Uptakes uptakes, Takings takings, Seasons seasons) {
-        this.uptakes = uptakes;
+    LoggedSoFar(Takings takings, Completeness completeness, Seasons seasons) {
         this.takings = takings;
+        this.completeness = completeness;
         this.seasons = seasons;
     }
 
     @Override
-    public Optional<Logged> expected(long stockId, int season) {
-        return uptakes.of(stockId, season).flatMap(uptake -> expected(uptake, season));
+    public Optional<Logged> logged(long stockId, int season) {
+        List<Takings.ByCooperative> taken = takings.byCooperative(stockId, season).stream()
+                .filter(t -> t.takenKg() > 0)
+                .toList();
+        return taken.isEmpty() ? Optional.empty() : Optional.of(logged(taken, season));
     }
 
-    private Optional<Logged> expected(UptakeView uptake, int season) {
+    private Logged logged(List<Takings.ByCooperative> taken, int season) {
         LocalDate start = seasons.start(season);
-        long days = ChronoUnit.DAYS.between(start, seasons.end(season)) + 1;
-        LocalDate last = uptake.recordedUpTo();
-        long passed = last == null ? 0 : Math.min(days, ChronoUnit.DAYS.between(start, last) + 1);
-        return last == null || passed < StraightLinePace.FEWEST_DAYS || uptake.takenKg() <= 0
-                ? Optional.empty()
-                : Optional.of(logged(uptake.takenKg() / 1000, (double) passed / days, last));
+        long days = days(start, seasons.end(season));
+        Completeness.Records records = completeness.of(season);
+        double tonnes = 0;
+        double extrapolated = 0;
+        LocalDate last = start;
+        for (Takings.ByCooperative each : taken) {
+            LocalDate end = end(each, records);
+            long passed = Math.min(days, Math.max(StraightLinePace.FEWEST_DAYS, days(start, end)));
+            tonnes += each.takenKg() / 1000;
+            extrapolated += each.takenKg() / 1000 * days / passed;
+            last = end.isAfter(last) ? end : last;
+        }
+        if (seasons.end(season).isBefore(seasons.today())) {
+            return new Logged(tonnes, tonnes, LATE_SLIPS, true, last);
+        }
+        long passed = Math.min(days, days(start, last));
+        double cv = LATE_SLIPS + REST_OF_SEASON * (1 - (double) passed / days);
+        return new Logged(tonnes, passed < StraightLinePace.FEWEST_DAYS ? Double.NaN : extrapolated, cv, false, last);
     }
 
-    /** @param passed part of the season, in (0, 1] */
-    static Logged logged(double tonnes, double passed, LocalDate last) {
-        return new Logged(tonnes, tonnes / passed, LATE_SLIPS + REST_OF_SEASON * (1 - passed), last);
+    /** What the cooperative stated, or its last landing where that is later or it stated nothing. */
+    private static LocalDate end(Takings.ByCooperative taken, Completeness.Records records) {
+        Long cooperative = taken.cooperativeId();
+        @Nullable
+        LocalDate stated = cooperative == null ? null : records.end(cooperative).orElse(null);
+        return stated == null || taken.lastLanding().isAfter(stated) ? taken.lastLanding() : stated;
+    }
+
+    /** Both counted. */
+    private static long days(LocalDate first, LocalDate last) {
+        return ChronoUnit.DAYS.between(first, last) + 1;
     }
 
     @Override
     public Map<Long, Double> loggedKilograms(long stockId, int season) {
         Map<Long, Double> kilograms = new HashMap<>();
-        for (Takings.ByCooperative taken : takings.byCooperative(season)) {
+        for (Takings.ByCooperative taken : takings.byCooperative(stockId, season)) {
             Long cooperative = taken.cooperativeId();
-            if (taken.stockId() == stockId && cooperative != null) {
+            if (cooperative != null) {
                 kilograms.put(cooperative, taken.takenKg());
             }
         }

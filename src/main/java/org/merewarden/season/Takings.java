@@ -19,10 +19,23 @@ class Takings {
     record ByCooperative(long stockId, @Nullable Long cooperativeId, double takenKg, LocalDate lastLanding) {}
 
     List<ByCooperative> byCooperative(int season) {
-        return jdbc.sql("select l.stock_id, l.cooperative_id, sum(l.live_weight_kg), max(l.landed_on) from landing l"
-                        + " where l.season_year = :season and l.stock_id is not null and " + StoredUptakes.TAKEN
-                        + " group by l.stock_id, l.cooperative_id")
+        return byCooperative(jdbc.sql(byCooperative("")).param("season", season));
+    }
+
+    List<ByCooperative> byCooperative(long stockId, int season) {
+        return byCooperative(jdbc.sql(byCooperative(" and l.stock_id = :stock"))
                 .param("season", season)
+                .param("stock", stockId));
+    }
+
+    private static String byCooperative(String condition) {
+        return "select l.stock_id, l.cooperative_id, sum(l.live_weight_kg), max(l.landed_on) from landing l"
+                + " where l.season_year = :season and l.stock_id is not null and " + StoredUptakes.TAKEN + condition
+                + " group by l.stock_id, l.cooperative_id";
+    }
+
+    private static List<ByCooperative> byCooperative(JdbcClient.StatementSpec statement) {
+        return statement
                 .query((row, n) -> new ByCooperative(
                         row.getLong(1),
                         row.getObject(2, Long.class),

@@ -126,7 +126,7 @@ class AdviserTest {
         assertThat(between.basis()).isEqualTo(Basis.LANDINGS);
         assertThat(between.tonnes()).isCloseTo(4 / passed / 0.8 + 2, within(1e-9));
         assertThat(between.cv()).isCloseTo(0.05 + 0.3 * (1 - passed), within(1e-12));
-        assertThat(log.expected(stock, current).orElseThrow().recordedUpTo()).isEqualTo(LocalDate.of(current, 3, 31));
+        assertThat(log.logged(stock, current).orElseThrow().recordedUpTo()).isEqualTo(LocalDate.of(current, 3, 31));
     }
 
     /** Closed after 4 t: no more is expected, and what was taken before the closure is not paid back. */
@@ -139,11 +139,35 @@ class AdviserTest {
                 .update();
         landed(LocalDate.of(current, 3, 31), 4000);
         AdviceWorking working = adviser.work(stock, current + 1).orElseThrow();
-        assertThat(working.between().get(0).tonnes()).isCloseTo(4, within(1e-9));
+        assertThat(working.between()).containsExactly(new Between(current, 4, 0.05, Basis.CLOSED));
         assertThat(working.earlier().limitTonnes()).isZero();
         assertThat(working.earlier().removalsTonnes()).isNaN();
         assertThat(working.recommendation().after(Recommendation.Rule.LAST_SEASON))
                 .isEqualTo(working.recommendation().after(Recommendation.Rule.RISK));
+    }
+
+    /** Closed in the second week: too few days for a pace, yet nothing that was taken is forgotten. */
+    @Test
+    void anEarlyClosureRemembersWhatWasTaken() {
+        assessed();
+        long before = region.limit(stock, current, 16);
+        jdbc.sql("update catch_limit set reported_fraction = 0.8, set_aside_angling_t = 2 where id = ?")
+                .param(before)
+                .update();
+        jdbc.sql("delete from limit_in_force where limit_id = ?").param(before).update();
+        jdbc.sql("insert into limit_decision (limit_id, act, decided_at, decided_by, effective_at, reason)"
+                        + " values (?, 'SUPERSEDED', ?, 'test', ?, 'closed')")
+                .params(before, OffsetDateTime.now(), OffsetDateTime.now())
+                .update();
+        long closure = region.limit(stock, current, 0);
+        jdbc.sql("update catch_limit set purpose = 'closure', effective_at = ? where id = ?")
+                .params(OffsetDateTime.now(), closure)
+                .update();
+        landed(LocalDate.of(current, 1, 10), 8000);
+        Between between =
+                adviser.work(stock, current + 1).orElseThrow().between().get(0);
+        // 8 t logged of 0.8, and 2 t kept for anglers
+        assertThat(between).isEqualTo(new Between(current, 12, 0.05, Basis.CLOSED));
     }
 
     @Test
@@ -238,7 +262,7 @@ class AdviserTest {
 
     @Test
     void seasonsWithoutLandingsAreAbsentFromTheLog() {
-        assertThat(log.expected(stock, current)).isEmpty();
+        assertThat(log.logged(stock, current)).isEmpty();
         assertThat(log.loggedKilograms(stock, current)).isEmpty();
     }
 }

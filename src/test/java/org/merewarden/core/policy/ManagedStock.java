@@ -122,7 +122,10 @@ final class ManagedStock {
         Outlook outlook = new Outlook(
                 posterior, List.of(), policy.horizonYears(), policy.limitFraction(), 0, evidence.seed() + year);
         return new LimitRule(policy)
-                .recommend(outlook, new EarlierSeason(before, Double.NaN))
+                .recommend(
+                        outlook,
+                        new EarlierSeason(
+                                before, catches.get(catches.size() - 1).removalsTonnes()))
                 .limitTonnes();
     }
 
