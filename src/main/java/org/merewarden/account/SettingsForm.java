@@ -23,12 +23,20 @@ class SettingsForm {
     @Pattern(regexp = "yes|no", message = "{settings.own.wrong}")
     private String ownProposals = "";
 
+    @Size(max = 1000, message = "{settings.notice.long}")
+    private String legalBasis = "";
+
+    @Size(max = 1000, message = "{settings.notice.long}")
+    private String objection = "";
+
     static SettingsForm of(Map<String, String> settings) {
         SettingsForm form = new SettingsForm();
         form.officeName = settings.getOrDefault(OfficeSettings.OFFICE_NAME, "");
         form.timeZone = settings.getOrDefault(OfficeSettings.TIME_ZONE, "");
         form.firstMonth = settings.getOrDefault(OfficeSettings.FIRST_MONTH, "");
         form.ownProposals = settings.getOrDefault(OfficeSettings.OWN_PROPOSALS, "");
+        form.legalBasis = settings.getOrDefault(OfficeSettings.LEGAL_BASIS, "");
+        form.objection = settings.getOrDefault(OfficeSettings.OBJECTION, "");
         return form;
     }
 
@@ -38,6 +46,8 @@ class SettingsForm {
         settings.put(OfficeSettings.TIME_ZONE, timeZone);
         settings.put(OfficeSettings.FIRST_MONTH, firstMonth);
         settings.put(OfficeSettings.OWN_PROPOSALS, ownProposals);
+        settings.put(OfficeSettings.LEGAL_BASIS, legalBasis);
+        settings.put(OfficeSettings.OBJECTION, objection);
         return settings;
     }
 
@@ -78,5 +88,21 @@ class SettingsForm {
 
     public void setOwnProposals(String ownProposals) {
         this.ownProposals = ownProposals;
+    }
+
+    public String getLegalBasis() {
+        return legalBasis;
+    }
+
+    public void setLegalBasis(String legalBasis) {
+        this.legalBasis = legalBasis.strip();
+    }
+
+    public String getObjection() {
+        return objection;
+    }
+
+    public void setObjection(String objection) {
+        this.objection = objection.strip();
     }
 }

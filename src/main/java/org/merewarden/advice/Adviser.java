@@ -22,6 +22,8 @@ class Adviser {
     /** The work grows with the seasons between, and so does what is not known of them. */
     private static final int MOST_BETWEEN = 10;
 
+    private static final int LAST_QUARTER_MONTHS = 3;
+
     private final Assessments assessments;
     private final Limits limits;
     private final SeasonsBetween between;
@@ -152,9 +154,13 @@ class Adviser {
         return Long.parseLong(assessment.evidenceHash().substring(0, 15), 16) + season;
     }
 
-    /** The season that is to be advised when none is named: the current one, or the next where it has its limit. */
+    /**
+     * The season that is to be advised when none is named: the current one, or the next where the current one has its limit
+     * or is in its last quarter.
+     */
     int season(long stockId) {
         int current = seasons.current();
-        return limits.inForce(stockId, current).isPresent() ? current + 1 : current;
+        boolean late = seasons.today().isAfter(seasons.end(current).minusMonths(LAST_QUARTER_MONTHS));
+        return late || limits.inForce(stockId, current).isPresent() ? current + 1 : current;
     }
 }

@@ -18,8 +18,24 @@ public class OfficeSettings {
     /** yes or no: whether an approver may issue a limit that they proposed themselves. */
     public static final String OWN_PROPOSALS = "own_proposals";
 
-    static final Map<String, String> DEFAULTS =
-            Map.of(OFFICE_NAME, "Inland Fisheries Office", TIME_ZONE, "UTC", FIRST_MONTH, "1", OWN_PROPOSALS, "no");
+    /** What a limit rests on in law, and where and by when to object to it: filled in where no earlier limit says so. */
+    public static final String LEGAL_BASIS = "legal_basis";
+
+    public static final String OBJECTION = "objection";
+
+    static final Map<String, String> DEFAULTS = Map.of(
+            OFFICE_NAME,
+            "Inland Fisheries Office",
+            TIME_ZONE,
+            "UTC",
+            FIRST_MONTH,
+            "1",
+            OWN_PROPOSALS,
+            "no",
+            LEGAL_BASIS,
+            "",
+            OBJECTION,
+            "");
 
     private final JdbcClient jdbc;
     private final Clock clock;

@@ -48,7 +48,11 @@ class SettingsPageTest {
                         "first_month",
                         "4",
                         "own_proposals",
-                        "no"));
+                        "no",
+                        "legal_basis",
+                        "",
+                        "objection",
+                        ""));
         assertThat(jdbc.sql("select before_text || ' -> ' || after_text from activity_entry where action = ?"
                                 + " order by id desc limit 3")
                         .param("changed setting")
