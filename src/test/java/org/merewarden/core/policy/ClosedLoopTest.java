@@ -15,8 +15,8 @@ import org.merewarden.core.policy.ManagedStock.Knowledge;
  * above B lim the part is counted in which B &lt; B lim at some season's end. It stands beside the tolerance.
  *
  * <p>Twenty stocks of each kind, or as many as the system property {@code trial.stocks} says; the crossings may not pass the
- * tolerance. Of 200 stocks 1.2 % of the windows crossed with thin evidence; if the windows of one stock were wholly
- * dependent, twenty stocks of that rate would pass the tolerance with probability 0.002 (binomial). Seeds are fixed. In the
+ * tolerance. Of 200 stocks 1.0 % of the windows crossed with thin evidence; if the windows of one stock were wholly
+ * dependent, twenty stocks of that rate would pass the tolerance with probability 0.001 (binomial). Seeds are fixed. In the
  * group of the long calibrations.
  */
 @Tag("calibration")
