@@ -22,6 +22,7 @@ class Decisions {
     private static final String OWN = " (own proposal, as the office's settings allow)";
 
     private final LimitWriter writer;
+    private final AllocationWriter allocations;
     private final LimitHistory history;
     private final StandingKeeper standings;
     private final Assessments assessments;
@@ -32,6 +33,7 @@ class Decisions {
 
     Decisions(
             LimitWriter writer,
+            AllocationWriter allocations,
             LimitHistory history,
             StandingKeeper standings,
             Assessments assessments,
@@ -40,6 +42,7 @@ class Decisions {
             ActivityLog activity,
             Clock clock) {
         this.writer = writer;
+        this.allocations = allocations;
         this.history = history;
         this.standings = standings;
         this.assessments = assessments;
@@ -83,11 +86,10 @@ class Decisions {
     }
 
     private boolean hold(long id, NewLimit limit, String reason) {
-        writer.lockStock(limit.stockId());
         Instant now = clock.instant();
         Instant from = limit.holdsFrom(now);
         writer.decide(id, LimitWriter.ISSUED, Who.name(), from, reason);
-        writer.allocate(id, limit);
+        allocations.byRights(id, limit);
         if (from.isAfter(now)) {
             writer.putPending(id, from);
             return false;

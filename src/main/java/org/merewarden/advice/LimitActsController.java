@@ -5,6 +5,8 @@ import org.merewarden.waterbody.Register;
 import org.merewarden.waterbody.StockView;
 import org.merewarden.web.Texts;
 import org.springframework.dao.DuplicateKeyException;
+import org.springframework.dao.PessimisticLockingFailureException;
+import org.springframework.dao.QueryTimeoutException;
 import org.springframework.stereotype.Controller;
 import org.springframework.web.bind.annotation.PathVariable;
 import org.springframework.web.bind.annotation.PostMapping;
@@ -83,6 +85,8 @@ class LimitActsController {
             flash.addFlashAttribute("done", texts.of(act.get(), Long.toString(id)));
         } catch (NotAllowed e) {
             flash.addFlashAttribute("refused", texts.of(String.valueOf(e.getMessage()), Long.toString(id)));
+        } catch (PessimisticLockingFailureException | QueryTimeoutException e) {
+            flash.addFlashAttribute("refused", texts.of("advice.busy"));
         } catch (DuplicateKeyException e) {
             flash.addFlashAttribute("refused", texts.of("advice.decided", Long.toString(id)));
         }
