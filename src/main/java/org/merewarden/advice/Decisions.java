@@ -16,10 +16,8 @@ import org.springframework.transaction.annotation.Transactional;
 /** Issuing, refusing and withdrawing limits. Proposer and issuer differ unless the office allows it. */
 @Service
 class Decisions {
-    /** What the store holds of a reason, less the words that are added to it. */
+    /** In the store. */
     static final int LONGEST_REASON = 4000;
-
-    private static final String OWN = " (own proposal, as the office's settings allow)";
 
     private final LimitWriter writer;
     private final AllocationWriter allocations;
@@ -71,24 +69,25 @@ class Decisions {
         if (remark == null && doubt.isPresent()) {
             throw new NotAllowed("advice.issue." + doubt.get());
         }
-        String reason = (remark == null ? file.first().reason() : remark)
-                + doubt.map(d -> " (assessment " + d + ")").orElse("")
-                + (own ? OWN : "");
+        String reason = remark == null ? file.first().reason() : remark;
+        Beside beside = new Beside(own, doubt.orElse(null), null);
         String before = subjects.standing(limit);
-        boolean now = hold(id, limit, reason);
+        boolean now = hold(id, limit, reason, beside);
         activity.record(
                 "issued limit",
                 subjects.subject(id, limit),
                 before,
                 subjects.describe(limit) + "; "
-                        + (now ? "" : "from " + limit.terms().effectiveAt() + "; ") + reason);
+                        + (now ? "" : "from " + limit.terms().effectiveAt() + "; ") + reason
+                        + doubt.map(d -> " (assessment " + d + ")").orElse("")
+                        + (own ? " (own proposal)" : ""));
         return now;
     }
 
-    private boolean hold(long id, NewLimit limit, String reason) {
+    private boolean hold(long id, NewLimit limit, String reason, Beside beside) {
         Instant now = clock.instant();
         Instant from = limit.holdsFrom(now);
-        writer.decide(id, LimitWriter.ISSUED, Who.name(), from, reason);
+        writer.decide(id, LimitWriter.ISSUED, Who.name(), from, reason, beside);
         allocations.byRights(id, limit);
         if (from.isAfter(now)) {
             writer.putPending(id, from);

@@ -21,13 +21,21 @@ class DecisionsView {
     private final Decisions decisions;
     private final LimitStore limits;
     private final Seasons seasons;
+    private final DecisionWords words;
     private final Texts texts;
 
-    DecisionsView(OpenProposals proposals, Decisions decisions, LimitStore limits, Seasons seasons, Texts texts) {
+    DecisionsView(
+            OpenProposals proposals,
+            Decisions decisions,
+            LimitStore limits,
+            Seasons seasons,
+            DecisionWords words,
+            Texts texts) {
         this.proposals = proposals;
         this.decisions = decisions;
         this.limits = limits;
         this.seasons = seasons;
+        this.words = words;
         this.texts = texts;
     }
 
@@ -128,7 +136,7 @@ class DecisionsView {
                 proposals.what(limit),
                 act.when(),
                 act.decidedBy(),
-                act.reason(),
+                words.reason(act),
                 act.act().equals(LimitWriter.ISSUED),
                 act.act().equals(LimitWriter.ISSUED) && inForce.contains(act.limitId()),
                 act.laterEffect() ? texts.of("advice.past.from", Figures.dateTime(act.effectiveAt())) : null);

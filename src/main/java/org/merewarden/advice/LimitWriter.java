@@ -91,9 +91,23 @@ class LimitWriter {
     }
 
     void decide(long limitId, String act, String by, Instant effective, String reason) {
-        jdbc.sql("insert into limit_decision (limit_id, act, decided_at, decided_by, effective_at, reason)"
-                        + " values (?, ?, ?, ?, ?, ?)")
-                .params(limitId, act, now(), by, effective.atOffset(ZoneOffset.UTC), reason)
+        decide(limitId, act, by, effective, reason, Beside.NOTHING);
+    }
+
+    void decide(long limitId, String act, String by, Instant effective, String reason, Beside beside) {
+        jdbc.sql("""
+                        insert into limit_decision (limit_id, act, decided_at, decided_by, effective_at, reason,
+                            own_proposal, doubt, successor_id)
+                        values (:limit, :act, :at, :by, :effective, :reason, :own, :doubt, :successor)""")
+                .param("limit", limitId)
+                .param("act", act)
+                .param("at", now())
+                .param("by", by)
+                .param("effective", effective.atOffset(ZoneOffset.UTC))
+                .param("reason", reason)
+                .param("own", beside.own())
+                .param("doubt", beside.doubt(), Types.VARCHAR)
+                .param("successor", beside.successor(), Types.BIGINT)
                 .update();
     }
 
@@ -112,7 +126,7 @@ class LimitWriter {
                 .query(Long.class)
                 .optional();
         before.ifPresent(old -> {
-            decide(old, SUPERSEDED, by, effective, "superseded by notice " + limitId);
+            decide(old, SUPERSEDED, by, effective, "", Beside.replacedBy(limitId));
             endForce(old);
         });
         jdbc.sql("insert into limit_in_force (stock_id, season_year, limit_id) values (?, ?, ?)")
@@ -145,7 +159,7 @@ class LimitWriter {
                 .query(Long.class)
                 .optional();
         if (later.isPresent()) {
-            decide(limitId, SUPERSEDED, by, clock.instant(), "superseded by notice " + later.get());
+            decide(limitId, SUPERSEDED, by, clock.instant(), "", Beside.replacedBy(later.get()));
         } else {
             putInForce(limitId, limit, by, clock.instant());
             allocations.byRights(limitId, limit);

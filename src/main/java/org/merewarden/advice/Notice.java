@@ -51,7 +51,7 @@ record Notice(
     /** What a cooperative may log. */
     record Part(String cooperative, String share, String amount) {}
 
-    /** @param reason null where it is the notice's own, told above */
+    /** @param reason null where there is none, or it is the notice's own, told above */
     record Act(String act, String at, String by, @Nullable String reason) {}
 
     /** Whether the notice binds nobody: not issued, or no longer in force. */

@@ -24,6 +24,7 @@ class Notices {
     private final LimitStore limits;
     private final Recommendations recommendations;
     private final LimitPapers papers;
+    private final DecisionWords words;
 
     Notices(
             Register register,
@@ -33,7 +34,8 @@ class Notices {
             OfficeSettings settings,
             LimitStore limits,
             Recommendations recommendations,
-            LimitPapers papers) {
+            LimitPapers papers,
+            DecisionWords words) {
         this.register = register;
         this.decisions = decisions;
         this.history = history;
@@ -42,6 +44,7 @@ class Notices {
         this.limits = limits;
         this.recommendations = recommendations;
         this.papers = papers;
+        this.words = words;
     }
 
     Notice notice(long id) {
@@ -50,7 +53,7 @@ class Notices {
         List<LimitHistory.Decision> acts = history.ofLimit(id);
         Optional<LimitHistory.Decision> issued =
                 acts.stream().filter(a -> a.act().equals(LimitWriter.ISSUED)).findFirst();
-        String reason = issued.orElse(acts.get(0)).reason();
+        String reason = words.reason(issued.orElse(acts.get(0)));
         return new Notice(
                 id,
                 settings.get(OfficeSettings.OFFICE_NAME),
@@ -99,8 +102,10 @@ class Notices {
         return kept == null ? null : Figures.decided(kept.limitTonnes());
     }
 
-    private static Notice.Act act(LimitHistory.Decision d, String told) {
-        return new Notice.Act(d.act(), d.when(), d.decidedBy(), d.reason().equals(told) ? null : d.reason());
+    private Notice.Act act(LimitHistory.Decision d, String told) {
+        String reason = words.reason(d);
+        return new Notice.Act(
+                d.act(), d.when(), d.decidedBy(), reason.isEmpty() || reason.equals(told) ? null : reason);
     }
 
     /** Of the assessment that the proposal rested on, whatever was assessed since; papers know none, so the latest. */

@@ -84,14 +84,14 @@ class Proposals {
         if (file.limit().stockId() != limit.stockId()) {
             throw new NotAllowed("advice.draft.gone");
         }
-        writer.decide(draft, LimitWriter.DISCARDED, Who.name(), clock.instant(), "replaced by number " + by);
+        writer.decide(draft, LimitWriter.DISCARDED, Who.name(), clock.instant(), "", Beside.replacedBy(by));
         return "draft " + draft + ": " + subjects.describe(file.limit());
     }
 
     @Transactional
     public void discard(long id) {
         NewLimit limit = draft(id).limit();
-        writer.decide(id, LimitWriter.DISCARDED, Who.name(), clock.instant(), "discarded");
+        writer.decide(id, LimitWriter.DISCARDED, Who.name(), clock.instant(), "");
         activity.record("discarded draft", subjects.subject(id, limit), subjects.describe(limit), null);
     }
 

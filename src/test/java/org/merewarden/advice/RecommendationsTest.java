@@ -137,11 +137,11 @@ class RecommendationsTest {
         assertThat(LimitDesk.said(desk.act(id, "issue", "", APPROVER), "refused"))
                 .contains("no assessment stands behind it");
         desk.act(id, "issue", "A first ceiling.", APPROVER);
-        assertThat(jdbc.sql("select reason from limit_decision where limit_id = ? and act = 'ISSUED'")
+        assertThat(jdbc.sql("select reason || ' ' || doubt from limit_decision where limit_id = ? and act = 'ISSUED'")
                         .param(id)
                         .query(String.class)
                         .single())
-                .isEqualTo("A first ceiling. (assessment missing)");
+                .isEqualTo("A first ceiling. missing");
     }
 
     @Test
@@ -288,10 +288,12 @@ class RecommendationsTest {
         assertThat(LimitDesk.said(desk.act(second, "issue", " ", APPROVER), "refused"))
                 .contains("the assessment behind it did not settle");
         desk.act(second, "issue", "The nets were lost.", APPROVER);
-        assertThat(jdbc.sql("select reason from limit_decision where limit_id = ? and act = 'ISSUED'")
+        assertThat(jdbc.sql("select reason || ' ' || doubt from limit_decision where limit_id = ? and act = 'ISSUED'")
                         .param(second)
                         .query(String.class)
                         .single())
-                .isEqualTo("The nets were lost. (assessment unsettled)");
+                .isEqualTo("The nets were lost. unsettled");
+        assertThat(desk.page("/notices/" + second, BIOLOGIST))
+                .contains("The nets were lost. (the assessment behind it did not settle)");
     }
 }

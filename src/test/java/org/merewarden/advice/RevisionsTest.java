@@ -201,7 +201,7 @@ class RevisionsTest {
 
     @Test
     void anApproverClosesInOneActWhereTheOfficeAllowsIt() throws Exception {
-        issued(desk.fields(2136));
+        long first = issued(desk.fields(2136));
         long proposed = close(closure("2136-06-01", "06:00"), APPROVER);
         assertThat(desk.state(proposed)).isEqualTo("PROPOSED");
         assertThat(LimitDesk.said(desk.act(proposed, "issue", "", APPROVER), "refused"))
@@ -225,7 +225,17 @@ class RevisionsTest {
                         .toList())
                 .containsExactly(0L, 0L);
         assertThat(desk.page("/notices/" + closed, BIOLOGIST)).contains("Closed from 2 Jun 2136, 06:30 (UTC)");
-        assertThat(desk.page("/notices/" + closed, BIOLOGIST)).contains("own proposal");
+        assertThat(desk.page("/notices/" + closed, BIOLOGIST))
+                .contains("Fish die in the north bay. (own proposal, as the office’s settings allow)");
+        // a row from before tells the same in words
+        jdbc.sql("update limit_decision set own_proposal = false, reason = 'Ice. (own proposal, as the office''s"
+                        + " settings allow)' where limit_id = ? and act = 'ISSUED'")
+                .param(closed)
+                .update();
+        assertThat(desk.page("/notices/" + closed, BIOLOGIST))
+                .contains("<dd>Ice. (own proposal, as the office&#39;s settings allow)</dd>");
+        assertThat(desk.page("/notices/" + first, BIOLOGIST)).contains("superseded by notice " + closed);
+        assertThat(desk.page(STOCK + "/advice", BIOLOGIST)).contains("superseded by notice " + closed);
     }
 
     @Test
