@@ -1,5 +1,6 @@
 package org.merewarden.advice;
 
+import java.time.Instant;
 import java.util.List;
 import java.util.Locale;
 import java.util.Objects;
@@ -25,6 +26,7 @@ class Notices {
     private final Recommendations recommendations;
     private final LimitPapers papers;
     private final DecisionWords words;
+    private final ClosureWords closures;
 
     Notices(
             Register register,
@@ -35,7 +37,8 @@ class Notices {
             LimitStore limits,
             Recommendations recommendations,
             LimitPapers papers,
-            DecisionWords words) {
+            DecisionWords words,
+            ClosureWords closures) {
         this.register = register;
         this.decisions = decisions;
         this.history = history;
@@ -45,6 +48,7 @@ class Notices {
         this.recommendations = recommendations;
         this.papers = papers;
         this.words = words;
+        this.closures = closures;
     }
 
     Notice notice(long id) {
@@ -53,6 +57,11 @@ class Notices {
         List<LimitHistory.Decision> acts = history.ofLimit(id);
         Optional<LimitHistory.Decision> issued =
                 acts.stream().filter(a -> a.act().equals(LimitWriter.ISSUED)).findFirst();
+        Instant from = issued.filter(act -> limit.terms().effectiveAt() != null)
+                .map(LimitHistory.Decision::effectiveAt)
+                .orElse(limit.terms().effectiveAt());
+        Optional<ClosureWords.Said> closed =
+                limit.terms().closure() ? Optional.ofNullable(from).map(closures::said) : Optional.empty();
         String reason = words.reason(issued.orElse(acts.get(0)));
         return new Notice(
                 id,
@@ -66,16 +75,15 @@ class Notices {
                 setAsides(limit),
                 Figures.percent(limit.reportedFraction()),
                 AdviceView.toBeLogged(limit),
-                Figures.date(limit.validFrom()) + " – " + Figures.date(limit.validTo()),
-                limit.terms().effectiveAt() == null
-                        ? null
-                        : Figures.dateTime(limit.terms().effectiveAt()),
+                Figures.date(closed.map(ClosureWords.Said::day).orElse(limit.validFrom())) + " – "
+                        + Figures.date(limit.validTo()),
+                from == null ? null : Figures.dateTime(from),
                 limit.terms().reviewBy() == null
                         ? null
                         : Figures.date(limit.terms().reviewBy()),
                 recommended(limit),
                 limit.terms().differenceReason(),
-                limit.measures(),
+                closed.map(ClosureWords.Said::measures).orElse(limit.measures()),
                 limit.legalBasis(),
                 limit.objection(),
                 reason,

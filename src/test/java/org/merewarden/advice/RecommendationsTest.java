@@ -110,6 +110,22 @@ class RecommendationsTest {
     }
 
     @Test
+    void anEffortLimitMayDifferWithoutAReasonAndKeepsOneThatIsGiven() throws Exception {
+        desk.recommend(stock, 10, false, 1);
+        Map<String, String> fields = desk.fields(now + 2);
+        fields.put("kind", "effort");
+        fields.put("unit", "net-nights");
+        long without = desk.propose(STOCK, fields, BIOLOGIST);
+        fields.put("differenceReason", "10 t are what 12.5 net-nights take.");
+        long with = desk.propose(STOCK, fields, BIOLOGIST);
+        assertThat(desk.page("/notices/" + without, BIOLOGIST)).contains("<dd>10 t</dd>");
+        assertThat(desk.page("/notices/" + with, BIOLOGIST))
+                .contains("<dd>10 t (the limit differs: 10 t are what 12.5 net-nights take.)</dd>");
+        assertThat(desk.page(STOCK + "/advice?season=" + (now + 2), BIOLOGIST))
+                .contains("For an effort limit it may stay empty: the recommendation is in tonnes.");
+    }
+
+    @Test
     void aProvisionalCeilingNeedsItsDayOfReview() throws Exception {
         desk.recommend(stock, 12.5, true, 1);
         Map<String, String> fields = desk.fields(now + 3);

@@ -115,6 +115,7 @@ class PostgresTest {
         mvc.perform(post("/stocks/skelder-water/PLN/limits")
                         .param("season", "2026")
                         .param("kind", "catch")
+                        .param("key", java.util.UUID.randomUUID().toString())
                         .param("amount", "5.1")
                         .param("reportedFraction", "1")
                         .param("validFrom", "2026-01-01")
