@@ -105,9 +105,13 @@ class Decisions {
         activity.record("refused limit", subjects.subject(id, limit), "proposed: " + subjects.describe(limit), reason);
     }
 
-    /** Takes an issued limit out of force, or keeps it from coming into force. */
+    /**
+     * Takes an issued limit out of force, or keeps it from coming into force.
+     *
+     * @return whether it was in force, so that its season is left without a limit
+     */
     @Transactional
-    public void withdraw(long id, String reason) {
+    public boolean withdraw(long id, String reason) {
         checkLength(reason);
         LimitFile file = locked(id);
         if (!file.standing()) {
@@ -123,6 +127,7 @@ class Decisions {
                 subjects.subject(id, limit),
                 (waited ? "pending: " : "in force: ") + subjects.describe(limit),
                 reason);
+        return !waited;
     }
 
     /** Whether an approver may issue what they proposed themselves. */

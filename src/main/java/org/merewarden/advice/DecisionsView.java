@@ -6,6 +6,7 @@ import java.util.List;
 import java.util.Map;
 import java.util.Objects;
 import java.util.Set;
+import java.util.function.Function;
 import java.util.stream.Stream;
 import org.jspecify.annotations.Nullable;
 import org.merewarden.web.Figures;
@@ -42,8 +43,13 @@ class DecisionsView {
     /** Something written down that is not in force: a draft, or a limit that waits for its moment. */
     record Waiting(String id, String what) {}
 
-    /** A limit that is issued and holds or will hold. */
-    record Standing(String id, String season, String what) {}
+    /**
+     * A limit that is issued and holds or will hold.
+     *
+     * @param left what its withdrawal would leave; null where another limit stays in force
+     */
+    record Standing(
+            String id, String season, String what, @Nullable String left) {}
 
     /** A past act. */
     record Past(
@@ -82,17 +88,36 @@ class DecisionsView {
                         .map(this::pending)
                         .toList(),
                 files.stream().filter(LimitFile::draft).map(this::draft).toList(),
-                standing(files.stream()
-                        .filter(f -> inForce.contains(f.id()) && f.limit().season() >= seasons.current())),
-                standing(files.stream().filter(LimitFile::standing)),
+                standing(
+                        files.stream()
+                                .filter(f ->
+                                        inForce.contains(f.id()) && f.limit().season() >= seasons.current()),
+                        f -> null),
+                standing(
+                        files.stream().filter(LimitFile::standing),
+                        f -> inForce.contains(f.id()) ? left(f, files) : null),
                 past(files, inForce),
                 Who.has("APPROVER") && decisions.ownProposals());
     }
 
-    private List<Standing> standing(Stream<LimitFile> files) {
+    private String left(LimitFile file, List<LimitFile> files) {
+        String season = AdviceView.season(file.limit().season());
+        return files.stream()
+                .filter(f -> f.state().equals(LimitWriter.SUPERSEDED)
+                        && Objects.equals(f.latest().beside().successor(), file.id()))
+                .findFirst()
+                .map(f -> texts.of(
+                        "advice.withdraw.left.before", season, Long.toString(f.id()), proposals.what(f.limit())))
+                .orElseGet(() -> texts.of("advice.withdraw.left", season));
+    }
+
+    private List<Standing> standing(Stream<LimitFile> files, Function<LimitFile, @Nullable String> left) {
         return files.sorted(Comparator.comparing((LimitFile f) -> -f.limit().season()))
                 .map(f -> new Standing(
-                        Long.toString(f.id()), AdviceView.season(f.limit().season()), proposals.what(f.limit())))
+                        Long.toString(f.id()),
+                        AdviceView.season(f.limit().season()),
+                        proposals.what(f.limit()),
+                        left.apply(f)))
                 .toList();
     }
 

@@ -19,12 +19,15 @@ class LimitActsController {
     private final Register register;
     private final Decisions decisions;
     private final Proposals proposals;
+    private final Recommendations recommendations;
     private final Texts texts;
 
-    LimitActsController(Register register, Decisions decisions, Proposals proposals, Texts texts) {
+    LimitActsController(
+            Register register, Decisions decisions, Proposals proposals, Recommendations recommendations, Texts texts) {
         this.register = register;
         this.decisions = decisions;
         this.proposals = proposals;
+        this.recommendations = recommendations;
         this.texts = texts;
     }
 
@@ -51,13 +54,10 @@ class LimitActsController {
 
     @PostMapping("/limits/{id}/withdraw")
     String withdraw(@PathVariable long id, @RequestParam(defaultValue = "") String reason, RedirectAttributes flash) {
-        return act(
-                id,
-                () -> {
-                    decisions.withdraw(id, needed(reason));
-                    return "advice.withdrawn";
-                },
-                flash);
+        String page = act(
+                id, () -> decisions.withdraw(id, needed(reason)) ? "advice.withdrawn.none" : "advice.withdrawn", flash);
+        int season = decisions.find(id).season();
+        return recommendations.advisable(season) ? page + "?season=" + season : page;
     }
 
     @PostMapping("/limits/{id}/discard")
@@ -80,9 +80,10 @@ class LimitActsController {
 
     /** @param act does it and names the sentence that says so */
     private String act(long id, Supplier<String> act, RedirectAttributes flash) {
-        StockView stock = register.stock(decisions.find(id).stockId()).orElseThrow();
+        NewLimit limit = decisions.find(id);
+        StockView stock = register.stock(limit.stockId()).orElseThrow();
         try {
-            flash.addFlashAttribute("done", texts.of(act.get(), Long.toString(id)));
+            flash.addFlashAttribute("done", texts.of(act.get(), Long.toString(id), AdviceView.season(limit.season())));
         } catch (NotAllowed e) {
             flash.addFlashAttribute("refused", texts.of(String.valueOf(e.getMessage()), Long.toString(id)));
         } catch (PessimisticLockingFailureException | QueryTimeoutException e) {

@@ -126,6 +126,29 @@ class RecommendationsTest {
     }
 
     @Test
+    void aPolicyThatChangedSinceIsSaidBesideTheProposal() throws Exception {
+        desk.recommend(stock, 12.5, false, 1);
+        long same = desk.propose(STOCK, desk.fields(now + 1), BIOLOGIST);
+        assertThat(desk.page(STOCK + "/advice", APPROVER)).doesNotContain("The policy has changed since");
+        jdbc.sql("insert into policy_version select 902, limit_fraction, ramp_line, ramp_target_fraction,"
+                        + " ramp_low_fraction, ramp_high_fraction, catch_quantile, horizon_years, tolerance,"
+                        + " steadiness_cap, carry_over, payback, 0, 0, 0, 0, rounding_share, rounding_least_kg,"
+                        + " watch_from, strained_from, critical_from, pooled, interval_probability, created_at,"
+                        + " created_by from policy_version where number = 1")
+                .update();
+        desk.recommend(stock, 12.5, false, 902);
+        long other = desk.propose(STOCK, desk.fields(now + 1), BIOLOGIST);
+        String page = desk.page(STOCK + "/advice", APPROVER);
+        assertThat(page)
+                .containsOnlyOnce("The policy has changed since: the recommendation was made by version 902;"
+                        + " version 1 is in force.");
+        // a caution only
+        desk.act(other, "issue", "", APPROVER);
+        assertThat(desk.state(other)).isEqualTo("ISSUED");
+        desk.act(same, "refuse", "Decided.", APPROVER);
+    }
+
+    @Test
     void aProvisionalCeilingNeedsItsDayOfReview() throws Exception {
         desk.recommend(stock, 12.5, true, 1);
         Map<String, String> fields = desk.fields(now + 3);

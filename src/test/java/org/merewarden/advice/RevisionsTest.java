@@ -146,6 +146,9 @@ class RevisionsTest {
                 .contains("Notice " + third + ": revised to 5 t, season " + season)
                 .contains("23:58")
                 .contains("Revise the limit in force: revised to 8 t, season " + season);
+        // what is issued ahead is not what is revised
+        assertThat(desk.page(STOCK + "/advice?season=" + season + "&revise=true", BIOLOGIST))
+                .containsPattern("<input[^>]*name=\"amount\" value=\"8.0\"");
         pending.takeEffect(moment);
         pending.takeEffect(moment);
         assertThat(limits.inForce(stock, season).orElseThrow().id()).isEqualTo(third);
@@ -171,10 +174,50 @@ class RevisionsTest {
         long first = issued(desk.fields(2132));
         long second = issued(revision(2132, "8", "2132-06-01", "06:00"));
         assertThat(LimitDesk.said(desk.act(second, "withdraw", "The survey was late.", APPROVER), "done"))
-                .contains("is withdrawn");
+                .contains("is withdrawn")
+                .doesNotContain("No limit is in force");
         pending.takeEffect(Instant.parse("2132-07-01T00:00:00Z"));
         assertThat(limits.inForce(stock, 2132).orElseThrow().id()).isEqualTo(first);
         assertThat(desk.state(first)).isEqualTo("ISSUED");
+    }
+
+    /** What was superseded does not come back by itself. */
+    @Test
+    void withdrawingARevisionSaysThatNoLimitIsLeft() throws Exception {
+        String address = "/stocks/rev-left/FRO";
+        region.stock(region.lake("rev-left", "Left Lake"), "FRO");
+        int season = seasons.current();
+        long first = desk.propose(address, desk.fields(season), BIOLOGIST);
+        desk.act(first, "issue", "Agreed.", APPROVER);
+        assertThat(desk.page(address + "/advice", APPROVER))
+                .contains("Then no limit is in force for season " + season + ".");
+        long second = desk.propose(address, revisionNow(season, "8"), BIOLOGIST);
+        desk.act(second, "issue", "Agreed.", APPROVER);
+        assertThat(desk.page(address + "/advice", APPROVER))
+                .contains("Then no limit is in force for season " + season + ". To go back to notice " + first
+                        + " (12.5 t for season " + season + "), do not withdraw")
+                .contains(address + "/advice?season=" + season + "&amp;revise=true#propose");
+        var answer = desk.act(second, "withdraw", "A slip.", APPROVER);
+        assertThat(LimitDesk.said(answer, "done"))
+                .contains("Notice " + second + " is withdrawn. No limit is in force for season " + season + " now");
+        String next = String.valueOf(answer.andReturn().getResponse().getRedirectedUrl());
+        assertThat(desk.page(next, BIOLOGIST))
+                .contains("Last limit: 12.5 t, season " + season + " (notice " + first + ")");
+    }
+
+    /** To open a closed stock again, the limit that held before is filled in. */
+    @Test
+    void aClosureIsRevisedFromTheLimitBeforeIt() throws Exception {
+        String address = "/stocks/rev-opened/FRO";
+        region.stock(region.lake("rev-opened", "Opened Lake"), "FRO");
+        int season = seasons.current();
+        long first = desk.propose(address, desk.fields(season), BIOLOGIST);
+        desk.act(first, "issue", "Agreed.", APPROVER);
+        Map<String, String> now = revisionNow(season, "");
+        desk.send(address + "/closures", closure(now.get("effectiveDate"), now.get("effectiveTime")), BIOLOGIST);
+        desk.act(desk.newest(), "issue", "Closed.", APPROVER);
+        assertThat(desk.page(address + "/advice?season=" + season + "&revise=true", BIOLOGIST))
+                .containsPattern("<input[^>]*name=\"amount\" value=\"12.5\"");
     }
 
     @Test
