@@ -28,7 +28,8 @@ alter table catch_limit add column difference_reason varchar(4000);
 alter table catch_limit add column entry_key varchar(100);
 alter table catch_limit add constraint catch_limit_purpose check (purpose in ('season', 'revision', 'closure'));
 alter table catch_limit add constraint catch_limit_effective check (purpose = 'season' or effective_at is not null);
-alter table catch_limit add constraint catch_limit_closure check (purpose <> 'closure' or (kind = 'catch' and amount = 0));
+alter table catch_limit add constraint catch_limit_closure check
+    (purpose <> 'closure' or (kind = 'catch' and amount is not null and amount = 0));
 alter table catch_limit add constraint catch_limit_difference
     check (difference_reason is null or recommendation_id is not null);
 alter table catch_limit add constraint catch_limit_entered_once unique (entry_key);
@@ -41,8 +42,14 @@ create table limit_act (
     decided_at timestamp with time zone not null,
     decided_by varchar(60) not null,
     effective_at timestamp with time zone not null,
-    -- what was written, up to 4000 characters, and what an own proposal or a doubtful assessment adds
+    -- what was written, up to 4000 characters; in rows from before also that it was an own proposal
     reason varchar(4200) not null,
+    -- who issued it had proposed it
+    own_proposal boolean default false not null,
+    -- what was wrong with the assessment behind it when it was issued
+    doubt varchar(12) check (doubt in ('missing', 'superseded', 'unsettled')),
+    -- the limit that took its place
+    successor_id bigint references catch_limit,
     constraint limit_decision_act check (act in
         ('DRAFTED', 'DISCARDED', 'PROPOSED', 'ISSUED', 'REFUSED', 'WITHDRAWN', 'SUPERSEDED')),
     constraint limit_decision_once unique (limit_id, act)

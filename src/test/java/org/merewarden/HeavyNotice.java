@@ -42,6 +42,7 @@ public record HeavyNotice(MockMvc mvc, JdbcClient jdbc, String lake) {
         return post("/stocks/" + lake + "/FPE/limits")
                 .param("season", Integer.toString(season))
                 .param("kind", "catch")
+                .param("key", java.util.UUID.randomUUID().toString())
                 .param("amount", "123")
                 .param("subsistence", "3.25")
                 .param("angling", "4.5")

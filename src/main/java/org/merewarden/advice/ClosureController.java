@@ -2,18 +2,14 @@ package org.merewarden.advice;
 
 import jakarta.servlet.http.HttpServletResponse;
 import jakarta.validation.Valid;
-import java.time.Instant;
 import java.time.LocalDate;
-import java.time.LocalTime;
 import java.util.Map;
 import java.util.Objects;
 import java.util.Optional;
 import org.merewarden.waterbody.StockView;
-import org.merewarden.web.Figures;
 import org.merewarden.web.FormBinding;
 import org.merewarden.web.OfficeSettings;
 import org.merewarden.web.Seasons;
-import org.merewarden.web.Texts;
 import org.springframework.stereotype.Controller;
 import org.springframework.ui.Model;
 import org.springframework.validation.BindingResult;
@@ -32,7 +28,7 @@ class ClosureController {
     private final ProposalDesk desk;
     private final Seasons seasons;
     private final OfficeSettings settings;
-    private final Texts texts;
+    private final Limits limits;
 
     ClosureController(
             AdvicePages pages,
@@ -40,13 +36,13 @@ class ClosureController {
             ProposalDesk desk,
             Seasons seasons,
             OfficeSettings settings,
-            Texts texts) {
+            Limits limits) {
         this.pages = pages;
         this.rules = rules;
         this.desk = desk;
         this.seasons = seasons;
         this.settings = settings;
-        this.texts = texts;
+        this.limits = limits;
     }
 
     @InitBinder({"form", "closure"})
@@ -66,40 +62,17 @@ class ClosureController {
         StockView stock = pages.stock(lake, species);
         LocalDate day = closure.closeOn;
         int season = day == null ? seasons.current() : seasons.of(day);
+        closure.closeKey = rules.key(closure.closeKey, result);
         rules.moment(season, "closeOn", day, closure.closeAt, result);
         if (result.hasErrors()) {
             return pages.again(stock, closure, model, response);
         }
-        NewLimit limit = limit(stock.id(), season, Objects.requireNonNull(day), closure);
+        double reported = limits.inForce(stock.id(), season)
+                .map(LimitView::reportedFraction)
+                .orElse(1.0);
+        NewLimit limit = closure.toLimit(stock.id(), season, seasons.end(season), reported, settings.zone());
         String reason = Objects.requireNonNull(closure.closeReason);
         return desk.store(
                 stock, new Proposal(limit, reason, Optional.empty(), Map.of(), null), ProposalDesk.Act.CLOSE, flash);
-    }
-
-    private NewLimit limit(long stockId, int season, LocalDate day, ClosureForm closure) {
-        LocalTime time = Objects.requireNonNull(closure.closeAt);
-        Instant from = day.atTime(time).atZone(settings.zone()).toInstant();
-        return new NewLimit(
-                stockId,
-                season,
-                "catch",
-                0.0,
-                "t",
-                0,
-                0,
-                0,
-                0,
-                1,
-                day,
-                seasons.end(season),
-                texts.of(
-                        "advice.closure.measures",
-                        Figures.dateTime(from),
-                        settings.zone().getId()),
-                null,
-                null,
-                null,
-                "decided",
-                new Terms(Terms.CLOSURE, from, null, null, null, closure.closeKey));
     }
 }

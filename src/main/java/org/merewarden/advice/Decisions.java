@@ -16,12 +16,11 @@ import org.springframework.transaction.annotation.Transactional;
 /** Issuing, refusing and withdrawing limits. Proposer and issuer differ unless the office allows it. */
 @Service
 class Decisions {
-    /** What the store holds of a reason, less the words that are added to it. */
+    /** In the store. */
     static final int LONGEST_REASON = 4000;
 
-    private static final String OWN = " (own proposal, as the office's settings allow)";
-
     private final LimitWriter writer;
+    private final AllocationWriter allocations;
     private final LimitHistory history;
     private final StandingKeeper standings;
     private final Assessments assessments;
@@ -32,6 +31,7 @@ class Decisions {
 
     Decisions(
             LimitWriter writer,
+            AllocationWriter allocations,
             LimitHistory history,
             StandingKeeper standings,
             Assessments assessments,
@@ -40,6 +40,7 @@ class Decisions {
             ActivityLog activity,
             Clock clock) {
         this.writer = writer;
+        this.allocations = allocations;
         this.history = history;
         this.standings = standings;
         this.assessments = assessments;
@@ -68,26 +69,26 @@ class Decisions {
         if (remark == null && doubt.isPresent()) {
             throw new NotAllowed("advice.issue." + doubt.get());
         }
-        String reason = (remark == null ? file.first().reason() : remark)
-                + doubt.map(d -> " (assessment " + d + ")").orElse("")
-                + (own ? OWN : "");
+        String reason = remark == null ? file.first().reason() : remark;
+        Beside beside = new Beside(own, doubt.orElse(null), null);
         String before = subjects.standing(limit);
-        boolean now = hold(id, limit, reason);
+        boolean now = hold(id, limit, reason, beside);
         activity.record(
                 "issued limit",
                 subjects.subject(id, limit),
                 before,
                 subjects.describe(limit) + "; "
-                        + (now ? "" : "from " + limit.terms().effectiveAt() + "; ") + reason);
+                        + (now ? "" : "from " + limit.terms().effectiveAt() + "; ") + reason
+                        + doubt.map(d -> " (assessment " + d + ")").orElse("")
+                        + (own ? " (own proposal)" : ""));
         return now;
     }
 
-    private boolean hold(long id, NewLimit limit, String reason) {
-        writer.lockStock(limit.stockId());
+    private boolean hold(long id, NewLimit limit, String reason, Beside beside) {
         Instant now = clock.instant();
         Instant from = limit.holdsFrom(now);
-        writer.decide(id, LimitWriter.ISSUED, Who.name(), from, reason);
-        writer.allocate(id, limit);
+        writer.decide(id, LimitWriter.ISSUED, Who.name(), from, reason, beside);
+        allocations.byRights(id, limit);
         if (from.isAfter(now)) {
             writer.putPending(id, from);
             return false;
@@ -104,9 +105,13 @@ class Decisions {
         activity.record("refused limit", subjects.subject(id, limit), "proposed: " + subjects.describe(limit), reason);
     }
 
-    /** Takes an issued limit out of force, or keeps it from coming into force. */
+    /**
+     * Takes an issued limit out of force, or keeps it from coming into force.
+     *
+     * @return whether it was in force, so that its season is left without a limit
+     */
     @Transactional
-    public void withdraw(long id, String reason) {
+    public boolean withdraw(long id, String reason) {
         checkLength(reason);
         LimitFile file = locked(id);
         if (!file.standing()) {
@@ -122,6 +127,7 @@ class Decisions {
                 subjects.subject(id, limit),
                 (waited ? "pending: " : "in force: ") + subjects.describe(limit),
                 reason);
+        return !waited;
     }
 
     /** Whether an approver may issue what they proposed themselves. */

@@ -6,7 +6,6 @@ import java.util.List;
 import java.util.Map;
 import java.util.Objects;
 import java.util.Set;
-import java.util.stream.Stream;
 import org.jspecify.annotations.Nullable;
 import org.merewarden.web.Figures;
 import org.merewarden.web.Seasons;
@@ -21,21 +20,35 @@ class DecisionsView {
     private final Decisions decisions;
     private final LimitStore limits;
     private final Seasons seasons;
+    private final DecisionWords words;
     private final Texts texts;
 
-    DecisionsView(OpenProposals proposals, Decisions decisions, LimitStore limits, Seasons seasons, Texts texts) {
+    DecisionsView(
+            OpenProposals proposals,
+            Decisions decisions,
+            LimitStore limits,
+            Seasons seasons,
+            DecisionWords words,
+            Texts texts) {
         this.proposals = proposals;
         this.decisions = decisions;
         this.limits = limits;
         this.seasons = seasons;
+        this.words = words;
         this.texts = texts;
     }
 
     /** Something written down that is not in force: a draft, or a limit that waits for its moment. */
     record Waiting(String id, String what) {}
 
-    /** A limit that is issued and holds or will hold. */
-    record Standing(String id, String season, String what) {}
+    /**
+     * A limit that is issued and holds or will hold.
+     *
+     * @param left what its withdrawal would leave; null where another limit stays in force
+     * @param revisable it is in force for this season or a later one
+     */
+    record Standing(
+            String id, String season, String what, @Nullable String left, boolean revisable) {}
 
     /** A past act. */
     record Past(
@@ -52,7 +65,7 @@ class DecisionsView {
     /**
      * The page's strings.
      *
-     * @param revisable the limits in force for this season and later ones
+     * @param revisable those of the standing ones that may be revised
      * @param standing all limits in force and those that wait for their moment
      * @param closesAtOnce the reader's closure is issued in the act that proposes it
      */
@@ -67,6 +80,12 @@ class DecisionsView {
 
     Page page(long stockId, List<LimitFile> files) {
         Set<Long> inForce = limits.numbersInForce(stockId);
+        int current = seasons.current();
+        List<Standing> standing = files.stream()
+                .filter(LimitFile::standing)
+                .sorted(Comparator.comparing((LimitFile f) -> -f.limit().season()))
+                .map(f -> standing(f, files, inForce.contains(f.id()), current))
+                .toList();
         return new Page(
                 proposals.open(stockId, files),
                 files.stream()
@@ -74,18 +93,31 @@ class DecisionsView {
                         .map(this::pending)
                         .toList(),
                 files.stream().filter(LimitFile::draft).map(this::draft).toList(),
-                standing(files.stream()
-                        .filter(f -> inForce.contains(f.id()) && f.limit().season() >= seasons.current())),
-                standing(files.stream().filter(LimitFile::standing)),
+                standing.stream().filter(Standing::revisable).toList(),
+                standing,
                 past(files, inForce),
                 Who.has("APPROVER") && decisions.ownProposals());
     }
 
-    private List<Standing> standing(Stream<LimitFile> files) {
-        return files.sorted(Comparator.comparing((LimitFile f) -> -f.limit().season()))
-                .map(f -> new Standing(
-                        Long.toString(f.id()), AdviceView.season(f.limit().season()), proposals.what(f.limit())))
-                .toList();
+    private Standing standing(LimitFile file, List<LimitFile> files, boolean inForce, int current) {
+        boolean revisable = inForce && file.limit().season() >= current;
+        return new Standing(
+                Long.toString(file.id()),
+                AdviceView.season(file.limit().season()),
+                proposals.what(file.limit()),
+                inForce ? left(file, files, revisable) : null,
+                revisable);
+    }
+
+    private String left(LimitFile file, List<LimitFile> files, boolean revisable) {
+        String season = AdviceView.season(file.limit().season());
+        return files.stream()
+                .filter(f -> revisable && f.state().equals(LimitWriter.SUPERSEDED))
+                .filter(f -> Objects.equals(f.latest().beside().successor(), file.id()))
+                .findFirst()
+                .map(f -> texts.of(
+                        "advice.withdraw.left.before", season, Long.toString(f.id()), proposals.what(f.limit())))
+                .orElseGet(() -> texts.of("advice.withdraw.left", season));
     }
 
     private Waiting pending(LimitFile file) {
@@ -128,7 +160,7 @@ class DecisionsView {
                 proposals.what(limit),
                 act.when(),
                 act.decidedBy(),
-                act.reason(),
+                words.reason(act),
                 act.act().equals(LimitWriter.ISSUED),
                 act.act().equals(LimitWriter.ISSUED) && inForce.contains(act.limitId()),
                 act.laterEffect() ? texts.of("advice.past.from", Figures.dateTime(act.effectiveAt())) : null);

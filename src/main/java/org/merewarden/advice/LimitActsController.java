@@ -5,6 +5,8 @@ import org.merewarden.waterbody.Register;
 import org.merewarden.waterbody.StockView;
 import org.merewarden.web.Texts;
 import org.springframework.dao.DuplicateKeyException;
+import org.springframework.dao.PessimisticLockingFailureException;
+import org.springframework.dao.QueryTimeoutException;
 import org.springframework.stereotype.Controller;
 import org.springframework.web.bind.annotation.PathVariable;
 import org.springframework.web.bind.annotation.PostMapping;
@@ -17,12 +19,15 @@ class LimitActsController {
     private final Register register;
     private final Decisions decisions;
     private final Proposals proposals;
+    private final Recommendations recommendations;
     private final Texts texts;
 
-    LimitActsController(Register register, Decisions decisions, Proposals proposals, Texts texts) {
+    LimitActsController(
+            Register register, Decisions decisions, Proposals proposals, Recommendations recommendations, Texts texts) {
         this.register = register;
         this.decisions = decisions;
         this.proposals = proposals;
+        this.recommendations = recommendations;
         this.texts = texts;
     }
 
@@ -49,13 +54,10 @@ class LimitActsController {
 
     @PostMapping("/limits/{id}/withdraw")
     String withdraw(@PathVariable long id, @RequestParam(defaultValue = "") String reason, RedirectAttributes flash) {
-        return act(
-                id,
-                () -> {
-                    decisions.withdraw(id, needed(reason));
-                    return "advice.withdrawn";
-                },
-                flash);
+        String page = act(
+                id, () -> decisions.withdraw(id, needed(reason)) ? "advice.withdrawn.none" : "advice.withdrawn", flash);
+        int season = decisions.find(id).season();
+        return recommendations.advisable(season) ? page + "?season=" + season : page;
     }
 
     @PostMapping("/limits/{id}/discard")
@@ -78,11 +80,14 @@ class LimitActsController {
 
     /** @param act does it and names the sentence that says so */
     private String act(long id, Supplier<String> act, RedirectAttributes flash) {
-        StockView stock = register.stock(decisions.find(id).stockId()).orElseThrow();
+        NewLimit limit = decisions.find(id);
+        StockView stock = register.stock(limit.stockId()).orElseThrow();
         try {
-            flash.addFlashAttribute("done", texts.of(act.get(), Long.toString(id)));
+            flash.addFlashAttribute("done", texts.of(act.get(), Long.toString(id), AdviceView.season(limit.season())));
         } catch (NotAllowed e) {
             flash.addFlashAttribute("refused", texts.of(String.valueOf(e.getMessage()), Long.toString(id)));
+        } catch (PessimisticLockingFailureException | QueryTimeoutException e) {
+            flash.addFlashAttribute("refused", texts.of("advice.busy"));
         } catch (DuplicateKeyException e) {
             flash.addFlashAttribute("refused", texts.of("advice.decided", Long.toString(id)));
         }

@@ -121,6 +121,11 @@ class LimitForm {
         return value == null ? 0 : value;
     }
 
+    /** Nothing is set aside from effort, or from measures. */
+    private double kept(@Nullable Double value) {
+        return catchLimit() ? orZero(value) : 0;
+    }
+
     boolean byHand() {
         return catchLimit() && hand.values().stream().anyMatch(Objects::nonNull);
     }
@@ -140,9 +145,9 @@ class LimitForm {
     }
 
     private NewLimit toLimit(long stockId, @Nullable Long assessmentId, Optional<Adviser.Advice> advice, ZoneId zone) {
-        boolean differs = catchLimit()
-                && advice.isPresent()
-                && Recommendations.differs(amount, advice.get().limitTonnes());
+        boolean differs = advice.isPresent()
+                && (!catchLimit()
+                        || Recommendations.differs(amount, advice.get().limitTonnes()));
         Instant effective =
                 revision() ? effectiveDate.atTime(effectiveTime).atZone(zone).toInstant() : null;
         return new NewLimit(
@@ -150,11 +155,11 @@ class LimitForm {
                 season,
                 kind,
                 kind.equals("measures only") ? null : amount,
-                catchLimit() || unit == null ? "t" : unit,
-                orZero(subsistence),
-                orZero(angling),
-                orZero(research),
-                orZero(other),
+                kind.equals("effort") ? unit : "t",
+                kept(subsistence),
+                kept(angling),
+                kept(research),
+                kept(other),
                 reportedFraction,
                 validFrom,
                 validTo,

@@ -36,7 +36,8 @@ class LimitHistory {
             Instant effectiveAt,
             String decidedBy,
             String reason,
-            boolean fromPaper) {
+            boolean fromPaper,
+            Beside beside) {
 
         /** When it was decided, for people; papers know the day only. */
         String when() {
@@ -57,7 +58,8 @@ class LimitHistory {
     }
 
     private static final String DECISIONS = """
-            select d.limit_id, d.act, d.decided_at, d.effective_at, d.decided_by, d.reason, l.origin
+            select d.limit_id, d.act, d.decided_at, d.effective_at, d.decided_by, d.reason, l.origin,
+                d.own_proposal, d.doubt, d.successor_id
             from limit_decision d join catch_limit l on l.id = d.limit_id
             """;
 
@@ -111,7 +113,8 @@ class LimitHistory {
                 row.getObject(4, OffsetDateTime.class).toInstant(),
                 row.getString(5),
                 row.getString(6),
-                row.getString(7).equals("entered"));
+                row.getString(7).equals("entered"),
+                new Beside(row.getBoolean(8), row.getString(9), row.getObject(10, Long.class)));
     }
 
     Optional<NewLimit> find(long limitId) {

@@ -38,7 +38,7 @@ class LimitPrefill {
     /**
      * What a form is filled in from.
      *
-     * @param last the latest limit up to the season that was not withdrawn and is no closure
+     * @param last the latest limit up to the season that has taken effect, was not withdrawn and is no closure
      * @param setAsides the written rule's, where it sets anything aside and recommends an amount
      */
     record Sources(
@@ -57,10 +57,12 @@ class LimitPrefill {
     }
 
     Sources sources(int season, Optional<Adviser.Advice> advice, List<LimitFile> files) {
+        Instant now = clock.instant();
         Optional<LimitFile> last = files.stream()
                 .filter(file ->
                         file.limit().season() <= season && !file.limit().terms().closure())
-                .filter(file -> issued(file) != null && !file.state().equals(LimitWriter.WITHDRAWN))
+                .filter(file -> !file.state().equals(LimitWriter.WITHDRAWN))
+                .filter(file -> !effective(file).isAfter(now))
                 .max(Comparator.comparing((LimitFile file) -> file.limit().season())
                         .thenComparing(file -> effective(file)));
         Optional<Policy.SetAsides> shares = advice.map(a -> recommendations.setAsides(a.policyNumber()))
@@ -70,7 +72,7 @@ class LimitPrefill {
 
     private static Instant effective(LimitFile file) {
         LimitHistory.Decision issued = issued(file);
-        return issued == null ? Instant.MIN : issued.effectiveAt();
+        return issued == null ? Instant.MAX : issued.effectiveAt();
     }
 
     private static LimitHistory.@Nullable Decision issued(LimitFile file) {

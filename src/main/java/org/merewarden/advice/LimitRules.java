@@ -1,17 +1,14 @@
 package org.merewarden.advice;
 
+import java.time.Clock;
+import java.time.Duration;
 import java.time.LocalDate;
 import java.time.LocalDateTime;
 import java.time.LocalTime;
-import java.util.Map;
-import java.util.Objects;
+import java.time.ZoneId;
 import java.util.Optional;
-import java.util.Set;
-import java.util.stream.Collectors;
+import java.util.UUID;
 import org.jspecify.annotations.Nullable;
-import org.merewarden.core.policy.LimitArithmetic;
-import org.merewarden.waterbody.Register;
-import org.merewarden.waterbody.RightView;
 import org.merewarden.web.Figures;
 import org.merewarden.web.OfficeSettings;
 import org.merewarden.web.Seasons;
@@ -22,36 +19,52 @@ import org.springframework.validation.Errors;
 @Component
 class LimitRules {
     /** Shown in full: the difference may be small. */
-    private static final int DIGITS = 12;
+    static final int DIGITS = 12;
 
-    private static final double WHOLE = 1e-9;
+    /** Between the filling in and the sending of a form. */
+    private static final Duration GRACE = Duration.ofHours(1);
 
     private final Limits limits;
-    private final Register register;
+    private final HandRules hands;
     private final Seasons seasons;
     private final OfficeSettings settings;
+    private final Clock clock;
 
-    LimitRules(Limits limits, Register register, Seasons seasons, OfficeSettings settings) {
+    LimitRules(Limits limits, HandRules hands, Seasons seasons, OfficeSettings settings, Clock clock) {
         this.limits = limits;
-        this.register = register;
+        this.hands = hands;
         this.seasons = seasons;
         this.settings = settings;
+        this.clock = clock;
     }
 
     /** A draft may still lack its words and its day of review. */
     void check(LimitForm form, long stockId, Optional<Adviser.Advice> advice, boolean draft, Errors errors) {
+        form.key = key(form.key, errors);
         amounts(form, errors);
+        unit(form, errors);
         days(form, errors);
         if (form.revision()) {
             revision(form, stockId, errors);
+        } else {
+            notLongPast(form, errors);
         }
         if (!draft && form.reason == null) {
             errors.rejectValue("reason", "advice.form.reason.needed");
         }
         advice.ifPresent(a -> recommended(form, a, draft, errors));
         if (form.byHand()) {
-            hand(form, stockId, errors);
+            hands.check(form, stockId, errors);
         }
+    }
+
+    /** The form's key; one that came without is given one and goes back, for it could be stored twice. */
+    String key(@Nullable String given, Errors errors) {
+        if (given == null) {
+            errors.reject("advice.form.key.needed");
+            return UUID.randomUUID().toString();
+        }
+        return given;
     }
 
     private static void amounts(LimitForm form, Errors errors) {
@@ -65,13 +78,32 @@ class LimitRules {
         }
     }
 
-    private static void days(LimitForm form, Errors errors) {
+    private static void unit(LimitForm form, Errors errors) {
+        String unit = form.unit;
+        boolean tonnes = unit == null || unit.equalsIgnoreCase("t");
+        if ("effort".equals(form.kind) && tonnes) {
+            errors.rejectValue("unit", "advice.form.unit.effort", new Object[] {unit == null ? "" : unit}, null);
+        } else if (form.catchLimit() && !tonnes) {
+            errors.rejectValue("unit", "advice.form.unit.catch", new Object[] {unit}, null);
+        }
+    }
+
+    private void notLongPast(LimitForm form, Errors errors) {
+        if (form.season != null && !errors.hasFieldErrors("season") && form.season < seasons.current() - 1) {
+            Object[] said = {season(form.season), season(seasons.current())};
+            errors.rejectValue("season", "advice.form.season.past", said, null);
+        }
+    }
+
+    private void days(LimitForm form, Errors errors) {
         LocalDate from = form.validFrom;
         LocalDate to = form.validTo;
         if (!withinReason(from) || !withinReason(to)) {
             errors.rejectValue("validTo", "advice.form.date.range");
         } else if (from != null && to != null && from.isAfter(to)) {
             errors.rejectValue("validTo", "advice.form.date.order");
+        } else if (from != null && to != null && form.season != null && !errors.hasFieldErrors("season")) {
+            overlap(form.season, from, to, errors);
         }
         LocalDate review = form.reviewBy;
         if (review == null || from == null || to == null || errors.hasFieldErrors("validTo")) {
@@ -81,6 +113,17 @@ class LimitRules {
         if (review.isBefore(from) || review.isAfter(last)) {
             Object[] days = {Figures.date(review), Figures.date(from), Figures.date(last)};
             errors.rejectValue("reviewBy", "advice.form.review.range", days, null);
+        }
+    }
+
+    private void overlap(int season, LocalDate from, LocalDate to, Errors errors) {
+        LocalDate first = seasons.start(season);
+        LocalDate last = seasons.end(season);
+        if (to.isBefore(first) || from.isAfter(last)) {
+            Object[] said = {
+                Figures.date(from), Figures.date(to), season(season), Figures.date(first), Figures.date(last)
+            };
+            errors.rejectValue("validFrom", "advice.form.date.season", said, null);
         }
     }
 
@@ -97,7 +140,7 @@ class LimitRules {
         }
     }
 
-    /** A day of the season and an hour that the office's clocks show. */
+    /** A day of the season and an hour that the office's clocks show, and that does not lie behind. */
     void moment(int season, String field, @Nullable LocalDate day, @Nullable LocalTime time, Errors errors) {
         if (errors.hasFieldErrors(field)) {
             return;
@@ -111,11 +154,14 @@ class LimitRules {
         if (day.isBefore(first) || day.isAfter(last)) {
             Object[] days = {Figures.date(day), season(season), Figures.date(first), Figures.date(last)};
             errors.rejectValue(field, "advice.form.moment.season", days, null);
-        } else if (settings.zone()
-                .getRules()
-                .getValidOffsets(LocalDateTime.of(day, time))
-                .isEmpty()) {
+            return;
+        }
+        LocalDateTime moment = day.atTime(time);
+        ZoneId zone = settings.zone();
+        if (zone.getRules().getValidOffsets(moment).isEmpty()) {
             errors.rejectValue(field, "advice.form.moment.none", new Object[] {time, Figures.date(day)}, null);
+        } else if (moment.atZone(zone).toInstant().isBefore(clock.instant().minus(GRACE))) {
+            errors.rejectValue(field, "advice.form.moment.past", new Object[] {time, Figures.date(day)}, null);
         }
     }
 
@@ -140,49 +186,5 @@ class LimitRules {
 
     private static String full(double tonnes) {
         return Figures.digits(tonnes, DIGITS) + "\u00a0t";
-    }
-
-    private void hand(LimitForm form, long stockId, Errors errors) {
-        Map<Long, String> names = register.rightsOfStock(stockId).stream()
-                .collect(Collectors.toMap(RightView::cooperativeId, RightView::cooperativeName));
-        Set<Long> given = form.hand.keySet();
-        given.stream()
-                .filter(id -> !names.containsKey(id))
-                .forEach(id ->
-                        errors.rejectValue(field(id), "advice.form.hand.right", new Object[] {id.toString()}, null));
-        names.forEach((id, name) -> {
-            Double kilograms = form.hand.get(id);
-            if (kilograms == null && !errors.hasFieldErrors(field(id))) {
-                errors.rejectValue(field(id), "advice.form.hand.all", new Object[] {name}, null);
-            } else if (kilograms != null && !wholeKilograms(kilograms)) {
-                Object[] said = {name, Figures.digits(kilograms, DIGITS)};
-                errors.rejectValue(field(id), "advice.form.hand.whole", said, null);
-            }
-        });
-        if (!errors.hasFieldErrors()) {
-            handSum(form, names, errors);
-        }
-    }
-
-    private static boolean wholeKilograms(double kilograms) {
-        return kilograms >= 0 && kilograms <= 1e10 && kilograms == Math.rint(kilograms);
-    }
-
-    private static void handSum(LimitForm form, Map<Long, String> names, Errors errors) {
-        double sum =
-                form.hand.values().stream().mapToDouble(Objects::requireNonNull).sum();
-        double logged = 1000
-                * LimitArithmetic.toBeLogged(
-                        Objects.requireNonNull(form.amount),
-                        form.setAsides(),
-                        Objects.requireNonNull(form.reportedFraction));
-        if (sum > logged * (1 + WHOLE) + WHOLE) {
-            Object[] sums = {Figures.digits(sum, DIGITS) + "\u00a0kg", Figures.digits(logged, DIGITS) + "\u00a0kg"};
-            errors.rejectValue(field(names.keySet().iterator().next()), "advice.form.hand.sum", sums, null);
-        }
-    }
-
-    static String field(long cooperativeId) {
-        return "hand[" + cooperativeId + "]";
     }
 }

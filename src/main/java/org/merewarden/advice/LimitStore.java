@@ -37,18 +37,19 @@ class LimitStore implements Limits {
 
     private final JdbcClient jdbc;
     private final Seasons seasons;
+    private final ClosureWords closures;
 
-    LimitStore(JdbcClient jdbc, Seasons seasons) {
+    LimitStore(JdbcClient jdbc, Seasons seasons, ClosureWords closures) {
         this.jdbc = jdbc;
         this.seasons = seasons;
+        this.closures = closures;
     }
 
     @Override
     public List<LimitView> inForce(int season) {
-        return jdbc.sql(IN_FORCE + "where f.season_year = ?")
-                .param(season)
-                .query(LimitStore::view)
-                .list();
+        return jdbc.sql(IN_FORCE + "where f.season_year = ?").param(season).query(LimitStore::view).list().stream()
+                .map(this::told)
+                .toList();
     }
 
     @Override
@@ -56,7 +57,16 @@ class LimitStore implements Limits {
         return jdbc.sql(IN_FORCE + "where f.stock_id = ? and f.season_year = ?")
                 .params(stockId, season)
                 .query(LimitStore::view)
-                .optional();
+                .optional()
+                .map(this::told);
+    }
+
+    private LimitView told(LimitView limit) {
+        if (!limit.closure()) {
+            return limit;
+        }
+        ClosureWords.Said said = closures.said(limit.effectiveAt());
+        return limit.closedFrom(said.day(), said.measures());
     }
 
     @Override

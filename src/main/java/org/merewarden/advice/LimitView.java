@@ -41,6 +41,30 @@ public record LimitView(
         return kind.equals("catch") ? amount : null;
     }
 
+    /** The same, valid from this day and with these measures. */
+    LimitView closedFrom(LocalDate day, String words) {
+        return new LimitView(
+                id,
+                stockId,
+                season,
+                kind,
+                amount,
+                unit,
+                setAsidesTonnes,
+                reportedFraction,
+                toBeLoggedTonnes,
+                day,
+                validTo,
+                words,
+                legalBasis,
+                objection,
+                reason,
+                issuedAt,
+                issuedBy,
+                purpose,
+                effectiveAt);
+    }
+
     /** Whether it closed the stock within its season. */
     public boolean closure() {
         return purpose.equals(Terms.CLOSURE);

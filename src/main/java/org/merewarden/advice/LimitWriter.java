@@ -5,19 +5,14 @@ import java.time.Clock;
 import java.time.Instant;
 import java.time.OffsetDateTime;
 import java.time.ZoneOffset;
-import java.util.List;
-import java.util.Map;
 import java.util.Objects;
 import java.util.Optional;
 import org.jspecify.annotations.Nullable;
-import org.merewarden.core.policy.LimitArithmetic;
-import org.merewarden.waterbody.Register;
-import org.merewarden.waterbody.RightView;
 import org.springframework.jdbc.core.simple.JdbcClient;
 import org.springframework.jdbc.support.GeneratedKeyHolder;
 import org.springframework.stereotype.Repository;
 
-/** Writes limits, their decisions and allocations. Rows are added, never edited; what is in force or waits for its moment is kept beside them. */
+/** Writes limits and their decisions. Rows are added, never edited; what is in force or waits for its moment is kept beside them. */
 @Repository
 class LimitWriter {
     static final String DRAFTED = "DRAFTED";
@@ -29,12 +24,12 @@ class LimitWriter {
     static final String SUPERSEDED = "SUPERSEDED";
 
     private final JdbcClient jdbc;
-    private final Register register;
+    private final AllocationWriter allocations;
     private final Clock clock;
 
-    LimitWriter(JdbcClient jdbc, Register register, Clock clock) {
+    LimitWriter(JdbcClient jdbc, AllocationWriter allocations, Clock clock) {
         this.jdbc = jdbc;
-        this.register = register;
+        this.allocations = allocations;
         this.clock = clock;
     }
 
@@ -79,7 +74,16 @@ class LimitWriter {
         return Objects.requireNonNull(keys.getKey()).longValue();
     }
 
+    /**
+     * Keeps others from deciding about the limit: its stock's row first, then its own. In one order everywhere, or two
+     * who decide about a stock would wait for each other.
+     */
     void lock(long limitId) {
+        jdbc.sql("select stock_id from catch_limit where id = ?")
+                .param(limitId)
+                .query(Long.class)
+                .optional()
+                .ifPresent(this::lockStock);
         jdbc.sql("select id from catch_limit where id = ? for update")
                 .param(limitId)
                 .query(Long.class)
@@ -87,13 +91,27 @@ class LimitWriter {
     }
 
     void decide(long limitId, String act, String by, Instant effective, String reason) {
-        jdbc.sql("insert into limit_decision (limit_id, act, decided_at, decided_by, effective_at, reason)"
-                        + " values (?, ?, ?, ?, ?, ?)")
-                .params(limitId, act, now(), by, effective.atOffset(ZoneOffset.UTC), reason)
+        decide(limitId, act, by, effective, reason, Beside.NOTHING);
+    }
+
+    void decide(long limitId, String act, String by, Instant effective, String reason, Beside beside) {
+        jdbc.sql("""
+                        insert into limit_decision (limit_id, act, decided_at, decided_by, effective_at, reason,
+                            own_proposal, doubt, successor_id)
+                        values (:limit, :act, :at, :by, :effective, :reason, :own, :doubt, :successor)""")
+                .param("limit", limitId)
+                .param("act", act)
+                .param("at", now())
+                .param("by", by)
+                .param("effective", effective.atOffset(ZoneOffset.UTC))
+                .param("reason", reason)
+                .param("own", beside.own())
+                .param("doubt", beside.doubt(), Types.VARCHAR)
+                .param("successor", beside.successor(), Types.BIGINT)
                 .update();
     }
 
-    /** One decision about a stock's limits at a time. */
+    /** One decision about a stock's limits at a time. Whoever writes a limit down and goes on to decide locks first. */
     void lockStock(long stockId) {
         jdbc.sql("select id from stock where id = ? for update")
                 .param(stockId)
@@ -108,7 +126,7 @@ class LimitWriter {
                 .query(Long.class)
                 .optional();
         before.ifPresent(old -> {
-            decide(old, SUPERSEDED, by, effective, "superseded by notice " + limitId);
+            decide(old, SUPERSEDED, by, effective, "", Beside.replacedBy(limitId));
             endForce(old);
         });
         jdbc.sql("insert into limit_in_force (stock_id, season_year, limit_id) values (?, ?, ?)")
@@ -141,50 +159,15 @@ class LimitWriter {
                 .query(Long.class)
                 .optional();
         if (later.isPresent()) {
-            decide(limitId, SUPERSEDED, by, clock.instant(), "superseded by notice " + later.get());
+            decide(limitId, SUPERSEDED, by, clock.instant(), "", Beside.replacedBy(later.get()));
         } else {
             putInForce(limitId, limit, by, clock.instant());
-            allocate(limitId, limit);
+            allocations.byRights(limitId, limit);
         }
     }
 
     void endForce(long limitId) {
         jdbc.sql("delete from limit_in_force where limit_id = ?").param(limitId).update();
-    }
-
-    /** Allocates by the rights, unless it was done by hand. */
-    void allocate(long limitId, NewLimit limit) {
-        Double kilograms = limit.toBeLoggedKilograms();
-        if (kilograms == null || allocated(limitId)) {
-            return;
-        }
-        List<RightView> rights = register.rightsOfStock(limit.stockId());
-        long[] parts = LimitArithmetic.allocate(
-                kilograms, rights.stream().mapToDouble(RightView::sharePercent).toArray());
-        for (int i = 0; i < parts.length; i++) {
-            insert(limitId, rights.get(i), parts[i]);
-        }
-    }
-
-    private boolean allocated(long limitId) {
-        return jdbc.sql("select count(*) from allocation where limit_id = ?")
-                        .param(limitId)
-                        .query(Integer.class)
-                        .single()
-                > 0;
-    }
-
-    /** Keeps what was allocated by hand, kg by cooperative; those without a right to the stock get nothing. */
-    void allocateByHand(long limitId, long stockId, Map<Long, Long> kilograms) {
-        for (RightView right : kilograms.isEmpty() ? List.<RightView>of() : register.rightsOfStock(stockId)) {
-            insert(limitId, right, kilograms.getOrDefault(right.cooperativeId(), 0L));
-        }
-    }
-
-    private void insert(long limitId, RightView right, long kilograms) {
-        jdbc.sql("insert into allocation (limit_id, cooperative_id, share_percent, amount_kg) values (?, ?, ?, ?)")
-                .params(limitId, right.cooperativeId(), right.sharePercent(), kilograms)
-                .update();
     }
 
     private static @Nullable OffsetDateTime stored(@Nullable Instant instant) {

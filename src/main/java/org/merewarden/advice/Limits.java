@@ -3,7 +3,7 @@ package org.merewarden.advice;
 import java.util.List;
 import java.util.Optional;
 
-/** Limits in force, as other features read them. Every call is one statement. */
+/** Limits in force, as other features read them. Every call is one statement, and one more for each closure. */
 public interface Limits {
     List<LimitView> inForce(int season);
 

@@ -141,6 +141,12 @@ class LimitsTable implements TableHandler {
     public void store(List<TableRow> rows, Provenance provenance) {
         StockReferences references = StockReferences.of(register);
         Map<Long, Double> reported = new HashMap<>();
+        // in the order of their numbers, so that two imports of several stocks do not wait for each other
+        rows.stream()
+                .map(row -> references.stock(row).orElseThrow().id())
+                .distinct()
+                .sorted()
+                .forEach(writer::lockStock);
         rows.stream()
                 .sorted(Comparator.comparing(row -> Objects.requireNonNull(row.date("issued_on"))))
                 .forEach(row -> {

@@ -9,7 +9,8 @@ import org.jspecify.annotations.Nullable;
  * @param kind catch, effort, measures-only or closure
  * @param amount total removals for a catch limit
  * @param issued when it was issued; null for a draft
- * @param effective the moment from which a revision or closure holds; null where it holds from its issue
+ * @param effective the moment from which a revision or closure holds, or is to hold while it is not issued; null for a
+ *     season's limit
  * @param review the day by which a provisional ceiling is looked at again; null where it is none
  * @param recommended what the rule recommended; null where it recommended nothing
  * @param difference why the amount is another one; null where it is not
@@ -51,7 +52,7 @@ record Notice(
     /** What a cooperative may log. */
     record Part(String cooperative, String share, String amount) {}
 
-    /** @param reason null where it is the notice's own, told above */
+    /** @param reason null where there is none, or it is the notice's own, told above */
     record Act(String act, String at, String by, @Nullable String reason) {}
 
     /** Whether the notice binds nobody: not issued, or no longer in force. */

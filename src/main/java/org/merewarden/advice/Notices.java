@@ -1,5 +1,6 @@
 package org.merewarden.advice;
 
+import java.time.Instant;
 import java.util.List;
 import java.util.Locale;
 import java.util.Objects;
@@ -24,6 +25,8 @@ class Notices {
     private final LimitStore limits;
     private final Recommendations recommendations;
     private final LimitPapers papers;
+    private final DecisionWords words;
+    private final ClosureWords closures;
 
     Notices(
             Register register,
@@ -33,7 +36,9 @@ class Notices {
             OfficeSettings settings,
             LimitStore limits,
             Recommendations recommendations,
-            LimitPapers papers) {
+            LimitPapers papers,
+            DecisionWords words,
+            ClosureWords closures) {
         this.register = register;
         this.decisions = decisions;
         this.history = history;
@@ -42,6 +47,8 @@ class Notices {
         this.limits = limits;
         this.recommendations = recommendations;
         this.papers = papers;
+        this.words = words;
+        this.closures = closures;
     }
 
     Notice notice(long id) {
@@ -50,7 +57,12 @@ class Notices {
         List<LimitHistory.Decision> acts = history.ofLimit(id);
         Optional<LimitHistory.Decision> issued =
                 acts.stream().filter(a -> a.act().equals(LimitWriter.ISSUED)).findFirst();
-        String reason = issued.orElse(acts.get(0)).reason();
+        Instant from = issued.filter(act -> limit.terms().effectiveAt() != null)
+                .map(LimitHistory.Decision::effectiveAt)
+                .orElse(limit.terms().effectiveAt());
+        Optional<ClosureWords.Said> closed =
+                limit.terms().closure() ? Optional.ofNullable(from).map(closures::said) : Optional.empty();
+        String reason = words.reason(issued.orElse(acts.get(0)));
         return new Notice(
                 id,
                 settings.get(OfficeSettings.OFFICE_NAME),
@@ -63,16 +75,15 @@ class Notices {
                 setAsides(limit),
                 Figures.percent(limit.reportedFraction()),
                 AdviceView.toBeLogged(limit),
-                Figures.date(limit.validFrom()) + " – " + Figures.date(limit.validTo()),
-                limit.terms().effectiveAt() == null
-                        ? null
-                        : Figures.dateTime(limit.terms().effectiveAt()),
+                Figures.date(closed.map(ClosureWords.Said::day).orElse(limit.validFrom())) + " – "
+                        + Figures.date(limit.validTo()),
+                from == null ? null : Figures.dateTime(from),
                 limit.terms().reviewBy() == null
                         ? null
                         : Figures.date(limit.terms().reviewBy()),
                 recommended(limit),
                 limit.terms().differenceReason(),
-                limit.measures(),
+                closed.map(ClosureWords.Said::measures).orElse(limit.measures()),
                 limit.legalBasis(),
                 limit.objection(),
                 reason,
@@ -99,8 +110,10 @@ class Notices {
         return kept == null ? null : Figures.decided(kept.limitTonnes());
     }
 
-    private static Notice.Act act(LimitHistory.Decision d, String told) {
-        return new Notice.Act(d.act(), d.when(), d.decidedBy(), d.reason().equals(told) ? null : d.reason());
+    private Notice.Act act(LimitHistory.Decision d, String told) {
+        String reason = words.reason(d);
+        return new Notice.Act(
+                d.act(), d.when(), d.decidedBy(), reason.isEmpty() || reason.equals(told) ? null : reason);
     }
 
     /** Of the assessment that the proposal rested on, whatever was assessed since; papers know none, so the latest. */

@@ -19,12 +19,19 @@ class OpenProposals {
     private final Assessments assessments;
     private final Recommendations recommendations;
     private final AllocationTable allocations;
+    private final PolicyStore policies;
     private final Texts texts;
 
-    OpenProposals(Assessments assessments, Recommendations recommendations, AllocationTable allocations, Texts texts) {
+    OpenProposals(
+            Assessments assessments,
+            Recommendations recommendations,
+            AllocationTable allocations,
+            PolicyStore policies,
+            Texts texts) {
         this.assessments = assessments;
         this.recommendations = recommendations;
         this.allocations = allocations;
+        this.policies = policies;
         this.texts = texts;
     }
 
@@ -32,6 +39,7 @@ class OpenProposals {
      * A proposal that waits for a decision.
      *
      * @param facts name and value, in order
+     * @param policy that the rule has changed since it recommended; null where it has not
      * @param doubt what is wrong with the assessment behind it, so that its issuer must write why
      */
     record Open(
@@ -42,6 +50,7 @@ class OpenProposals {
             String reason,
             boolean own,
             @Nullable String provisional,
+            @Nullable String policy,
             @Nullable String doubt,
             boolean measures,
             List<String[]> facts,
@@ -54,9 +63,10 @@ class OpenProposals {
         }
         Optional<AssessmentView> latest = assessments.latest(stockId);
         Map<Long, Recommendations.Kept> recommended = recommendations.ofStock(stockId);
+        int policy = policies.inForce().number();
         Map<Long, List<AllocationTable.Part>> parts = allocations.ofProposals(stockId, waiting);
         return waiting.stream()
-                .map(file -> open(file, latest, recommended, parts.getOrDefault(file.id(), List.of())))
+                .map(file -> open(file, latest, recommended, policy, parts.getOrDefault(file.id(), List.of())))
                 .toList();
     }
 
@@ -64,6 +74,7 @@ class OpenProposals {
             LimitFile file,
             Optional<AssessmentView> latest,
             Map<Long, Recommendations.Kept> recommended,
+            int policy,
             List<AllocationTable.Part> parts) {
         NewLimit limit = file.limit();
         LimitHistory.Decision proposal = file.latest();
@@ -81,12 +92,19 @@ class OpenProposals {
                         : texts.of(
                                 "advice.open.provisional",
                                 Figures.date(limit.terms().reviewBy())),
+                changed(beside, policy),
                 Decisions.doubt(limit, latest)
                         .map(d -> texts.of("advice.open.doubt." + d))
                         .orElse(null),
                 limit.kind().equals("measures only"),
                 facts(limit, beside),
                 parts);
+    }
+
+    private @Nullable String changed(Recommendations.@Nullable Kept beside, int policy) {
+        return beside == null || beside.policyNumber() == policy
+                ? null
+                : texts.of("advice.open.policy", Integer.toString(beside.policyNumber()), Integer.toString(policy));
     }
 
     private List<String[]> facts(NewLimit limit, Recommendations.@Nullable Kept beside) {

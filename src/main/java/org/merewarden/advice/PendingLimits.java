@@ -54,7 +54,6 @@ class PendingLimits {
             return; // withdrawn meanwhile, or put in force by another process
         }
         NewLimit limit = history.find(id).orElseThrow();
-        writer.lockStock(limit.stockId());
         String before = subjects.standing(limit);
         Instant from = Objects.requireNonNull(limit.terms().effectiveAt());
         writer.putInForce(id, limit, Who.name(), from);

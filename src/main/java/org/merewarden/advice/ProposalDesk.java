@@ -4,6 +4,8 @@ import org.jspecify.annotations.Nullable;
 import org.merewarden.waterbody.StockView;
 import org.merewarden.web.Texts;
 import org.springframework.dao.DuplicateKeyException;
+import org.springframework.dao.PessimisticLockingFailureException;
+import org.springframework.dao.QueryTimeoutException;
 import org.springframework.stereotype.Component;
 import org.springframework.web.servlet.mvc.support.RedirectAttributes;
 
@@ -39,6 +41,8 @@ class ProposalDesk {
                 if (!before(key, flash)) {
                     flash.addFlashAttribute("refused", texts.of("advice.draft.gone"));
                 }
+            } catch (PessimisticLockingFailureException | QueryTimeoutException e) {
+                flash.addFlashAttribute("refused", texts.of("advice.busy"));
             } catch (NotAllowed e) {
                 flash.addFlashAttribute("refused", texts.of(String.valueOf(e.getMessage())));
             }

@@ -55,7 +55,7 @@ class ProposalView {
                         .toList(),
                 register.rightsOfStock(stockId).stream()
                         .map(r -> new HandField(
-                                LimitRules.field(r.cooperativeId()),
+                                HandRules.field(r.cooperativeId()),
                                 texts.of(
                                         "advice.form.hand.of",
                                         r.cooperativeName(),

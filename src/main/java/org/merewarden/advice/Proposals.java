@@ -11,6 +11,7 @@ import org.springframework.transaction.annotation.Transactional;
 @Service
 class Proposals {
     private final LimitWriter writer;
+    private final AllocationWriter allocations;
     private final LimitHistory history;
     private final Recommendations recommendations;
     private final Decisions decisions;
@@ -20,6 +21,7 @@ class Proposals {
 
     Proposals(
             LimitWriter writer,
+            AllocationWriter allocations,
             LimitHistory history,
             Recommendations recommendations,
             Decisions decisions,
@@ -27,6 +29,7 @@ class Proposals {
             ActivityLog activity,
             Clock clock) {
         this.writer = writer;
+        this.allocations = allocations;
         this.history = history;
         this.recommendations = recommendations;
         this.decisions = decisions;
@@ -58,12 +61,14 @@ class Proposals {
     }
 
     private long write(Proposal proposal, String act, String action) {
+        // before anything refers to the stock: a row that does holds it shared, and two such would wait for each other
+        writer.lockStock(proposal.limit().stockId());
         Long recommendation = proposal.advice().map(recommendations::keep).orElse(null);
         NewLimit limit = proposal.limit();
         limit = limit.on(limit.terms().recommendedBy(recommendation));
         long id = writer.add(limit, Who.name());
         writer.decide(id, act, Who.name(), clock.instant(), proposal.reason());
-        writer.allocateByHand(id, limit.stockId(), proposal.hand());
+        allocations.byHand(id, limit.stockId(), proposal.hand());
         String before = subjects.standing(limit);
         Long replaced = proposal.replaces();
         if (replaced != null) {
@@ -79,14 +84,14 @@ class Proposals {
         if (file.limit().stockId() != limit.stockId()) {
             throw new NotAllowed("advice.draft.gone");
         }
-        writer.decide(draft, LimitWriter.DISCARDED, Who.name(), clock.instant(), "replaced by number " + by);
+        writer.decide(draft, LimitWriter.DISCARDED, Who.name(), clock.instant(), "", Beside.replacedBy(by));
         return "draft " + draft + ": " + subjects.describe(file.limit());
     }
 
     @Transactional
     public void discard(long id) {
         NewLimit limit = draft(id).limit();
-        writer.decide(id, LimitWriter.DISCARDED, Who.name(), clock.instant(), "discarded");
+        writer.decide(id, LimitWriter.DISCARDED, Who.name(), clock.instant(), "");
         activity.record("discarded draft", subjects.subject(id, limit), subjects.describe(limit), null);
     }
 

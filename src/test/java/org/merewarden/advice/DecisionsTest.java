@@ -24,6 +24,7 @@ import org.merewarden.assessment.AssessForTests;
 import org.merewarden.intake.Fate;
 import org.merewarden.intake.Provenance;
 import org.merewarden.intake.TableRow;
+import org.merewarden.web.Seasons;
 import org.springframework.beans.factory.annotation.Autowired;
 import org.springframework.jdbc.core.simple.JdbcClient;
 import org.springframework.test.web.servlet.MockMvc;
@@ -54,6 +55,9 @@ class DecisionsTest {
     @Autowired
     private LimitsTable table;
 
+    @Autowired
+    private Seasons seasons;
+
     private long stock;
 
     @BeforeAll
@@ -83,6 +87,7 @@ class DecisionsTest {
         return post(STOCK + "/limits")
                 .param("season", Integer.toString(season))
                 .param("kind", "catch")
+                .param("key", java.util.UUID.randomUUID().toString())
                 .param("amount", "12.5")
                 .param("subsistence", "0.5")
                 .param("angling", "1")
@@ -189,6 +194,7 @@ class DecisionsTest {
         mvc.perform(post("/stocks/dec-bare/FRO/limits")
                         .param("season", "2106")
                         .param("kind", "catch")
+                        .param("key", java.util.UUID.randomUUID().toString())
                         .param("amount", "1")
                         .param("reportedFraction", "1")
                         .param("validFrom", "2106-01-01")
@@ -219,9 +225,21 @@ class DecisionsTest {
             {"validTo", "soon", "is no date"},
             {"legalBasis", "x".repeat(1001), "At most 1000 characters"},
             {"reason", " ", "Write down why"},
-            {"season", "19999", "A season is a year from 1800 to 2200"}
+            {"season", "19999", "A season is a year from 1800 to 2200"},
+            {"season", "2111", "season 2111 runs from 1 Jan 2111 to 31 Dec 2111: the two share no day"},
+            {"season", "1990", "Season 1990 lies more than one season before the present one"},
+            {"kind", "effort", "“t” is no unit of effort"},
+            {"unit", "", "“” is no unit of effort"},
+            {"unit", "net-nights", "“net-nights” is no unit of a catch limit"},
+            {"key", "", "the form came without its own number"}
         }) {
-            var request = proposal(2107);
+            var request = proposal(2107).param("unit", "t");
+            if (bad[2].startsWith("“”")) {
+                request.with(r -> {
+                    r.setParameter("kind", "effort");
+                    return r;
+                });
+            }
             mvc.perform(request.with(r -> {
                                 r.setParameter(bad[0], bad[1]);
                                 return r;
@@ -234,6 +252,40 @@ class DecisionsTest {
                         .query(Integer.class)
                         .single())
                 .isEqualTo(before);
+    }
+
+    @Test
+    void anEffortLimitKeepsItsUnitAndSetsNothingAside() throws Exception {
+        mvc.perform(proposal(2113)
+                        .with(r -> {
+                            r.setParameter("kind", "effort");
+                            r.setParameter("amount", "400");
+                            r.setParameter("unit", "net-nights");
+                            return r;
+                        })
+                        .with(BIOLOGIST))
+                .andExpect(status().is3xxRedirection());
+        assertThat(jdbc.sql("select amount || ' ' || unit || ' ' || (set_aside_subsistence_t + set_aside_angling_t"
+                                + " + set_aside_research_t + set_aside_other_t) from catch_limit"
+                                + " where season_year = 2113")
+                        .query(String.class)
+                        .single())
+                .isEqualTo("400.0 net-nights 0.0");
+    }
+
+    @Test
+    void aFormWithoutItsKeyComesBackWithOne() throws Exception {
+        String form = mvc.perform(proposal(2107)
+                        .with(r -> {
+                            r.removeParameter("key");
+                            return r;
+                        })
+                        .with(BIOLOGIST))
+                .andExpect(status().is(422))
+                .andReturn()
+                .getResponse()
+                .getContentAsString();
+        assertThat(form).containsPattern("name=\"key\" value=\"[0-9a-f-]{36}\"").contains("value=\"12.5\"");
     }
 
     @Test
@@ -270,6 +322,7 @@ class DecisionsTest {
         mvc.perform(post("/stocks/dec-late/FRO/limits")
                         .param("season", "2112")
                         .param("kind", "catch")
+                        .param("key", java.util.UUID.randomUUID().toString())
                         .param("amount", "1")
                         .param("reportedFraction", "1")
                         .param("validFrom", "2112-01-01")
@@ -288,9 +341,10 @@ class DecisionsTest {
     /** Who may propose may import, and only an approver decides. */
     @Test
     void papersDoNotSupersedeWhatWasDecidedHere() throws Exception {
-        long id = propose(1990, BIOLOGIST);
+        int season = seasons.current() - 1;
+        long id = propose(season, BIOLOGIST);
         act(id, "issue", "", APPROVER);
-        Fate fate = table.examine(List.of(paper(1990, "1989-11-01", 999)), (other, keys) -> false)
+        Fate fate = table.examine(List.of(paper(season, (season - 1) + "-11-01", 999)), (other, keys) -> false)
                 .get(0);
         assertThat(fate.kind()).isEqualTo(Fate.Kind.REFUSED);
         assertThat(fate.problems().get(0).rule()).contains("notice " + id);

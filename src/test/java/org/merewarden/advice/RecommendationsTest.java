@@ -110,6 +110,45 @@ class RecommendationsTest {
     }
 
     @Test
+    void anEffortLimitMayDifferWithoutAReasonAndKeepsOneThatIsGiven() throws Exception {
+        desk.recommend(stock, 10, false, 1);
+        Map<String, String> fields = desk.fields(now + 2);
+        fields.put("kind", "effort");
+        fields.put("unit", "net-nights");
+        long without = desk.propose(STOCK, fields, BIOLOGIST);
+        fields.put("differenceReason", "10 t are what 12.5 net-nights take.");
+        long with = desk.propose(STOCK, fields, BIOLOGIST);
+        assertThat(desk.page("/notices/" + without, BIOLOGIST)).contains("<dd>10 t</dd>");
+        assertThat(desk.page("/notices/" + with, BIOLOGIST))
+                .contains("<dd>10 t (the limit differs: 10 t are what 12.5 net-nights take.)</dd>");
+        assertThat(desk.page(STOCK + "/advice?season=" + (now + 2), BIOLOGIST))
+                .contains("For an effort limit it may stay empty: the recommendation is in tonnes.");
+    }
+
+    @Test
+    void aPolicyThatChangedSinceIsSaidBesideTheProposal() throws Exception {
+        desk.recommend(stock, 12.5, false, 1);
+        long same = desk.propose(STOCK, desk.fields(now + 1), BIOLOGIST);
+        assertThat(desk.page(STOCK + "/advice", APPROVER)).doesNotContain("The policy has changed since");
+        jdbc.sql("insert into policy_version select 902, limit_fraction, ramp_line, ramp_target_fraction,"
+                        + " ramp_low_fraction, ramp_high_fraction, catch_quantile, horizon_years, tolerance,"
+                        + " steadiness_cap, carry_over, payback, 0, 0, 0, 0, rounding_share, rounding_least_kg,"
+                        + " watch_from, strained_from, critical_from, pooled, interval_probability, created_at,"
+                        + " created_by from policy_version where number = 1")
+                .update();
+        desk.recommend(stock, 12.5, false, 902);
+        long other = desk.propose(STOCK, desk.fields(now + 1), BIOLOGIST);
+        String page = desk.page(STOCK + "/advice", APPROVER);
+        assertThat(page)
+                .containsOnlyOnce("The policy has changed since: the recommendation was made by version 902;"
+                        + " version 1 is in force.");
+        // a caution only
+        desk.act(other, "issue", "", APPROVER);
+        assertThat(desk.state(other)).isEqualTo("ISSUED");
+        desk.act(same, "refuse", "Decided.", APPROVER);
+    }
+
+    @Test
     void aProvisionalCeilingNeedsItsDayOfReview() throws Exception {
         desk.recommend(stock, 12.5, true, 1);
         Map<String, String> fields = desk.fields(now + 3);
@@ -137,11 +176,11 @@ class RecommendationsTest {
         assertThat(LimitDesk.said(desk.act(id, "issue", "", APPROVER), "refused"))
                 .contains("no assessment stands behind it");
         desk.act(id, "issue", "A first ceiling.", APPROVER);
-        assertThat(jdbc.sql("select reason from limit_decision where limit_id = ? and act = 'ISSUED'")
+        assertThat(jdbc.sql("select reason || ' ' || doubt from limit_decision where limit_id = ? and act = 'ISSUED'")
                         .param(id)
                         .query(String.class)
                         .single())
-                .isEqualTo("A first ceiling. (assessment missing)");
+                .isEqualTo("A first ceiling. missing");
     }
 
     @Test
@@ -288,10 +327,12 @@ class RecommendationsTest {
         assertThat(LimitDesk.said(desk.act(second, "issue", " ", APPROVER), "refused"))
                 .contains("the assessment behind it did not settle");
         desk.act(second, "issue", "The nets were lost.", APPROVER);
-        assertThat(jdbc.sql("select reason from limit_decision where limit_id = ? and act = 'ISSUED'")
+        assertThat(jdbc.sql("select reason || ' ' || doubt from limit_decision where limit_id = ? and act = 'ISSUED'")
                         .param(second)
                         .query(String.class)
                         .single())
-                .isEqualTo("The nets were lost. (assessment unsettled)");
+                .isEqualTo("The nets were lost. unsettled");
+        assertThat(desk.page("/notices/" + second, BIOLOGIST))
+                .contains("The nets were lost. (the assessment behind it did not settle)");
     }
 }

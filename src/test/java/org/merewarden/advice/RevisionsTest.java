@@ -6,8 +6,13 @@ import static org.merewarden.advice.LimitDesk.BIOLOGIST;
 import static org.springframework.test.web.servlet.result.MockMvcResultMatchers.status;
 
 import java.time.Instant;
+import java.time.LocalDateTime;
+import java.time.ZoneOffset;
+import java.time.format.DateTimeFormatter;
+import java.time.temporal.ChronoUnit;
 import java.util.LinkedHashMap;
 import java.util.List;
+import java.util.Locale;
 import java.util.Map;
 import org.junit.jupiter.api.AfterEach;
 import org.junit.jupiter.api.BeforeAll;
@@ -49,11 +54,12 @@ class RevisionsTest {
     @Autowired
     private Seasons seasons;
 
+    private TestRegion region;
     private long stock;
 
     @BeforeAll
     void register() {
-        var region = new TestRegion(jdbc);
+        region = new TestRegion(jdbc);
         stock = region.stock(region.lake("rev-lake", "Revised Lake"), "FPE");
         region.right(region.cooperative("rev-north", "Revised North"), stock, 60);
         region.right(region.cooperative("rev-south", "Revised South"), stock, 40);
@@ -88,6 +94,13 @@ class RevisionsTest {
         return fields;
     }
 
+    /** From the present minute, which has begun. */
+    private Map<String, String> revisionNow(int season, String tonnes) {
+        LocalDateTime now = LocalDateTime.now(settings.zone());
+        String time = now.toLocalTime().truncatedTo(ChronoUnit.MINUTES).toString();
+        return revision(season, tonnes, now.toLocalDate().toString(), time);
+    }
+
     private double standingOn() {
         return jdbc.sql("select removals_t from stock_standing where stock_id = ?")
                 .param(stock)
@@ -112,7 +125,7 @@ class RevisionsTest {
         assertThat(form).contains("Revise the limit for season " + season).contains("effectiveTime");
 
         Instant before = Instant.now().minusSeconds(1);
-        long second = issued(revision(season, "8", season + "-01-01", "06:00"));
+        long second = issued(revisionNow(season, "8"));
         LimitView now = limits.inForce(stock, season).orElseThrow();
         assertThat(now.id()).isEqualTo(second);
         assertThat(now.purpose()).isEqualTo("revision");
@@ -133,6 +146,9 @@ class RevisionsTest {
                 .contains("Notice " + third + ": revised to 5 t, season " + season)
                 .contains("23:58")
                 .contains("Revise the limit in force: revised to 8 t, season " + season);
+        // what is issued ahead is not what is revised
+        assertThat(desk.page(STOCK + "/advice?season=" + season + "&revise=true", BIOLOGIST))
+                .containsPattern("<input[^>]*name=\"amount\" value=\"8.0\"");
         pending.takeEffect(moment);
         pending.takeEffect(moment);
         assertThat(limits.inForce(stock, season).orElseThrow().id()).isEqualTo(third);
@@ -158,10 +174,50 @@ class RevisionsTest {
         long first = issued(desk.fields(2132));
         long second = issued(revision(2132, "8", "2132-06-01", "06:00"));
         assertThat(LimitDesk.said(desk.act(second, "withdraw", "The survey was late.", APPROVER), "done"))
-                .contains("is withdrawn");
+                .contains("is withdrawn")
+                .doesNotContain("No limit is in force");
         pending.takeEffect(Instant.parse("2132-07-01T00:00:00Z"));
         assertThat(limits.inForce(stock, 2132).orElseThrow().id()).isEqualTo(first);
         assertThat(desk.state(first)).isEqualTo("ISSUED");
+    }
+
+    /** What was superseded does not come back by itself. */
+    @Test
+    void withdrawingARevisionSaysThatNoLimitIsLeft() throws Exception {
+        String address = "/stocks/rev-left/FRO";
+        region.stock(region.lake("rev-left", "Left Lake"), "FRO");
+        int season = seasons.current();
+        long first = desk.propose(address, desk.fields(season), BIOLOGIST);
+        desk.act(first, "issue", "Agreed.", APPROVER);
+        assertThat(desk.page(address + "/advice", APPROVER))
+                .contains("Then no limit is in force for season " + season + ".");
+        long second = desk.propose(address, revisionNow(season, "8"), BIOLOGIST);
+        desk.act(second, "issue", "Agreed.", APPROVER);
+        assertThat(desk.page(address + "/advice", APPROVER))
+                .contains("Then no limit is in force for season " + season + ". To go back to notice " + first
+                        + " (12.5 t for season " + season + "), do not withdraw")
+                .contains(address + "/advice?season=" + season + "&amp;revise=true#propose");
+        var answer = desk.act(second, "withdraw", "A slip.", APPROVER);
+        assertThat(LimitDesk.said(answer, "done"))
+                .contains("Notice " + second + " is withdrawn. No limit is in force for season " + season + " now");
+        String next = String.valueOf(answer.andReturn().getResponse().getRedirectedUrl());
+        assertThat(desk.page(next, BIOLOGIST))
+                .contains("Last limit: 12.5 t, season " + season + " (notice " + first + ")");
+    }
+
+    /** To open a closed stock again, the limit that held before is filled in. */
+    @Test
+    void aClosureIsRevisedFromTheLimitBeforeIt() throws Exception {
+        String address = "/stocks/rev-opened/FRO";
+        region.stock(region.lake("rev-opened", "Opened Lake"), "FRO");
+        int season = seasons.current();
+        long first = desk.propose(address, desk.fields(season), BIOLOGIST);
+        desk.act(first, "issue", "Agreed.", APPROVER);
+        Map<String, String> now = revisionNow(season, "");
+        desk.send(address + "/closures", closure(now.get("effectiveDate"), now.get("effectiveTime")), BIOLOGIST);
+        desk.act(desk.newest(), "issue", "Closed.", APPROVER);
+        assertThat(desk.page(address + "/advice?season=" + season + "&revise=true", BIOLOGIST))
+                .containsPattern("<input[^>]*name=\"amount\" value=\"12.5\"");
     }
 
     @Test
@@ -174,6 +230,7 @@ class RevisionsTest {
             {"", "06:00", "Enter the day and the hour"},
             {"2134-06-01", "", "Enter the day and the hour"},
             {"2135-01-01", "06:00", "1 Jan 2135 lies outside season 2134, which runs from 1 Jan 2134 to 31 Dec 2134"},
+            {"2019-06-01", "06:00", "1 Jun 2019 lies outside season 2134"},
             {"2134-06-01", "noon", "is no time of day such as 06:00: “noon”"},
             // the last Sunday of March 2134
             {"2134-03-28", "02:30", "The clocks are put forward: 02:30 does not exist on 28 Mar 2134"}
@@ -201,7 +258,7 @@ class RevisionsTest {
 
     @Test
     void anApproverClosesInOneActWhereTheOfficeAllowsIt() throws Exception {
-        issued(desk.fields(2136));
+        long first = issued(desk.fields(2136));
         long proposed = close(closure("2136-06-01", "06:00"), APPROVER);
         assertThat(desk.state(proposed)).isEqualTo("PROPOSED");
         assertThat(LimitDesk.said(desk.act(proposed, "issue", "", APPROVER), "refused"))
@@ -225,7 +282,72 @@ class RevisionsTest {
                         .toList())
                 .containsExactly(0L, 0L);
         assertThat(desk.page("/notices/" + closed, BIOLOGIST)).contains("Closed from 2 Jun 2136, 06:30 (UTC)");
-        assertThat(desk.page("/notices/" + closed, BIOLOGIST)).contains("own proposal");
+        assertThat(desk.page("/notices/" + closed, BIOLOGIST))
+                .contains("Fish die in the north bay. (own proposal, as the office’s settings allow)");
+        // a row from before tells the same in words
+        jdbc.sql("update limit_decision set own_proposal = false, reason = 'Ice. (own proposal, as the office''s"
+                        + " settings allow)' where limit_id = ? and act = 'ISSUED'")
+                .param(closed)
+                .update();
+        assertThat(desk.page("/notices/" + closed, BIOLOGIST))
+                .contains("<dd>Ice. (own proposal, as the office&#39;s settings allow)</dd>");
+        assertThat(desk.page("/notices/" + first, BIOLOGIST)).contains("superseded by notice " + closed);
+        assertThat(desk.page(STOCK + "/advice", BIOLOGIST)).contains("superseded by notice " + closed);
+    }
+
+    private static String written(String pattern, Instant moment) {
+        return DateTimeFormatter.ofPattern(pattern, Locale.UK)
+                .withZone(ZoneOffset.UTC)
+                .format(moment);
+    }
+
+    /** Proposed for a moment to come, issued after it: it holds from its issue, and says so. */
+    @Test
+    void aClosureThatIsIssuedLateSaysFromWhenItHolds() throws Exception {
+        long lake = region.stock(region.lake("rev-late", "Late Lake"), "FRO");
+        int season = seasons.current();
+        long first = desk.propose("/stocks/rev-late/FRO", desk.fields(season), BIOLOGIST);
+        desk.act(first, "issue", "Agreed.", APPROVER);
+        LocalDateTime asked = LocalDateTime.now(settings.zone()).plusMinutes(1);
+        desk.send(
+                        "/stocks/rev-late/FRO/closures",
+                        closure(
+                                asked.toLocalDate().toString(),
+                                asked.toLocalTime()
+                                        .truncatedTo(ChronoUnit.MINUTES)
+                                        .toString()),
+                        BIOLOGIST)
+                .andExpect(status().is3xxRedirection());
+        long id = desk.newest();
+        assertThat(jdbc.sql("select measures from catch_limit where id = ? and measures is not null")
+                        .param(id)
+                        .query(String.class)
+                        .list())
+                .isEmpty();
+        // three days pass until an approver comes
+        jdbc.sql("update catch_limit set effective_at = ?, valid_from = ? where id = ?")
+                .params(
+                        Instant.now().minus(3, ChronoUnit.DAYS).atOffset(ZoneOffset.UTC),
+                        asked.toLocalDate().minusDays(3),
+                        id)
+                .update();
+        desk.act(id, "issue", "Closed.", APPROVER);
+        Instant holds = effective(id, "ISSUED");
+        assertThat(holds).isAfter(Instant.now().minus(5, ChronoUnit.MINUTES));
+        String moment = written("d MMM yyyy, HH:mm", holds);
+        String day = written("d MMM yyyy", holds);
+        String notice = desk.page("/notices/" + id, BIOLOGIST);
+        assertThat(notice)
+                .contains("<dt>Takes effect</dt><dd>" + moment + "</dd>")
+                .contains("Closed from " + moment + " (UTC)")
+                .contains("<dd>" + day + " – 31 Dec " + season + "</dd>");
+        LimitView limit = limits.inForce(lake, season).orElseThrow();
+        assertThat(limit.validFrom())
+                .isEqualTo(LocalDateTime.ofInstant(holds, ZoneOffset.UTC).toLocalDate());
+        assertThat(limit.measures()).contains("Closed from");
+        // what was logged before stays scaled as under the limit before
+        assertThat(limit.reportedFraction()).isEqualTo(0.85);
+        assertThat(limit.setAsidesTonnes()).isZero();
     }
 
     @Test
@@ -234,7 +356,9 @@ class RevisionsTest {
             {"closeOn", "", "Enter the day and the hour"},
             {"closeAt", "25:00", "is no time of day"},
             {"closeReason", " ", "Write down why"},
-            {"closeReason", "x".repeat(4001), "At most 4000 characters"}
+            {"closeReason", "x".repeat(4001), "At most 4000 characters"},
+            {"closeOn", "2019-06-01", "1 Jun 2019, 06:00 lies more than an hour back"},
+            {"closeKey", "", "the form came without its own number"}
         }) {
             Map<String, String> fields = closure("2137-06-01", "06:00");
             fields.put(bad[0], bad[1]);

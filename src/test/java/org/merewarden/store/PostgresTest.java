@@ -5,6 +5,7 @@ import static org.hamcrest.Matchers.containsString;
 import static org.springframework.security.test.web.servlet.request.SecurityMockMvcRequestPostProcessors.csrf;
 import static org.springframework.security.test.web.servlet.request.SecurityMockMvcRequestPostProcessors.user;
 import static org.springframework.test.web.servlet.request.MockMvcRequestBuilders.get;
+import static org.springframework.test.web.servlet.request.MockMvcRequestBuilders.multipart;
 import static org.springframework.test.web.servlet.request.MockMvcRequestBuilders.post;
 import static org.springframework.test.web.servlet.result.MockMvcResultMatchers.content;
 import static org.springframework.test.web.servlet.result.MockMvcResultMatchers.redirectedUrl;
@@ -12,6 +13,11 @@ import static org.springframework.test.web.servlet.result.MockMvcResultMatchers.
 
 import io.zonky.test.db.postgres.embedded.EmbeddedPostgres;
 import java.io.IOException;
+import java.nio.charset.StandardCharsets;
+import java.time.Instant;
+import java.time.LocalDate;
+import java.time.ZoneOffset;
+import java.util.Random;
 import java.util.regex.Matcher;
 import java.util.regex.Pattern;
 import org.junit.jupiter.api.AfterAll;
@@ -22,13 +28,17 @@ import org.junit.jupiter.params.ParameterizedTest;
 import org.junit.jupiter.params.provider.ValueSource;
 import org.merewarden.Demonstration;
 import org.springframework.beans.factory.annotation.Autowired;
+import org.springframework.beans.factory.annotation.Qualifier;
 import org.springframework.boot.test.context.SpringBootTest;
 import org.springframework.boot.webmvc.test.autoconfigure.AutoConfigureMockMvc;
 import org.springframework.jdbc.core.simple.JdbcClient;
+import org.springframework.mock.web.MockMultipartFile;
 import org.springframework.test.context.ActiveProfiles;
 import org.springframework.test.context.DynamicPropertyRegistry;
 import org.springframework.test.context.DynamicPropertySource;
+import org.springframework.test.util.ReflectionTestUtils;
 import org.springframework.test.web.servlet.MockMvc;
+import org.springframework.test.web.servlet.request.AbstractMockHttpServletRequestBuilder;
 import org.springframework.test.web.servlet.request.RequestPostProcessor;
 
 /** The same jar on a real PostgreSQL: migrations, the demonstration through the importer, jobs, pages and decisions. */
@@ -55,6 +65,10 @@ class PostgresTest {
 
     @Autowired
     private JdbcClient jdbc;
+
+    @Autowired
+    @Qualifier("pendingLimits")
+    private Object pending;
 
     @BeforeAll
     void assessed() throws InterruptedException {
@@ -112,13 +126,16 @@ class PostgresTest {
 
     @Test
     void aLimitIsProposedAndIssued() throws Exception {
+        // a limit of today's: one for a season that is long over is not taken
+        int year = LocalDate.now(ZoneOffset.UTC).getYear();
         mvc.perform(post("/stocks/skelder-water/PLN/limits")
-                        .param("season", "2026")
+                        .param("season", Integer.toString(year))
                         .param("kind", "catch")
+                        .param("key", java.util.UUID.randomUUID().toString())
                         .param("amount", "5.1")
                         .param("reportedFraction", "1")
-                        .param("validFrom", "2026-01-01")
-                        .param("validTo", "2026-12-31")
+                        .param("validFrom", year + "-01-01")
+                        .param("validTo", year + "-12-31")
                         .param("reason", "Lower than before.")
                         .param("differenceReason", "Whatever is recommended.")
                         .with(BIOLOGIST)
@@ -147,6 +164,82 @@ class PostgresTest {
                         .query(Integer.class)
                         .single())
                 .isEqualTo(1);
+    }
+
+    @Test
+    void aClosureTakesEffectIsWithdrawnAndKeepsItsPapers() throws Exception {
+        int season = LocalDate.now(ZoneOffset.UTC).getYear() + 1;
+        String stock = "/stocks/skelder-water/PLN";
+        send(
+                post(stock + "/limits")
+                        .param("season", Integer.toString(season))
+                        .param("kind", "catch")
+                        .param("amount", "5.1")
+                        .param("reportedFraction", "0.8")
+                        .param("validFrom", season + "-01-01")
+                        .param("validTo", season + "-12-31")
+                        .param("reason", "Lower than before.")
+                        .param("differenceReason", "Whatever is recommended.")
+                        .param("reviewBy", season + "-12-31")
+                        .param("key", "postgres-limit"),
+                BIOLOGIST);
+        long limit = newest();
+        send(post("/limits/" + limit + "/issue").param("reason", "Agreed."), APPROVER);
+        var closure = post(stock + "/closures")
+                .param("closeOn", season + "-06-01")
+                .param("closeAt", "06:00")
+                .param("closeReason", "Fish die.")
+                .param("closeKey", "postgres-closure");
+        send(closure, BIOLOGIST);
+        send(closure, BIOLOGIST);
+        long closed = newest();
+        assertThat(count("catch_limit where entry_key = 'postgres-closure'")).isEqualTo(1);
+        send(post("/limits/" + closed + "/issue").param("reason", "Agreed."), APPROVER);
+        assertThat(count("limit_pending where limit_id = " + closed)).isEqualTo(1);
+        ReflectionTestUtils.invokeMethod(pending, "takeEffect", Instant.parse(season + "-06-01T06:00:00Z"));
+        assertThat(count("limit_pending where limit_id = " + closed)).isZero();
+        assertThat(count("limit_in_force where limit_id = " + closed)).isEqualTo(1);
+        assertThat(count("limit_decision where act = 'SUPERSEDED' and limit_id = " + limit + " and successor_id = "
+                        + closed))
+                .isEqualTo(1);
+        assertThat(count("catch_limit where reported_fraction = 0.8 and id = " + closed))
+                .isEqualTo(1);
+        papers(closed);
+        send(post("/limits/" + closed + "/withdraw").param("reason", "It is over."), APPROVER);
+        assertThat(count("limit_in_force f join catch_limit l on l.id = f.limit_id where l.season_year = " + season
+                        + " and f.limit_id in (" + limit + ", " + closed + ")"))
+                .isZero();
+    }
+
+    private void papers(long limit) throws Exception {
+        send(
+                post("/limits/" + limit + "/objections")
+                        .param("objector", "anglers’ association")
+                        .param("receivedOn", LocalDate.now(ZoneOffset.UTC).toString())
+                        .param("text", "Too late."),
+                BIOLOGIST);
+        assertThat(count("limit_objection where limit_id = " + limit)).isEqualTo(1);
+        byte[] bytes = new byte[2_500_000];
+        new Random(7).nextBytes(bytes);
+        System.arraycopy("%PDF-1.7".getBytes(StandardCharsets.US_ASCII), 0, bytes, 0, 8);
+        send(
+                multipart("/limits/" + limit + "/signed-pages")
+                        .file(new MockMultipartFile("file", "signed.pdf", "application/pdf", bytes)),
+                APPROVER);
+        long page = jdbc.sql("select id from limit_attachment where limit_id = ?")
+                .param(limit)
+                .query(Long.class)
+                .single();
+        mvc.perform(get("/limits/" + limit + "/signed-pages/" + page).with(BIOLOGIST))
+                .andExpect(content().bytes(bytes));
+    }
+
+    private void send(AbstractMockHttpServletRequestBuilder<?> request, RequestPostProcessor who) throws Exception {
+        mvc.perform(request.with(who).with(csrf())).andExpect(status().is3xxRedirection());
+    }
+
+    private long newest() {
+        return jdbc.sql("select max(id) from catch_limit").query(Long.class).single();
     }
 
     @Test
