@@ -87,6 +87,8 @@ class LimitPrefill {
         LimitForm form = new LimitForm();
         form.key = UUID.randomUUID().toString();
         sources.last().ifPresent(last -> terms(form, last.limit(), sources.lastSetAsides()));
+        form.legalBasis = form.legalBasis == null ? usual(OfficeSettings.LEGAL_BASIS) : form.legalBasis;
+        form.objection = form.objection == null ? usual(OfficeSettings.OBJECTION) : form.objection;
         form.season = sources.season();
         form.validFrom = seasons.start(sources.season());
         form.validTo = seasons.end(sources.season());
@@ -97,6 +99,12 @@ class LimitPrefill {
             sources.setAsides().ifPresent(shares -> setAsides(form, shares, advice.limitTonnes()));
         });
         return form;
+    }
+
+    /** What the office says of every limit; null where it says nothing. */
+    private @Nullable String usual(String setting) {
+        String text = settings.get(setting);
+        return text.isBlank() ? null : text;
     }
 
     /** The limit of the season once more, to be changed from the next full hour on. */

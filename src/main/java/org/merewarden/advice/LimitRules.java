@@ -73,6 +73,9 @@ class LimitRules {
         if (amount == null && !unread && !"measures only".equals(form.kind)) {
             errors.rejectValue("amount", "advice.form.amount.needed");
         }
+        if ("measures only".equals(form.kind) && form.measures == null) {
+            errors.rejectValue("measures", "advice.form.measures.needed");
+        }
         if (form.catchLimit() && amount != null && !unread && form.setAsides() > amount) {
             errors.rejectValue("subsistence", "advice.form.setAside.sum");
         }

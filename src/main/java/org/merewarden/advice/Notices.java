@@ -22,7 +22,7 @@ class Notices {
     private final LimitHistory history;
     private final Assessments assessments;
     private final OfficeSettings settings;
-    private final LimitStore limits;
+    private final NoticeParts parts;
     private final Recommendations recommendations;
     private final LimitPapers papers;
     private final DecisionWords words;
@@ -34,7 +34,7 @@ class Notices {
             LimitHistory history,
             Assessments assessments,
             OfficeSettings settings,
-            LimitStore limits,
+            NoticeParts parts,
             Recommendations recommendations,
             LimitPapers papers,
             DecisionWords words,
@@ -44,7 +44,7 @@ class Notices {
         this.history = history;
         this.assessments = assessments;
         this.settings = settings;
-        this.limits = limits;
+        this.parts = parts;
         this.recommendations = recommendations;
         this.papers = papers;
         this.words = words;
@@ -89,7 +89,7 @@ class Notices {
                 reason,
                 strength(stock.id(), limit),
                 acts.get(acts.size() - 1).act(),
-                parts(id),
+                parts.of(id, limit),
                 acts.stream().map(d -> act(d, reason)).toList(),
                 papers.objections(id).size());
     }
@@ -132,12 +132,5 @@ class Notices {
                 new Notice.SetAside("angling", Figures.decided(limit.anglingTonnes())),
                 new Notice.SetAside("research", Figures.decided(limit.researchTonnes())),
                 new Notice.SetAside("other", Figures.decided(limit.otherTonnes())));
-    }
-
-    private List<Notice.Part> parts(long id) {
-        return limits.allocationsOf(id).stream()
-                .map(a -> new Notice.Part(
-                        a.cooperativeName(), Figures.sig(a.sharePercent()) + " %", Figures.whole(a.amountKg(), "kg")))
-                .toList();
     }
 }

@@ -66,12 +66,19 @@ class OpenProposals {
         int policy = policies.inForce().number();
         Map<Long, List<AllocationTable.Part>> parts = allocations.ofProposals(stockId, waiting);
         return waiting.stream()
-                .map(file -> open(file, latest, recommended, policy, parts.getOrDefault(file.id(), List.of())))
+                .map(file -> open(
+                        file,
+                        replaced(file, files),
+                        latest,
+                        recommended,
+                        policy,
+                        parts.getOrDefault(file.id(), List.of())))
                 .toList();
     }
 
     private Open open(
             LimitFile file,
+            @Nullable String replaced,
             Optional<AssessmentView> latest,
             Map<Long, Recommendations.Kept> recommended,
             int policy,
@@ -97,8 +104,18 @@ class OpenProposals {
                         .map(d -> texts.of("advice.open.doubt." + d))
                         .orElse(null),
                 limit.kind().equals("measures only"),
-                facts(limit, beside),
+                facts(limit, replaced, beside),
                 parts);
+    }
+
+    /** The season's limit that issuing this one would end. */
+    private @Nullable String replaced(LimitFile file, List<LimitFile> files) {
+        return files.stream()
+                .filter(other -> other.limit().season() == file.limit().season()
+                        && other.state().equals(LimitWriter.ISSUED))
+                .findFirst()
+                .map(other -> texts.of("advice.open.replaces.what", Long.toString(other.id()), what(other.limit())))
+                .orElse(null);
     }
 
     private @Nullable String changed(Recommendations.@Nullable Kept beside, int policy) {
@@ -107,15 +124,16 @@ class OpenProposals {
                 : texts.of("advice.open.policy", Integer.toString(beside.policyNumber()), Integer.toString(policy));
     }
 
-    private List<String[]> facts(NewLimit limit, Recommendations.@Nullable Kept beside) {
+    private List<String[]> facts(NewLimit limit, @Nullable String replaced, Recommendations.@Nullable Kept beside) {
         Map<String, @Nullable String> facts = new LinkedHashMap<>();
         facts.put("amount", amount(limit));
+        facts.put("replaces", replaced);
         if (!limit.terms().closure()) {
             facts.put("recommended", recommended(beside));
         }
         facts.put("difference", limit.terms().differenceReason());
         facts.put("from", Figures.dateTime(limit.terms().effectiveAt()));
-        facts.put("setAsides", limit.kind().equals("catch") ? Figures.tonnes(limit.setAsidesTonnes()) : null);
+        facts.put("setAsides", limit.kind().equals("catch") ? Figures.decided(limit.setAsidesTonnes()) : null);
         facts.put("toBeLogged", AdviceView.toBeLogged(limit));
         facts.put("validity", Figures.date(limit.validFrom()) + " – " + Figures.date(limit.validTo()));
         return facts.entrySet().stream()
@@ -129,7 +147,7 @@ class OpenProposals {
                 ? texts.of("advice.open.recommended.nothing")
                 : texts.of(
                         "advice.open.recommended.by",
-                        Figures.tonnes(beside.limitTonnes()),
+                        Figures.decided(beside.limitTonnes()),
                         Integer.toString(beside.policyNumber()));
     }
 
@@ -142,6 +160,11 @@ class OpenProposals {
     }
 
     static String amount(NewLimit limit) {
-        return limit.amount() == null ? limit.kind() : Figures.withUnit(limit.amount(), limit.unit());
+        if (limit.amount() == null) {
+            return limit.kind();
+        }
+        return limit.kind().equals("catch")
+                ? Figures.decided(limit.amount())
+                : Figures.withUnit(limit.amount(), limit.unit());
     }
 }
