@@ -37,6 +37,9 @@ class RecommendationsTest {
     @Autowired
     private Seasons seasons;
 
+    @Autowired
+    private PolicyStore policies;
+
     private TestRegion region;
     private long stock;
     private int now;
@@ -127,23 +130,28 @@ class RecommendationsTest {
 
     @Test
     void aPolicyThatChangedSinceIsSaidBesideTheProposal() throws Exception {
-        desk.recommend(stock, 12.5, false, 1);
-        long same = desk.propose(STOCK, desk.fields(now + 1), BIOLOGIST);
-        assertThat(desk.page(STOCK + "/advice", APPROVER)).doesNotContain("The policy has changed since");
+        String address = "/stocks/rec-policy/FRO";
+        long ruled = region.stock(region.lake("rec-policy", "Ruled Lake"), "FRO");
+        region.catches(ruled, 2018, List.of(2.0, 2.5, 2.0, 1.5, 2.0, 2.2));
+        assess.assess(ruled, 2025);
+        int present = policies.inForce().number();
+        desk.recommend(ruled, 12.5, false, present);
+        long same = desk.propose(address, desk.fields(now + 1), BIOLOGIST);
+        assertThat(desk.page(address + "/advice", APPROVER)).doesNotContain("The policy has changed since");
         jdbc.sql("insert into policy_version select 902, limit_fraction, ramp_line, ramp_target_fraction,"
                         + " ramp_low_fraction, ramp_high_fraction, catch_quantile, horizon_years, tolerance,"
                         + " steadiness_cap, carry_over, payback, 0, 0, 0, 0, rounding_share, rounding_least_kg,"
                         + " watch_from, strained_from, critical_from, pooled, interval_probability, created_at,"
                         + " created_by from policy_version where number = 1")
                 .update();
-        desk.recommend(stock, 12.5, false, 902);
-        long other = desk.propose(STOCK, desk.fields(now + 1), BIOLOGIST);
-        String page = desk.page(STOCK + "/advice", APPROVER);
+        desk.recommend(ruled, 12.5, false, 902);
+        long other = desk.propose(address, desk.fields(now + 1), BIOLOGIST);
+        String page = desk.page(address + "/advice", APPROVER);
         assertThat(page)
                 .containsOnlyOnce("The policy has changed since: the recommendation was made by version 902;"
-                        + " version 1 is in force.");
+                        + " version " + present + " is in force.");
         // a caution only
-        desk.act(other, "issue", "", APPROVER);
+        desk.act(other, "issue", "Agreed.", APPROVER);
         assertThat(desk.state(other)).isEqualTo("ISSUED");
         desk.act(same, "refuse", "Decided.", APPROVER);
     }

@@ -57,6 +57,17 @@ class DecisionsMigrationTest {
                 .isInstanceOf(DataIntegrityViolationException.class);
         assertThatThrownBy(() -> decide(jdbc, second, "ISSUED", "Twice."))
                 .isInstanceOf(DataIntegrityViolationException.class);
+        assertThatThrownBy(() -> close(jdbc, first, "null")).isInstanceOf(DataIntegrityViolationException.class);
+        assertThatThrownBy(() -> close(jdbc, first, "1")).isInstanceOf(DataIntegrityViolationException.class);
+        close(jdbc, first, "0");
+    }
+
+    private static void close(JdbcClient jdbc, long limit, String amount) {
+        jdbc.sql(
+                        "update catch_limit set purpose = 'closure', effective_at = created_at, set_aside_other_t = 0, amount = "
+                                + amount + " where id = ?")
+                .param(limit)
+                .update();
     }
 
     private static void decide(JdbcClient jdbc, long limit, String act, String reason) {
