@@ -55,7 +55,7 @@ class OutlookDrawings {
 
     /** For a column of paper. */
     String onPaper(AdviceWorking working, RiskCurve curve, String stock) {
-        return draw(working, curve, stock, 380, 220);
+        return draw(working, curve, stock, 380, 180);
     }
 
     private String draw(AdviceWorking working, RiskCurve curve, String stock, double width, double height) {
