@@ -97,6 +97,26 @@ public final class TestRegion {
         return id;
     }
 
+    /** Closes the stock from that moment on; its limit has been in force for a month until then. */
+    public long closure(long stock, int season, OffsetDateTime from) {
+        long before = jdbc.sql("select limit_id from limit_in_force where stock_id = ? and season_year = ?")
+                .params(stock, season)
+                .query(Long.class)
+                .single();
+        jdbc.sql("update limit_decision set effective_at = ? where limit_id = ? and act = 'ISSUED'")
+                .params(from.minusMonths(1), before)
+                .update();
+        jdbc.sql("delete from limit_in_force where limit_id = ?").param(before).update();
+        long id = limit(stock, season, 0);
+        jdbc.sql("update catch_limit set purpose = 'closure', effective_at = ?, valid_from = ? where id = ?")
+                .params(from, from.toLocalDate(), id)
+                .update();
+        jdbc.sql("update limit_decision set effective_at = ? where limit_id = ?")
+                .params(from, id)
+                .update();
+        return id;
+    }
+
     private static OffsetDateTime now() {
         return OffsetDateTime.now(ZoneOffset.UTC);
     }

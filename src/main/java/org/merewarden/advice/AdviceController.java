@@ -47,7 +47,7 @@ class AdviceController {
         this.settings = settings;
     }
 
-    @InitBinder({"form", "closure"})
+    @InitBinder({"form", "closure", "ask"})
     void binder(WebDataBinder binder) {
         FormBinding.prepare(binder);
     }
@@ -56,8 +56,7 @@ class AdviceController {
      * @param season for which season the form is; without it the one that is to be decided next
      * @param revise fills the form in with the season's limit, to be changed from a moment on
      * @param draft number of the draft that is gone on with
-     * @param own a catch of the reader's own, t/yr, to look at
-     * @param weak share of K in per cent at which growth is halved in the stress test
+     * @param ask what to look at besides
      */
     @GetMapping("/stocks/{lake}/{species}/advice")
     String show(
@@ -66,15 +65,15 @@ class AdviceController {
             @RequestParam @Nullable Integer season,
             @RequestParam(defaultValue = "false") boolean revise,
             @RequestParam @Nullable Long draft,
-            @RequestParam @Nullable Double own,
-            @RequestParam @Nullable Double weak,
+            @ModelAttribute("ask") AskForm ask,
+            BindingResult asked,
             Model model) {
         StockView stock = pages.stock(lake, species);
         int of = season == null ? recommendations.season(stock.id()) : season;
         if (of < 1800 || !recommendations.advisable(of)) {
             throw new NotFound("season " + of);
         }
-        return pages.fresh(stock, of, revise, Optional.ofNullable(draft), WhatIf.of(own, weak), model);
+        return pages.fresh(stock, of, revise, Optional.ofNullable(draft), ask.check(asked), model);
     }
 
     /** @param act draft or propose */

@@ -70,7 +70,7 @@ class AdvicePages {
         response.setStatus(HttpStatus.UNPROCESSABLE_CONTENT.value());
         List<LimitFile> files = history.files(stock.id());
         int season = Objects.requireNonNullElseGet(form.season, () -> recommendations.season(stock.id()));
-        return page(stock, form, closure, sources(stock, season, files), files, WhatIf.of(null, null), model);
+        return page(stock, form, closure, sources(stock, season, files), files, WhatIf.NOTHING, model);
     }
 
     /** The page once more with the closure as it was sent. */
@@ -96,11 +96,22 @@ class AdvicePages {
         model.addAttribute("inForce", advice.lede(stock));
         int looked =
                 recommendations.advisable(sources.season()) ? sources.season() : recommendations.season(stock.id());
-        model.addAttribute("outlook", outlook.page(stock, looked, ask));
+        model.addAttribute(
+                "outlook",
+                outlook.page(
+                        stock,
+                        looked,
+                        ask,
+                        sources.last()
+                                .map(file -> file.limit().reportedFraction())
+                                .orElse(1.0)));
         model.addAttribute("deciding", decisions.page(stock.id(), files));
         model.addAttribute("proposing", proposals.page(stock.id(), form, sources));
         model.addAttribute("form", form);
         model.addAttribute("closure", closure);
+        if (!model.containsAttribute("ask")) {
+            model.addAttribute("ask", new AskForm());
+        }
         return "advice/advice";
     }
 }

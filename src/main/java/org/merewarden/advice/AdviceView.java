@@ -33,8 +33,8 @@ class AdviceView {
     }
 
     private String lede(StockView stock, Optional<AssessmentView> assessment, Optional<LimitView> limit, int season) {
-        String allowed = limit.map(l -> text("advice.lede.limit", season(season), amount(l)))
-                .orElseGet(() -> text("advice.lede.noLimit", season(season)));
+        String allowed =
+                limit.map(l -> inForce(l, season)).orElseGet(() -> text("advice.lede.noLimit", season(season)));
         Optional<StandingView> standing = standings.of(stock.id());
         if (assessment.isEmpty()) {
             return allowed + " " + text("advice.lede.unassessed");
@@ -49,6 +49,12 @@ class AdviceView {
                 .orElse(allowed + " " + text("advice.lede.noDraws"));
     }
 
+    private String inForce(LimitView limit, int season) {
+        return limit.closure()
+                ? text("advice.lede.closed", season(season), Figures.dateTime(limit.effectiveAt()))
+                : text("advice.lede.limit", season(season), amount(limit));
+    }
+
     static String toBeLogged(NewLimit limit) {
         Double amount = limit.amount();
         return limit.kind().equals("catch") && amount != null
@@ -56,8 +62,8 @@ class AdviceView {
                 : Figures.UNKNOWN;
     }
 
-    static String amount(LimitView limit) {
-        return limit.amount() == null ? limit.kind() : Figures.withUnit(limit.amount(), limit.unit());
+    private static String amount(LimitView limit) {
+        return limit.amount() == null ? limit.kind() : Figures.decided(limit.amount(), limit.unit());
     }
 
     static String season(int season) {

@@ -74,7 +74,7 @@ class AlternativeRows {
     }
 
     private static Cell chance(double p, Policy policy) {
-        return new Cell(Figures.percent(p), p > policy.tolerance());
+        return new Cell(Figures.percentBeside(p, policy.tolerance()), p > policy.tolerance());
     }
 
     private static Cell biomass(Alternative a, int season, Policy policy) {

@@ -42,7 +42,7 @@ class Alternatives {
         all.add(held(outlook, texts.of("outlook.alternative.msy"), msy));
         Double own = ask.ownTonnes();
         if (own != null) {
-            all.add(held(outlook, texts.of("outlook.alternative.own", Figures.tonnes(own)), own));
+            all.add(held(outlook, texts.of("outlook.alternative.own", Figures.decided(own)), own));
         }
         return all;
     }
@@ -60,7 +60,7 @@ class Alternatives {
         // held for ever, F at or above g′(0) = r/n is a collapse course; a share of FMSY never is
         return alternative(
                 outlook,
-                texts.of("outlook.alternative.mortality", Figures.percent(share)),
+                texts.of("outlook.alternative.mortality", Figures.setPercent(share)),
                 null,
                 Course.ofMortality(mortality),
                 0.0);

@@ -10,6 +10,7 @@ import java.util.List;
 import java.util.Optional;
 import java.util.UUID;
 import org.jspecify.annotations.Nullable;
+import org.merewarden.core.policy.LimitArithmetic;
 import org.merewarden.core.policy.Policy;
 import org.merewarden.web.OfficeSettings;
 import org.merewarden.web.Seasons;
@@ -18,7 +19,6 @@ import org.springframework.stereotype.Component;
 /** Fills the form in with what is known, so that the usual limit takes a look and a reason. */
 @Component
 class LimitPrefill {
-    private static final double KILOGRAMS = 1000;
 
     private final Recommendations recommendations;
     private final LimitStore limits;
@@ -175,14 +175,9 @@ class LimitPrefill {
     }
 
     private static void setAsides(LimitForm form, Policy.SetAsides shares, double tonnes) {
-        form.subsistence = part(shares.subsistence(), tonnes);
-        form.angling = part(shares.angling(), tonnes);
-        form.research = part(shares.research(), tonnes);
-        form.other = part(shares.other(), tonnes);
-    }
-
-    /** Rounded down to whole kilograms, so that the parts are never more than the whole. */
-    private static double part(double share, double tonnes) {
-        return Math.floor(share * tonnes * KILOGRAMS) / KILOGRAMS;
+        form.subsistence = LimitArithmetic.setAside(shares.subsistence(), tonnes);
+        form.angling = LimitArithmetic.setAside(shares.angling(), tonnes);
+        form.research = LimitArithmetic.setAside(shares.research(), tonnes);
+        form.other = LimitArithmetic.setAside(shares.other(), tonnes);
     }
 }

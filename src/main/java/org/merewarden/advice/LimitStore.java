@@ -70,17 +70,6 @@ class LimitStore implements Limits {
     }
 
     @Override
-    public Optional<LimitView> beforeClosure(long stockId, int season) {
-        return jdbc.sql(VIEW + """
-                        where l.stock_id = ? and l.season_year = ? and l.purpose <> 'closure' and exists (
-                            select 1 from limit_decision s where s.limit_id = l.id and s.act = 'SUPERSEDED')
-                        order by d.id desc fetch first 1 row only""")
-                .params(stockId, season)
-                .query(LimitStore::view)
-                .optional();
-    }
-
-    @Override
     public List<AllocationView> allocations(int season) {
         return jdbc.sql(ALLOCATIONS + "join limit_in_force f on f.limit_id = a.limit_id where f.season_year = ?"
                         + " order by l.stock_id, c.name")

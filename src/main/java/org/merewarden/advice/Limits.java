@@ -9,9 +9,6 @@ public interface Limits {
 
     Optional<LimitView> inForce(long stockId, int season);
 
-    /** The limit that a closure within the season ended; empty where none was in force before it. */
-    Optional<LimitView> beforeClosure(long stockId, int season);
-
     /** All allocations of the limits in force in the season. */
     List<AllocationView> allocations(int season);
 

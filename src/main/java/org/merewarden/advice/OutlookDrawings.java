@@ -70,7 +70,9 @@ class OutlookDrawings {
         plot.line(List.of(new Point(0, tolerance), new Point(most, tolerance)), "level", "6 4")
                 .label(
                         new Point(most, tolerance),
-                        texts.of("outlook.curve.tolerance", Figures.percent(tolerance / 100)),
+                        texts.of(
+                                "outlook.curve.tolerance",
+                                Figures.setPercent(working.policy().tolerance())),
                         "end")
                 .line(line, "stable line0");
         upright(plot, msy, 98, texts.of("outlook.curve.fold"), "2 3");
@@ -95,7 +97,7 @@ class OutlookDrawings {
         return IntStream.rangeClosed(0, STEPS)
                 .mapToObj(i -> new RiskRow(
                         Figures.sig(curve.tonnes()[i]),
-                        Figures.percent(curve.risks()[i]),
+                        Figures.percentBeside(curve.risks()[i], working.policy().tolerance()),
                         curve.risks()[i] > working.policy().tolerance()))
                 .toList();
     }

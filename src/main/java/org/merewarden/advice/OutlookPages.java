@@ -3,6 +3,7 @@ package org.merewarden.advice;
 import java.util.ArrayList;
 import java.util.List;
 import java.util.Locale;
+import java.util.Map;
 import java.util.Optional;
 import org.jspecify.annotations.Nullable;
 import org.merewarden.advice.OutlookDrawings.RiskCurve;
@@ -11,6 +12,7 @@ import org.merewarden.assessment.AssessmentView;
 import org.merewarden.assessment.Assessments;
 import org.merewarden.core.evidence.EffortRecord;
 import org.merewarden.core.outlook.Course;
+import org.merewarden.core.policy.LimitArithmetic;
 import org.merewarden.core.policy.LimitRule;
 import org.merewarden.core.policy.Policy;
 import org.merewarden.core.policy.Recommendation;
@@ -47,24 +49,25 @@ class OutlookPages {
         this.texts = texts;
     }
 
-    OutlookPage page(StockView stock, int season, WhatIf ask) {
+    /** @param reportedFraction of the commercial removals that the logbook will show, in (0, 1] */
+    OutlookPage page(StockView stock, int season, WhatIf ask, double reportedFraction) {
         return adviser.work(stock.id(), season)
-                .map(working -> worked(stock, working, ask))
+                .map(working -> worked(stock, working, ask, reportedFraction))
                 .orElseGet(() -> nothing(stock, season, ask));
     }
 
-    private OutlookPage worked(StockView stock, AdviceWorking w, WhatIf ask) {
+    private OutlookPage worked(StockView stock, AdviceWorking w, WhatIf ask, double reportedFraction) {
         List<Alternative> all = alternatives.of(w, ask);
         RiskCurve curve = drawings.curve(w);
         return new OutlookPage(
                 w.season(),
                 w.policyNumber(),
-                Figures.percent(w.policy().intervalProbability()),
+                Figures.setPercent(w.policy().intervalProbability()),
                 lede(w),
                 cautions(w.assessment()),
                 words.of(w),
                 words.earlier(w),
-                parts(w),
+                parts(w, reportedFraction),
                 effort(w),
                 drawings.draw(w, curve, stock.title()),
                 drawings.rows(w, curve),
@@ -127,7 +130,7 @@ class OutlookPages {
             return texts.of(
                     r.provisional() ? "outlook.lede.provisional" : "outlook.lede.limit",
                     season,
-                    StepWords.exact(r.limitTonnes()),
+                    Figures.decided(r.limitTonnes()),
                     horizon,
                     Figures.chances(r.risk()));
         }
@@ -140,7 +143,7 @@ class OutlookPages {
                         season,
                         horizon,
                         Figures.chances(r.risk()),
-                        Figures.percent(policy.tolerance()))
+                        Figures.setPercent(policy.tolerance()))
                 + " "
                 + (recovery == null
                         ? texts.of("outlook.lede.never")
@@ -159,22 +162,35 @@ class OutlookPages {
         return cautions;
     }
 
-    private List<Part> parts(AdviceWorking w) {
+    /** From the limit to the logbook, as it would stand on the notice. */
+    private List<Part> parts(AdviceWorking w, double reportedFraction) {
         double limit = w.recommendation().limitTonnes();
         Policy.SetAsides set = w.policy().setAsides();
         List<Part> parts = new ArrayList<>();
-        parts.add(new Part(texts.of("outlook.part.limit"), StepWords.exact(limit)));
-        part("subsistence", set.subsistence() * limit).ifPresent(parts::add);
-        part("angling", set.angling() * limit).ifPresent(parts::add);
-        part("research", set.research() * limit).ifPresent(parts::add);
-        part("other", set.other() * limit).ifPresent(parts::add);
-        return parts.size() == 1 ? List.of() : parts;
+        parts.add(part("limit", limit));
+        double aside = 0;
+        for (var named : List.of(
+                Map.entry("subsistence", set.subsistence()),
+                Map.entry("angling", set.angling()),
+                Map.entry("research", set.research()),
+                Map.entry("other", set.other()))) {
+            double tonnes = LimitArithmetic.setAside(named.getValue(), limit);
+            aside += tonnes;
+            if (named.getValue() > 0) {
+                parts.add(part(named.getKey(), tonnes));
+            }
+        }
+        // a sum of kilograms in tonnes may pass the limit by a rounding error
+        double setAsides = Math.min(limit, aside);
+        parts.add(part("commercial", limit - setAsides));
+        parts.add(new Part(
+                texts.of("outlook.part.logged", Figures.setPercent(reportedFraction)),
+                Figures.decided(LimitArithmetic.toBeLogged(limit, setAsides, reportedFraction))));
+        return parts;
     }
 
-    private Optional<Part> part(String name, double tonnes) {
-        return tonnes > 0
-                ? Optional.of(new Part(texts.of("outlook.part." + name), StepWords.exact(tonnes)))
-                : Optional.empty();
+    private Part part(String name, double tonnes) {
+        return new Part(texts.of("outlook.part." + name), Figures.decided(tonnes));
     }
 
     /** For each series of effort whose catchability the assessment knows. */
@@ -208,12 +224,13 @@ class OutlookPages {
     private String stress(AdviceWorking w, WhatIf ask) {
         var weakened = w.outlook().withDepensation(ask.halfGrowth());
         double limit = w.recommendation().limitTonnes();
+        double tolerance = w.policy().tolerance();
         return texts.of(
                 "outlook.stress",
-                Figures.percent(ask.halfGrowth()),
-                StepWords.exact(limit),
-                Figures.percent(weakened.risk(Course.ofCatch(limit))),
-                Figures.percent(w.recommendation().risk()),
-                Figures.percent(weakened.risk(Course.CLOSURE)));
+                Figures.setPercent(ask.halfGrowth()),
+                Figures.decided(limit),
+                Figures.percentBeside(weakened.risk(Course.ofCatch(limit)), tolerance),
+                Figures.percentBeside(w.recommendation().risk(), tolerance),
+                Figures.percentBeside(weakened.risk(Course.CLOSURE), tolerance));
     }
 }

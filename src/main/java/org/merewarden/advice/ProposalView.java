@@ -77,7 +77,7 @@ class ProposalView {
                 .map(a -> texts.of(
                         a.provisional() ? "advice.recommended.provisional" : "advice.recommended",
                         season,
-                        Figures.tonnes(a.limitTonnes()),
+                        Figures.decided(a.limitTonnes()),
                         Integer.toString(a.policyNumber())))
                 .orElseGet(() -> texts.of("advice.recommended.nothing", season));
     }

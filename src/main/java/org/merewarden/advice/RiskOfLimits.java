@@ -1,6 +1,7 @@
 package org.merewarden.advice;
 
 import java.util.Optional;
+import org.merewarden.core.inference.Posterior;
 import org.merewarden.waterbody.StockView;
 import org.springframework.stereotype.Service;
 
@@ -17,12 +18,19 @@ public class RiskOfLimits {
         this.drawings = drawings;
     }
 
-    /** @param curve finished SVG for a column of paper */
-    public record Risk(String recommendation, String curve) {}
+    /**
+     * @param curve finished SVG for a column of paper
+     * @param posterior of the assessment that it rests on
+     */
+    public record Risk(String recommendation, String curve, long assessmentId, Posterior posterior) {}
 
-    /** For the season that is to be advised next; empty where the rule has nothing to work on. */
-    public Optional<Risk> of(StockView stock) {
-        return adviser.work(stock.id(), adviser.season(stock.id()))
-                .map(w -> new Risk(pages.lede(w), drawings.onPaper(w, drawings.curve(w), stock.title())));
+    /** @return empty where the rule has nothing to work on for the season */
+    public Optional<Risk> of(StockView stock, int season) {
+        return adviser.work(stock.id(), season)
+                .map(w -> new Risk(
+                        pages.lede(w),
+                        drawings.onPaper(w, drawings.curve(w), stock.title()),
+                        w.assessment().id(),
+                        w.outlook().posterior()));
     }
 }

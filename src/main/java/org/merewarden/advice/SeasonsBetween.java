@@ -24,10 +24,12 @@ class SeasonsBetween {
 
     private final SeasonInProgress log;
     private final Limits limits;
+    private final ClosedLimits closed;
 
-    SeasonsBetween(SeasonInProgress log, Limits limits) {
+    SeasonsBetween(SeasonInProgress log, Limits limits, ClosedLimits closed) {
         this.log = log;
         this.limits = limits;
+        this.closed = closed;
     }
 
     /** @param lastRemovals of the last assessed season, t; null where unknown */
@@ -41,7 +43,7 @@ class SeasonsBetween {
         Optional<SeasonInProgress.Logged> logged = log.logged(stockId, season);
         Optional<LimitView> limit = limits.inForce(stockId, season);
         if (limit.filter(LimitView::closure).isPresent()) {
-            return closed(season, logged, limits.beforeClosure(stockId, season));
+            return untilClosed(season, logged, closed.before(stockId, season));
         }
         if (logged.isPresent() && logged.get().paced()) {
             Basis basis = logged.get().over() ? Basis.LOGGED : Basis.LANDINGS;
@@ -61,7 +63,8 @@ class SeasonsBetween {
     }
 
     /** Nothing more is taken; what was, was taken under the limit that was closed. */
-    private static Between closed(int season, Optional<SeasonInProgress.Logged> logged, Optional<LimitView> before) {
+    private static Between untilClosed(
+            int season, Optional<SeasonInProgress.Logged> logged, Optional<LimitView> before) {
         double commercial = logged.map(SeasonInProgress.Logged::loggedTonnes).orElse(0.0);
         return new Between(season, removals(commercial, before), LATE_SLIPS, Basis.CLOSED);
     }

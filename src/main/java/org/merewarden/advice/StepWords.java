@@ -33,7 +33,7 @@ class StepWords {
         steps.add(new Step(risk(w), tonnes(r, Rule.RISK)));
         steps.add(new Step(steadiness(w), tonnes(r, Rule.STEADINESS)));
         steps.add(new Step(lastSeason(w), tonnes(r, Rule.RISK_AGAIN)));
-        steps.add(new Step(texts.of("outlook.step.rounding"), tonnes(r, Rule.ROUNDING)));
+        steps.add(new Step(texts.of("outlook.step.rounding"), Figures.decided(r.after(Rule.ROUNDING))));
         return steps;
     }
 
@@ -41,8 +41,8 @@ class StepWords {
         return exact(r.after(rule));
     }
 
-    /** A limit is a decision and not an estimate: four digits. */
-    static String exact(double tonnes) {
+    /** An amount on the way to the recommendation: four digits, one more than an estimate. */
+    private static String exact(double tonnes) {
         return Figures.digits(tonnes, 4) + "\u00a0t";
     }
 
@@ -66,7 +66,7 @@ class StepWords {
                 Figures.sig(q[1]),
                 Figures.sig(q[0]),
                 Figures.sig(q[2]),
-                Figures.percent(policy.intervalProbability())));
+                Figures.setPercent(policy.intervalProbability())));
         return String.join(" ", sentences);
     }
 
@@ -77,7 +77,7 @@ class StepWords {
                 : texts.of(
                         "outlook.between." + b.basis().name().toLowerCase(java.util.Locale.ROOT),
                         season,
-                        Figures.tonnes(b.tonnes()),
+                        b.basis() == Basis.LIMIT ? Figures.decided(b.tonnes()) : Figures.tonnes(b.tonnes()),
                         Figures.percent(b.cv()));
     }
 
@@ -86,18 +86,18 @@ class StepWords {
         Policy.Ramp ramp = policy.ramp();
         return texts.of(
                 ramp.line() == Policy.Line.CATCH ? "outlook.step.ramp.catch" : "outlook.step.ramp.mortality",
-                Figures.percent(ramp.line() == Policy.Line.CATCH ? ramp.lowFraction() : policy.limitFraction()),
-                Figures.percent(ramp.targetFraction()),
-                Figures.percent(ramp.highFraction()),
-                Figures.percent(policy.quantile()));
+                Figures.setPercent(ramp.line() == Policy.Line.CATCH ? ramp.lowFraction() : policy.limitFraction()),
+                Figures.setPercent(ramp.targetFraction()),
+                Figures.setPercent(ramp.highFraction()),
+                Figures.setPercent(policy.quantile()));
     }
 
     private String risk(AdviceWorking w) {
         Recommendation r = w.recommendation();
         Policy policy = w.policy();
         String horizon = String.valueOf(policy.horizonYears());
-        String tolerance = Figures.percent(policy.tolerance());
-        String limit = Figures.percent(policy.limitFraction());
+        String tolerance = Figures.setPercent(policy.tolerance());
+        String limit = Figures.setPercent(policy.limitFraction());
         if (Double.isNaN(r.ceilingTonnes())) {
             return texts.of("outlook.step.risk.closed", limit, horizon, tolerance);
         }
@@ -128,10 +128,10 @@ class StepWords {
         return texts.of(
                 "outlook.step.steady." + key,
                 season,
-                Figures.tonnes(before),
-                Figures.percent(cap),
-                Figures.tonnes((1 - cap) * before),
-                Figures.tonnes((1 + cap) * before));
+                Figures.decided(before),
+                Figures.setPercent(cap),
+                exact((1 - cap) * before),
+                exact((1 + cap) * before));
     }
 
     /** Under the floor because the floor is too risky. */
@@ -167,11 +167,11 @@ class StepWords {
             return texts.of("outlook.earlier.other", season);
         }
         return Double.isNaN(taken)
-                ? texts.of("outlook.earlier.unknown", season, exact(limit))
+                ? texts.of("outlook.earlier.unknown", season, Figures.decided(limit))
                 : texts.of(
                         taken > limit ? "outlook.earlier.over" : "outlook.earlier.within",
                         season,
-                        exact(limit),
+                        Figures.decided(limit),
                         Figures.tonnes(taken));
     }
 }

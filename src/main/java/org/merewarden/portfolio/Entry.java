@@ -16,6 +16,7 @@ import org.merewarden.waterbody.StockView;
  * @param assessment the latest; null where none is stored
  * @param standing null where no assessment has draws
  * @param limit the limit in force
+ * @param beforeClosure what was allowed until the stock was closed; null where it is open
  * @param uptake null where the season's log has nothing on the stock
  */
 record Entry(
@@ -24,6 +25,7 @@ record Entry(
         @Nullable AssessmentView assessment,
         @Nullable StandingView standing,
         @Nullable LimitView limit,
+        @Nullable LimitView beforeClosure,
         @Nullable UptakeView uptake) {
     static final String UNASSESSED = "unassessed";
     private static final String NO_REMOVALS = "none";
@@ -86,9 +88,28 @@ record Entry(
         return assessment == null ? null : assessment.bOverBmsy();
     }
 
+    boolean closedEarly() {
+        return limit != null && limit.closure();
+    }
+
+    /** What is allowed, or was until the stock was closed. */
+    @Nullable
+    LimitView allowed() {
+        return closedEarly() ? beforeClosure : limit;
+    }
+
+    /** Total removals allowed this season, t; until the closure where the stock is closed. */
     @Nullable
     Double limitTonnes() {
-        return limit == null ? null : limit.amountTonnes();
+        LimitView allowed = allowed();
+        return allowed == null ? null : allowed.amountTonnes();
+    }
+
+    /** Of it, what is to be logged. */
+    @Nullable
+    Double toBeLoggedTonnes() {
+        LimitView allowed = allowed();
+        return allowed == null ? null : allowed.toBeLoggedTonnes();
     }
 
     /** Live weight recorded in the season, t; null where there is neither a log nor a limit. */
@@ -104,7 +125,7 @@ record Entry(
     @Nullable
     Double takenShare() {
         Double taken = takenTonnes();
-        Double allowed = limit == null ? null : limit.toBeLoggedTonnes();
+        Double allowed = toBeLoggedTonnes();
         return taken == null || allowed == null || allowed == 0 ? null : taken / allowed;
     }
 }

@@ -18,6 +18,7 @@ import org.merewarden.assessment.Assessments;
 import org.merewarden.core.inference.Posterior;
 import org.merewarden.web.Figures;
 import org.merewarden.web.PdfPages;
+import org.merewarden.web.Seasons;
 import org.springframework.stereotype.Service;
 
 /** Brings together what a meeting looks at: chosen stocks in one table, then each on half a page. */
@@ -25,6 +26,8 @@ import org.springframework.stereotype.Service;
 class MeetingPacks {
     static final int MOST = 40;
     private static final int DRAWING_MILLIMETRES = 86;
+    /** Two stocks stand on a page: what is below the first two drawings has to be low. */
+    private static final int RISK_MILLIMETRES = 70;
 
     private final Portfolio portfolio;
     private final Assessments assessments;
@@ -34,6 +37,7 @@ class MeetingPacks {
     private final StockWords words;
     private final DiagramTexts diagrams;
     private final HistoryBuilder history;
+    private final Seasons seasons;
     private final Texts texts;
 
     MeetingPacks(
@@ -45,6 +49,7 @@ class MeetingPacks {
             StockWords words,
             DiagramTexts diagrams,
             HistoryBuilder history,
+            Seasons seasons,
             Texts texts) {
         this.portfolio = portfolio;
         this.assessments = assessments;
@@ -54,6 +59,7 @@ class MeetingPacks {
         this.words = words;
         this.diagrams = diagrams;
         this.history = history;
+        this.seasons = seasons;
         this.texts = texts;
     }
 
@@ -72,7 +78,15 @@ class MeetingPacks {
                 chosen.stream()
                         .map(e -> row(e, waiting.getOrDefault(e.stock().id(), List.of())))
                         .toList(),
-                chosen.stream().map(e -> sheet(e, season)).toList());
+                sheets(chosen, season));
+    }
+
+    /** The rule is asked for the current season, or for the next where a stock has its limit already. */
+    private List<MeetingPack.Sheet> sheets(List<Entry> chosen, int season) {
+        int current = seasons.current();
+        return chosen.stream()
+                .map(e -> sheet(e, season, season == current && e.limit() != null ? current + 1 : current))
+                .toList();
     }
 
     private MeetingPack.Row row(Entry e, List<Proposal> waiting) {
@@ -91,20 +105,21 @@ class MeetingPacks {
     }
 
     private String proposed(Proposal p) {
-        String amount = p.amount() == null ? texts.get("limit.measures") : Figures.withUnit(p.amount(), p.unit());
+        String amount = p.amount() == null ? texts.get("limit.measures") : Figures.decided(p.amount(), p.unit());
         return texts.get("pack.proposal", amount, Integer.toString(p.season()));
     }
 
-    private MeetingPack.Sheet sheet(Entry e, int season) {
+    private MeetingPack.Sheet sheet(Entry e, int season, int advised) {
         AssessmentView a = e.assessment();
-        Posterior posterior = a == null ? null : assessments.posterior(a.id());
+        Optional<RiskOfLimits.Risk> risk = risks.of(e.stock(), advised);
+        Posterior posterior = a == null ? null : posterior(a.id(), risk);
         String equilibrium = posterior == null || a == null ? null : equilibrium(e, a, posterior);
         String biomass = posterior == null || a == null || posterior.seasons() == 0
                 ? null
-                : drawing(
+                : PdfPages.drawing(
                         history.onPaper(posterior, assessments.evidence(a.id())),
-                        texts.get("pack.history", e.stock().title()));
-        Optional<RiskOfLimits.Risk> risk = risks.of(e.stock());
+                        texts.get("pack.history", e.stock().title()),
+                        DRAWING_MILLIMETRES);
         return new MeetingPack.Sheet(
                 e.stock().title(),
                 words.lede(e, season),
@@ -112,9 +127,16 @@ class MeetingPacks {
                 equilibrium,
                 biomass,
                 risk.map(RiskOfLimits.Risk::recommendation).orElse(null),
-                risk.map(r -> drawing(
-                                r.curve(), texts.get("pack.risk", e.stock().title())))
+                risk.map(r -> PdfPages.drawing(
+                                r.curve(), texts.get("pack.risk", e.stock().title()), RISK_MILLIMETRES))
                         .orElse(null));
+    }
+
+    /** Loaded once: the rule has it where it had something to work on. */
+    private Posterior posterior(long assessmentId, Optional<RiskOfLimits.Risk> risk) {
+        return risk.filter(r -> r.assessmentId() == assessmentId)
+                .map(RiskOfLimits.Risk::posterior)
+                .orElseGet(() -> assessments.posterior(assessmentId));
     }
 
     private @Nullable String equilibrium(Entry e, AssessmentView a, Posterior posterior) {
@@ -125,10 +147,9 @@ class MeetingPacks {
         ArrayList<String> said =
                 new ArrayList<>(List.of(texts.get("diagram.title", e.stock().title())));
         words.diagram(curve).forEach(t -> said.add(t.name() + ": " + t.text()));
-        return drawing(diagrams.onPaper(diagrams.diagram(List.of(curve), Axes.ABSOLUTE, 0)), String.join(". ", said));
-    }
-
-    private static String drawing(String svg, String said) {
-        return PdfPages.drawing(svg, said, DRAWING_MILLIMETRES);
+        return PdfPages.drawing(
+                diagrams.onPaper(diagrams.diagram(List.of(curve), Axes.ABSOLUTE, 0)),
+                String.join(". ", said),
+                DRAWING_MILLIMETRES);
     }
 }

@@ -7,6 +7,7 @@ import java.util.List;
 import java.util.Map;
 import java.util.Optional;
 import java.util.function.Function;
+import org.merewarden.advice.ClosedLimits;
 import org.merewarden.advice.LimitView;
 import org.merewarden.advice.Limits;
 import org.merewarden.advice.StandingView;
@@ -27,13 +28,21 @@ class Portfolio {
     private final Assessments assessments;
     private final Standings standings;
     private final Limits limits;
+    private final ClosedLimits closed;
     private final Uptakes uptakes;
 
-    Portfolio(Register register, Assessments assessments, Standings standings, Limits limits, Uptakes uptakes) {
+    Portfolio(
+            Register register,
+            Assessments assessments,
+            Standings standings,
+            Limits limits,
+            ClosedLimits closed,
+            Uptakes uptakes) {
         this.register = register;
         this.assessments = assessments;
         this.standings = standings;
         this.limits = limits;
+        this.closed = closed;
         this.uptakes = uptakes;
     }
 
@@ -47,6 +56,7 @@ class Portfolio {
         Map<Long, AssessmentView> latest = byStock(assessments.latest(), AssessmentView::stockId);
         Map<Long, StandingView> standing = byStock(standings.all(), StandingView::stockId);
         Map<Long, LimitView> inForce = byStock(limits.inForce(season), LimitView::stockId);
+        Map<Long, LimitView> before = closed.before(season);
         Map<Long, UptakeView> uptake = byStock(uptakes.ofSeason(season), UptakeView::stockId);
         return register.stocks().stream()
                 .map(s -> new Entry(
@@ -55,6 +65,7 @@ class Portfolio {
                         latest.get(s.id()),
                         standing.get(s.id()),
                         inForce.get(s.id()),
+                        before.get(s.id()),
                         uptake.get(s.id())))
                 .toList();
     }
@@ -64,12 +75,16 @@ class Portfolio {
     }
 
     private Entry entry(StockView stock, int season) {
+        Optional<LimitView> inForce = limits.inForce(stock.id(), season);
         return new Entry(
                 stock,
                 register.rightsOfStock(stock.id()),
                 assessments.latest(stock.id()).orElse(null),
                 standings.of(stock.id()).orElse(null),
-                limits.inForce(stock.id(), season).orElse(null),
+                inForce.orElse(null),
+                inForce.filter(LimitView::closure)
+                        .flatMap(l -> closed.before(stock.id(), season))
+                        .orElse(null),
                 uptakes.of(stock.id(), season).orElse(null));
     }
 

@@ -1,10 +1,13 @@
 package org.merewarden.portfolio;
 
+import java.time.LocalDateTime;
 import java.util.Arrays;
 import java.util.List;
 import java.util.stream.Stream;
 import org.jspecify.annotations.Nullable;
+import org.merewarden.advice.LimitView;
 import org.merewarden.assessment.AssessmentView;
+import org.springframework.context.i18n.LocaleContextHolder;
 import org.springframework.stereotype.Component;
 
 /** The shown rows as cells of a spreadsheet: numbers as numbers, one column for each end of an interval. */
@@ -25,6 +28,7 @@ class PortfolioSheet {
             "biomass-high",
             "limit",
             "limit-unit",
+            "closed",
             "taken",
             "evidence",
             "assessed");
@@ -74,9 +78,17 @@ class PortfolioSheet {
 
     private List<@Nullable Object> season(Entry e) {
         AssessmentView a = e.assessment();
+        LimitView limit = e.limit();
+        LimitView allowed = e.allowed();
         return cells(
-                e.limit() == null ? null : e.limit().amount(),
-                e.limit() == null ? null : e.limit().unit(),
+                allowed == null ? null : allowed.amount(),
+                allowed == null ? null : allowed.unit(),
+                limit != null && limit.closure()
+                        ? LocalDateTime.ofInstant(
+                                        limit.effectiveAt(),
+                                        LocaleContextHolder.getTimeZone().toZoneId())
+                                .toString()
+                        : null,
                 e.takenTonnes(),
                 a == null ? null : rows.strength(a.strength()),
                 a == null ? null : RowBuilder.madeOn(a).toString());

@@ -68,7 +68,7 @@ class PortfolioViews {
 
     private List<String> season(List<Entry> shown) {
         List<String> lede = new ArrayList<>();
-        lede.add(texts.get("lede.allowed", Figures.tonnes(sum(shown, Entry::limitTonnes))));
+        lede.add(texts.get("lede.allowed", Figures.decided(sum(shown, Entry::limitTonnes))));
         List<UptakeView> logs =
                 shown.stream().map(Entry::uptake).filter(Objects::nonNull).toList();
         String taken =

@@ -1,11 +1,13 @@
 package org.merewarden.portfolio;
 
+import java.time.LocalDate;
 import java.util.ArrayList;
 import java.util.Arrays;
 import java.util.List;
 import java.util.Map;
 import java.util.Objects;
 import java.util.function.Function;
+import java.util.stream.Collectors;
 import java.util.stream.Stream;
 import org.jspecify.annotations.Nullable;
 import org.merewarden.portfolio.SeasonReturn.Allowed;
@@ -30,7 +32,8 @@ class ReturnSheet {
             "without",
             "limit",
             "set-asides",
-            "to-be-logged");
+            "to-be-logged",
+            "closed");
 
     private final Texts texts;
     private final ReturnViews words;
@@ -95,7 +98,19 @@ class ReturnSheet {
     }
 
     private static List<@Nullable Object> allowed(Allowed a) {
-        return cells(a.stocks(), a.limits(), a.without(), a.tonnes(), a.setAsides(), a.toBeLogged());
+        return cells(
+                a.stocks(),
+                a.limits(),
+                a.without(),
+                a.tonnes(),
+                a.setAsides(),
+                a.toBeLogged(),
+                a.closed().isEmpty()
+                        ? null
+                        : a.closed().stream()
+                                .distinct()
+                                .map(LocalDate::toString)
+                                .collect(Collectors.joining("; ")));
     }
 
     private String part(String part) {

@@ -7,7 +7,8 @@ import java.util.List;
  *
  * @param empty nothing is removed and no limit set
  * @param removals cells district, species, sector, basis, stocks, recorded, corrected
- * @param limits cells district, species, stocks, limits, without, total removals, set-asides, to be logged
+ * @param limits cells district, species, stocks, limits, without, total removals, set-asides, to be logged,
+ *     remark
  */
 record ReturnView(
         String season,
@@ -19,6 +20,6 @@ record ReturnView(
         String earlier,
         String later) {
 
-    /** @param rows cells name, recorded, corrected, stocks, limits, without, total removals, set-asides, to be logged */
+    /** @param rows cells name, recorded, corrected, stocks, limits, without, total removals, set-asides, to be logged, remark */
     record Totals(String caption, String head, List<List<String>> rows) {}
 }

@@ -5,6 +5,7 @@ import java.util.List;
 import java.util.Map;
 import java.util.Objects;
 import java.util.function.Function;
+import java.util.stream.Collectors;
 import java.util.stream.Stream;
 import org.merewarden.portfolio.SeasonReturn.Allowed;
 import org.merewarden.portfolio.SeasonReturn.Place;
@@ -68,8 +69,11 @@ class ReturnViews {
         lede.add(texts.of(
                 "returns.lede.limits",
                 allowed.limits(),
-                Figures.tonnes(Objects.requireNonNullElse(allowed.tonnes(), 0.0)),
+                Figures.decided(Objects.requireNonNullElse(allowed.tonnes(), 0.0)),
                 allowed.without()));
+        if (!allowed.closed().isEmpty()) {
+            lede.add(texts.of("returns.lede.closed", allowed.closed().size()));
+        }
         if (r.unplacedTonnes() > 0) {
             lede.add(texts.of("returns.lede.unplaced", Figures.tonnes(r.unplacedTonnes())));
         }
@@ -89,21 +93,32 @@ class ReturnViews {
                 texts.of("returns.totals." + part), texts.of("returns.column." + part), List.copyOf(rows));
     }
 
-    private static List<String> total(String name, Removed removed, Allowed allowed) {
+    private List<String> total(String name, Removed removed, Allowed allowed) {
         return Stream.concat(
                         Stream.of(name, Figures.sig(removed.tonnes()), Figures.sig(removed.correctedTonnes())),
                         allowed(allowed))
                 .toList();
     }
 
-    private static Stream<String> allowed(Allowed a) {
+    private Stream<String> allowed(Allowed a) {
         return Stream.of(
                 Integer.toString(a.stocks()),
                 Integer.toString(a.limits()),
                 Integer.toString(a.without()),
-                Figures.sig(a.tonnes()),
-                Figures.sig(a.setAsides()),
-                Figures.sig(a.toBeLogged()));
+                Figures.decidedFigure(a.tonnes()),
+                Figures.decidedFigure(a.setAsides()),
+                Figures.decidedFigure(a.toBeLogged()),
+                closed(a));
+    }
+
+    private String closed(Allowed a) {
+        return a.closed().isEmpty()
+                ? ""
+                : texts.of(
+                        a.stocks() == 1 ? "returns.closed" : "returns.closed.some",
+                        a.closed().size(),
+                        a.stocks(),
+                        a.closed().stream().distinct().map(Figures::date).collect(Collectors.joining("; ")));
     }
 
     String district(String district) {

@@ -117,13 +117,16 @@ class RowBuilder {
         return Svg.lineWithBand(a.trend(), low, high, 1.0, title);
     }
 
-    /** Total removals allowed, an effort in its unit, or measures only. */
+    /** Total removals allowed, an effort in its unit, measures only, or from when the stock is closed. */
     String limit(@Nullable LimitView limit) {
         if (limit == null) {
             return "";
         }
+        if (limit.closure()) {
+            return texts.of("limit.closed", Figures.dateTime(limit.effectiveAt()));
+        }
         Double amount = limit.amount();
-        return amount == null ? texts.get("limit.measures") : Figures.withUnit(amount, limit.unit());
+        return amount == null ? texts.get("limit.measures") : Figures.decided(amount, limit.unit());
     }
 
     private static String taken(Entry e) {
@@ -132,13 +135,12 @@ class RowBuilder {
     }
 
     private String takenBar(Entry e) {
-        LimitView limit = e.limit();
         Double taken = e.takenTonnes();
-        Double allowed = limit == null ? null : limit.toBeLoggedTonnes();
+        Double allowed = e.toBeLoggedTonnes();
         return taken == null || allowed == null
                 ? ""
                 : Svg.barToLimit(
-                        taken, allowed, texts.get("taken.bar", Figures.tonnes(taken), Figures.tonnes(allowed)));
+                        taken, allowed, texts.get("taken.bar", Figures.tonnes(taken), Figures.decided(allowed)));
     }
 
     private static String known(@Nullable Double value) {

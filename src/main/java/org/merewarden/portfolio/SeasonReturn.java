@@ -49,19 +49,32 @@ record SeasonReturn(
             @Nullable Double correctedTonnes,
             boolean logged) {}
 
-    /** A registered stock with its limit, if there is one. */
-    record Limited(Place place, @Nullable LimitView limit) {}
+    /**
+     * A registered stock with its limit at the season's end, or before the closure that ended its season early.
+     *
+     * @param limit null where there is none
+     * @param closedOn null where the stock was not closed early
+     */
+    record Limited(
+            Place place,
+            @Nullable LimitView limit,
+            @Nullable LocalDate closedOn) {}
 
     /** Removals of some stocks. Corrected is null where it is unknown for one of them. */
     record Removed(int stocks, double tonnes, @Nullable Double correctedTonnes) {}
 
-    /** Limits of some stocks, of every kind; tonnes of the catch limits, null where there is none among them. */
+    /**
+     * Limits of some stocks, of every kind; tonnes of the catch limits, null where there is none among them.
+     *
+     * @param closed days on which some of the stocks were closed early, in order
+     */
     record Allowed(
             int stocks,
             int limits,
             @Nullable Double tonnes,
             @Nullable Double setAsides,
-            @Nullable Double toBeLogged) {
+            @Nullable Double toBeLogged,
+            List<LocalDate> closed) {
         int without() {
             return stocks - limits;
         }
@@ -143,7 +156,12 @@ record SeasonReturn(
                 limits.size(),
                 sum(catches, LimitView::amountTonnes, null),
                 sum(catches, LimitView::setAsidesTonnes, null),
-                sum(catches, LimitView::toBeLoggedTonnes, null));
+                sum(catches, LimitView::toBeLoggedTonnes, null),
+                some.stream()
+                        .map(Limited::closedOn)
+                        .filter(Objects::nonNull)
+                        .sorted()
+                        .toList());
     }
 
     private static <T> @Nullable Double sum(

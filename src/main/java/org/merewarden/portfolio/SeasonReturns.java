@@ -12,6 +12,7 @@ import java.util.Set;
 import java.util.function.Function;
 import java.util.stream.Collectors;
 import org.jspecify.annotations.Nullable;
+import org.merewarden.advice.ClosedLimits;
 import org.merewarden.advice.LimitView;
 import org.merewarden.advice.Limits;
 import org.merewarden.portfolio.SeasonReturn.Place;
@@ -22,6 +23,7 @@ import org.merewarden.waterbody.Register;
 import org.merewarden.waterbody.Species;
 import org.merewarden.waterbody.StockView;
 import org.merewarden.web.Seasons;
+import org.springframework.context.i18n.LocaleContextHolder;
 import org.springframework.stereotype.Service;
 
 /**
@@ -34,13 +36,21 @@ class SeasonReturns {
     private final RecordedCatches recorded;
     private final LoggedRemovals log;
     private final Limits limits;
+    private final ClosedLimits closed;
     private final Seasons seasons;
 
-    SeasonReturns(Register register, RecordedCatches recorded, LoggedRemovals log, Limits limits, Seasons seasons) {
+    SeasonReturns(
+            Register register,
+            RecordedCatches recorded,
+            LoggedRemovals log,
+            Limits limits,
+            ClosedLimits closed,
+            Seasons seasons) {
         this.register = register;
         this.recorded = recorded;
         this.log = log;
         this.limits = limits;
+        this.closed = closed;
         this.seasons = seasons;
     }
 
@@ -52,19 +62,31 @@ class SeasonReturns {
         Map<Long, Place> places = places();
         Map<Long, LimitView> inForce =
                 limits.inForce(season).stream().collect(Collectors.toMap(LimitView::stockId, Function.identity()));
+        Map<Long, LimitView> beforeClosure = closed.before(season);
         List<Logged> logged = log.ofSeason(season);
         return new SeasonReturn(
                 season,
                 seasons.current() > season,
                 removals(season, places, logged),
                 places.values().stream()
-                        .map(p -> new SeasonReturn.Limited(p, inForce.get(p.stock())))
+                        .map(p -> limited(p, inForce.get(p.stock()), beforeClosure.get(p.stock())))
                         .toList(),
                 logged.stream()
                         .filter(l -> l.stockId() == null)
                         .mapToDouble(Logged::tonnes)
                         .sum(),
                 lastLanding(logged));
+    }
+
+    /** Of a stock closed early the amount that was allowed until then is told, not the 0 t of the closure. */
+    private static SeasonReturn.Limited limited(
+            Place place, @Nullable LimitView inForce, @Nullable LimitView beforeClosure) {
+        if (inForce == null || !inForce.closure()) {
+            return new SeasonReturn.Limited(place, inForce, null);
+        }
+        LocalDate on = LocalDate.ofInstant(
+                inForce.effectiveAt(), LocaleContextHolder.getTimeZone().toZoneId());
+        return new SeasonReturn.Limited(place, beforeClosure == null ? inForce : beforeClosure, on);
     }
 
     private List<SeasonReturn.Removal> removals(int season, Map<Long, Place> places, List<Logged> logged) {

@@ -62,7 +62,7 @@ record StockCurve(
                 Spread.of(catches),
                 Spread.of(biomass),
                 cloud(catches, biomass),
-                entry.limitTonnes());
+                entry.closedEarly() ? null : entry.limitTonnes());
     }
 
     private static List<Point> points(EquilibriumCurve curve, boolean stable) {

@@ -52,11 +52,21 @@ class StockWords {
         if (limit == null) {
             return texts.get("stock.limit.none", year);
         }
+        if (limit.closure()) {
+            return closed(e, limit);
+        }
         if (limit.amount() == null) {
             return texts.get("stock.limit.measures", year);
         }
         boolean nothing = limit.amountTonnes() != null && limit.amountTonnes() == 0;
         return nothing ? texts.get("stock.limit.zero", year) : texts.get("stock.limit", rows.limit(limit), year);
+    }
+
+    private String closed(Entry e, LimitView closure) {
+        String from = Figures.dateTime(closure.effectiveAt());
+        return e.allowed() == null
+                ? texts.get("stock.limit.closed", from)
+                : texts.get("stock.limit.closed-after", from, rows.limit(e.allowed()));
     }
 
     private List<String> courses(Entry e) {
@@ -129,20 +139,26 @@ class StockWords {
         LimitView limit = e.limit();
         Double taken = e.takenTonnes();
         if (limit != null) {
-            terms.add(term("limit", rows.limit(limit)));
-            Double allowed = limit.toBeLoggedTonnes();
-            if (allowed != null) {
-                terms.add(term("set-asides", Figures.tonnes(limit.setAsidesTonnes())));
-                terms.add(term("to-be-logged", Figures.tonnes(allowed)));
+            terms.add(term("limit", e.closedEarly() ? closedLimit(e, limit) : rows.limit(limit)));
+            LimitView until = e.allowed();
+            if (until != null && until.toBeLoggedTonnes() != null) {
+                terms.add(term("set-asides", Figures.decided(until.setAsidesTonnes())));
+                terms.add(term("to-be-logged", Figures.decided(until.toBeLoggedTonnes())));
             }
         }
         terms.add(term("taken", taken == null ? texts.get("season.nothing") : Figures.tonnes(taken)));
-        Double allowed = limit == null ? null : limit.toBeLoggedTonnes();
-        if (allowed != null && allowed > 0 && taken != null) {
+        Double allowed = e.toBeLoggedTonnes();
+        if (allowed != null && allowed > 0 && taken != null && (!e.closedEarly() || taken > allowed)) {
             terms.add(term("left", left(allowed - taken)));
         }
         addRecords(terms, e.uptake());
         return terms;
+    }
+
+    private String closedLimit(Entry e, LimitView closure) {
+        return e.allowed() == null
+                ? rows.limit(closure)
+                : texts.get("season.closed", rows.limit(closure), rows.limit(e.allowed()));
     }
 
     private String left(double tonnes) {

@@ -185,6 +185,14 @@ final class EntryRules {
             }
             return;
         }
+        if (limit.closure() && c.entry().landedOn().isBefore(limit.validFrom())) {
+            // landed while the stock was open, under what was allowed then
+            limit = references.beforeClosure(stockId, c.season()).orElse(null);
+            if (limit == null) {
+                flags.add(Flag.NO_LIMIT);
+                return;
+            }
+        }
         double taken = references.taken(stockId, c.season()) + added;
         if (over(taken, limit.toBeLoggedTonnes())) {
             flags.add(Flag.OVER_LIMIT);

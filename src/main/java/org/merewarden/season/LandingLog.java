@@ -8,6 +8,7 @@ import java.util.Optional;
 import java.util.stream.IntStream;
 import org.merewarden.account.People;
 import org.merewarden.activity.ActivityLog;
+import org.merewarden.advice.ClosedLimits;
 import org.merewarden.advice.Limits;
 import org.merewarden.intake.Problem;
 import org.merewarden.season.LandingStore.Act;
@@ -32,6 +33,7 @@ class LandingLog {
     private final LandingStore store;
     private final Register register;
     private final Limits limits;
+    private final ClosedLimits closed;
     private final Seasons seasons;
     private final People people;
     private final ActivityLog activity;
@@ -42,6 +44,7 @@ class LandingLog {
             LandingStore store,
             Register register,
             Limits limits,
+            ClosedLimits closed,
             Seasons seasons,
             People people,
             ActivityLog activity,
@@ -50,6 +53,7 @@ class LandingLog {
         this.store = store;
         this.register = register;
         this.limits = limits;
+        this.closed = closed;
         this.seasons = seasons;
         this.people = people;
         this.activity = activity;
@@ -216,7 +220,7 @@ class LandingLog {
     }
 
     private EntryRules rules() {
-        return new EntryRules(register, seasons, new References.OneByOne(register, limits, store));
+        return new EntryRules(register, seasons, new References.OneByOne(register, limits, closed, store));
     }
 
     /** The same fish under a key of its own; weights and flags as they were, so that the log shows what was taken out. */

@@ -76,6 +76,11 @@ class LandingReply {
 
     private Optional<String> left(long stockId, int season) {
         Optional<LimitView> limit = limits.inForce(stockId, season);
+        if (limit.isPresent() && limit.get().closure()) {
+            String title = register.stock(stockId).map(StockView::title).orElse("");
+            return Optional.of(word(
+                    "season.reply.closed", title, Figures.dateTime(limit.get().effectiveAt())));
+        }
         Double toBeLogged = limit.map(LimitView::toBeLoggedTonnes).orElse(null);
         return toBeLogged == null ? Optional.empty() : Optional.of(left(stockId, season, toBeLogged));
     }
@@ -84,8 +89,8 @@ class LandingReply {
         double taken = store.taken(stockId, season) / 1000;
         String title = register.stock(stockId).map(StockView::title).orElse("");
         return taken > toBeLogged
-                ? word("season.reply.over", title, Figures.tonnes(taken - toBeLogged), Figures.tonnes(toBeLogged))
-                : word("season.reply.left", title, Figures.tonnes(toBeLogged - taken), Figures.tonnes(toBeLogged));
+                ? word("season.reply.over", title, Figures.tonnes(taken - toBeLogged), Figures.decided(toBeLogged))
+                : word("season.reply.left", title, Figures.tonnes(toBeLogged - taken), Figures.decided(toBeLogged));
     }
 
     private String word(String key, @Nullable Object... values) {

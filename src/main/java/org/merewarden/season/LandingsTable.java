@@ -12,6 +12,7 @@ import java.util.Map;
 import java.util.Objects;
 import java.util.stream.Collectors;
 import org.jspecify.annotations.Nullable;
+import org.merewarden.advice.ClosedLimits;
 import org.merewarden.advice.Limits;
 import org.merewarden.intake.Batch;
 import org.merewarden.intake.Fate;
@@ -34,12 +35,14 @@ class LandingsTable implements TableHandler {
     private final LandingStore store;
     private final Register register;
     private final Limits limits;
+    private final ClosedLimits closed;
     private final Seasons seasons;
 
-    LandingsTable(LandingStore store, Register register, Limits limits, Seasons seasons) {
+    LandingsTable(LandingStore store, Register register, Limits limits, ClosedLimits closed, Seasons seasons) {
         this.store = store;
         this.register = register;
         this.limits = limits;
+        this.closed = closed;
         this.seasons = seasons;
     }
 
@@ -147,7 +150,7 @@ class LandingsTable implements TableHandler {
     }
 
     private EntryRules rules() {
-        return new EntryRules(register, seasons, new References.Loaded(register, limits, store));
+        return new EntryRules(register, seasons, new References.Loaded(register, limits, closed, store));
     }
 
     private static Entry entry(TableRow row) {

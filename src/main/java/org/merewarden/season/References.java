@@ -7,6 +7,7 @@ import java.util.Optional;
 import java.util.Set;
 import java.util.function.Function;
 import java.util.stream.Collectors;
+import org.merewarden.advice.ClosedLimits;
 import org.merewarden.advice.LimitView;
 import org.merewarden.advice.Limits;
 import org.merewarden.waterbody.CooperativeView;
@@ -26,13 +27,16 @@ interface References {
 
     Optional<LimitView> limit(long stockId, int season);
 
+    /** The limit before the closure; empty where the stock is not closed. */
+    Optional<LimitView> beforeClosure(long stockId, int season);
+
     boolean anyLimit(int season);
 
     /** kg */
     double taken(long stockId, int season);
 
     /** One question, one statement. */
-    record OneByOne(Register register, Limits limits, LandingStore store) implements References {
+    record OneByOne(Register register, Limits limits, ClosedLimits closed, LandingStore store) implements References {
         @Override
         public Optional<WaterBodyView> water(String code) {
             return register.waterBody(code);
@@ -60,6 +64,11 @@ interface References {
         }
 
         @Override
+        public Optional<LimitView> beforeClosure(long stockId, int season) {
+            return closed.before(stockId, season);
+        }
+
+        @Override
         public boolean anyLimit(int season) {
             return !limits.inForce(season).isEmpty();
         }
@@ -73,6 +82,8 @@ interface References {
     /** Everything in a few statements, limits and uptake by season as they are asked for. */
     final class Loaded implements References {
         private final Limits limits;
+        private final ClosedLimits closed;
+        private final Map<Integer, Map<Long, LimitView>> beforeClosure = new HashMap<>();
         private final LandingStore store;
         private final Map<String, WaterBodyView> waters;
         private final Map<String, StockView> stocks;
@@ -81,8 +92,9 @@ interface References {
         private final Map<Integer, Map<Long, LimitView>> limitsOfSeason = new HashMap<>();
         private final Map<Integer, Map<Long, Double>> takenOfSeason = new HashMap<>();
 
-        Loaded(Register register, Limits limits, LandingStore store) {
+        Loaded(Register register, Limits limits, ClosedLimits closed, LandingStore store) {
             this.limits = limits;
+            this.closed = closed;
             this.store = store;
             waters = register.waterBodies().stream().collect(Collectors.toMap(WaterBodyView::code, w -> w));
             stocks = register.stocks().stream().collect(Collectors.toMap(StockView::key, s -> s));
@@ -113,6 +125,12 @@ interface References {
         @Override
         public Optional<LimitView> limit(long stockId, int season) {
             return Optional.ofNullable(limitsOf(season).get(stockId));
+        }
+
+        @Override
+        public Optional<LimitView> beforeClosure(long stockId, int season) {
+            return Optional.ofNullable(
+                    beforeClosure.computeIfAbsent(season, closed::before).get(stockId));
         }
 
         @Override

@@ -12,6 +12,7 @@ import java.util.function.Function;
 import java.util.stream.Collectors;
 import org.jspecify.annotations.Nullable;
 import org.merewarden.advice.AllocationView;
+import org.merewarden.advice.ClosedLimits;
 import org.merewarden.advice.LimitView;
 import org.merewarden.advice.Limits;
 import org.merewarden.season.Takings.ByCooperative;
@@ -30,6 +31,7 @@ class SeasonPage {
     private static final double NEARLY = 0.9;
 
     private final Limits limits;
+    private final ClosedLimits closed;
     private final Uptakes uptakes;
     private final Takings takings;
     private final Completeness completeness;
@@ -39,6 +41,7 @@ class SeasonPage {
 
     SeasonPage(
             Limits limits,
+            ClosedLimits closed,
             Uptakes uptakes,
             Takings takings,
             Completeness completeness,
@@ -46,6 +49,7 @@ class SeasonPage {
             Seasons seasons,
             MessageSource messages) {
         this.limits = limits;
+        this.closed = closed;
         this.uptakes = uptakes;
         this.takings = takings;
         this.completeness = completeness;
@@ -81,10 +85,16 @@ class SeasonPage {
     record Content(
             int season, List<String> lede, List<Row> rows, List<Share> shares, List<String> silent, String mixed) {}
 
-    /** One stock's figures before they become words. Tonnes; share is taken ÷ to be logged. */
+    /**
+     * One stock's figures before they become words. Tonnes; share is taken ÷ to be logged.
+     *
+     * @param limit in force, or in force until the closure
+     * @param closure null where the stock is open
+     */
     private record Line(
             StockView stock,
             @Nullable LimitView limit,
+            @Nullable LimitView closure,
             @Nullable UptakeView uptake,
             double taken,
             @Nullable Double toBeLogged,
@@ -127,20 +137,27 @@ class SeasonPage {
                 limits.inForce(season).stream().collect(Collectors.toMap(LimitView::stockId, Function.identity()));
         Map<Long, UptakeView> uptakeByStock =
                 views.stream().collect(Collectors.toMap(UptakeView::stockId, Function.identity()));
+        Map<Long, LimitView> before = closed.before(season);
         LocalDate today = seasons.today();
         List<Line> lines = new ArrayList<>();
         for (StockView stock : register.stocks()) {
-            LimitView limit = byStock.get(stock.id());
+            LimitView inForce = byStock.get(stock.id());
+            LimitView closure = inForce != null && inForce.closure() ? inForce : null;
+            LimitView limit = closure == null ? inForce : before.get(stock.id());
             UptakeView uptake = uptakeByStock.get(stock.id());
             double taken = uptake == null ? 0 : uptake.takenKg() / 1000;
-            if (limit != null || taken > 0) {
+            if (inForce != null || taken > 0) {
                 Double toBeLogged = limit == null ? null : limit.toBeLoggedTonnes();
                 LocalDate last = last(uptake, lastLandings.get(stock.id()));
-                LocalDate usedUp = limit == null || toBeLogged == null || last == null || today.isAfter(limit.validTo())
+                LocalDate usedUp = limit == null
+                                || closure != null
+                                || toBeLogged == null
+                                || last == null
+                                || today.isAfter(limit.validTo())
                         ? null
                         : StraightLinePace.usedUpOn(taken, toBeLogged, limit.validFrom(), last)
                                 .orElse(null);
-                lines.add(new Line(stock, limit, uptake, taken, toBeLogged, usedUp));
+                lines.add(new Line(stock, limit, closure, uptake, taken, toBeLogged, usedUp));
             }
         }
         lines.sort(Comparator.comparingDouble(Line::share).reversed());
@@ -153,24 +170,43 @@ class SeasonPage {
     }
 
     private List<String> lede(int season, List<Line> lines) {
-        List<Line> limited = lines.stream().filter(l -> l.toBeLogged != null).toList();
+        List<Line> limited = lines.stream()
+                .filter(l -> l.toBeLogged != null && l.closure == null)
+                .toList();
+        List<String> lede = new ArrayList<>();
         if (limited.isEmpty()) {
-            return List.of(word("season.lede.none", String.valueOf(season)));
+            lede.add(word("season.lede.none", String.valueOf(season)));
+        } else {
+            lede.addAll(use(limited));
         }
+        long shut = lines.stream().filter(l -> l.closure != null).count();
+        if (shut > 0) {
+            lede.add(word("season.lede.closed", shut));
+        }
+        sum(lines).ifPresent(lede::add);
+        return lede;
+    }
+
+    private List<String> use(List<Line> limited) {
         long over = limited.stream().filter(Line::over).count();
         long nearly =
                 limited.stream().filter(l -> !l.over() && l.share() >= NEARLY).count();
         long before = limited.stream()
                 .filter(l -> !l.over() && l.usedUpOn != null && !l.usedUpOn.isAfter(validTo(l)))
                 .count();
+        return List.of(word("season.lede.used", over, nearly, limited.size()), word("season.lede.pace", before));
+    }
+
+    /** Of a closed stock counts what was allowed until then. */
+    private Optional<String> sum(List<Line> lines) {
+        List<Line> limited = lines.stream().filter(l -> l.toBeLogged != null).toList();
         double allowed = limited.stream()
                 .mapToDouble(l -> Objects.requireNonNullElse(l.toBeLogged, 0.0))
                 .sum();
         double taken = limited.stream().mapToDouble(Line::taken).sum();
-        return List.of(
-                word("season.lede.used", over, nearly, limited.size()),
-                word("season.lede.pace", before),
-                word("season.lede.sum", Figures.tonnes(taken), Figures.tonnes(allowed)));
+        return limited.isEmpty()
+                ? Optional.empty()
+                : Optional.of(word("season.lede.sum", Figures.tonnes(taken), Figures.decided(allowed)));
     }
 
     private static LocalDate validTo(Line line) {
@@ -185,10 +221,10 @@ class SeasonPage {
                 line.stock.title(),
                 "/season/" + season + "/stocks/" + line.stock.lake() + "/" + line.stock.speciesKey(),
                 limit == null ? word("season.no-limit") : limitText(limit),
-                limit == null || toBeLogged == null ? "" : Figures.tonnes(limit.setAsidesTonnes()),
-                toBeLogged == null ? "" : Figures.tonnes(toBeLogged),
+                limit == null || toBeLogged == null ? "" : Figures.decided(limit.setAsidesTonnes()),
+                toBeLogged == null ? "" : Figures.decided(toBeLogged),
                 Figures.tonnes(line.taken),
-                toBeLogged == null ? "" : left(toBeLogged - line.taken),
+                left(line),
                 used,
                 toBeLogged == null ? "" : Svg.barToLimit(line.taken, toBeLogged, barTitle(line.taken, toBeLogged)),
                 line.uptake == null ? Figures.UNKNOWN : Figures.date(line.uptake.recordedUpTo()),
@@ -198,17 +234,26 @@ class SeasonPage {
     }
 
     private String barTitle(double taken, double toBeLogged) {
-        return word("season.bar", Figures.tonnes(taken), Figures.tonnes(toBeLogged));
+        return word("season.bar", Figures.tonnes(taken), Figures.decided(toBeLogged));
     }
 
     private String limitText(LimitView limit) {
         Double amount = limit.amountTonnes();
         if (amount != null) {
-            return Figures.tonnes(amount);
+            return Figures.decided(amount);
         }
         return limit.kind().equals("effort")
-                ? Figures.withUnit(limit.amount(), limit.unit())
+                ? Figures.decided(limit.amount(), limit.unit())
                 : word("season.measures-only");
+    }
+
+    private String left(Line line) {
+        Double toBeLogged = line.toBeLogged;
+        if (line.closure == null) {
+            return toBeLogged == null ? "" : left(toBeLogged - line.taken);
+        }
+        String closedFrom = word("limit.closed", Figures.dateTime(line.closure.effectiveAt()));
+        return toBeLogged != null && line.over() ? closedFrom + "; " + left(toBeLogged - line.taken) : closedFrom;
     }
 
     private String left(double tonnes) {
@@ -216,6 +261,9 @@ class SeasonPage {
     }
 
     private String pace(Line line) {
+        if (line.closure != null) {
+            return word("season.pace.closed");
+        }
         if (line.over()) {
             return word("season.pace.over");
         }
@@ -246,7 +294,7 @@ class SeasonPage {
         return new Share(
                 title,
                 a.cooperativeName(),
-                Figures.tonnes(allocated),
+                Figures.decided(allocated),
                 Figures.tonnes(taken),
                 left(allocated - taken),
                 recorded,

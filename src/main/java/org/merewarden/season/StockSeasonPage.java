@@ -5,7 +5,9 @@ import java.time.format.TextStyle;
 import java.util.ArrayList;
 import java.util.List;
 import java.util.Locale;
+import java.util.Optional;
 import org.jspecify.annotations.Nullable;
+import org.merewarden.advice.ClosedLimits;
 import org.merewarden.advice.LimitView;
 import org.merewarden.advice.Limits;
 import org.merewarden.waterbody.Register;
@@ -24,13 +26,21 @@ class StockSeasonPage {
 
     private final Register register;
     private final Limits limits;
+    private final ClosedLimits closed;
     private final Takings takings;
     private final Seasons seasons;
     private final MessageSource messages;
 
-    StockSeasonPage(Register register, Limits limits, Takings takings, Seasons seasons, MessageSource messages) {
+    StockSeasonPage(
+            Register register,
+            Limits limits,
+            ClosedLimits closed,
+            Takings takings,
+            Seasons seasons,
+            MessageSource messages) {
         this.register = register;
         this.limits = limits;
+        this.closed = closed;
         this.takings = takings;
         this.seasons = seasons;
         this.messages = messages;
@@ -52,7 +62,9 @@ class StockSeasonPage {
     Content of(int season, String lake, String speciesKey) {
         StockView stock =
                 register.stock(lake, speciesKey).orElseThrow(() -> new NotFound("stock " + lake + ":" + speciesKey));
-        Double toBeLogged = limits.inForce(stock.id(), season)
+        Optional<LimitView> inForce = limits.inForce(stock.id(), season);
+        Optional<LimitView> closure = inForce.filter(LimitView::closure);
+        Double toBeLogged = (closure.isPresent() ? closed.before(stock.id(), season) : inForce)
                 .map(LimitView::toBeLoggedTonnes)
                 .orElse(null);
         LocalDate start = seasons.start(season);
@@ -63,7 +75,7 @@ class StockSeasonPage {
                 season,
                 stock.title(),
                 stock.path(),
-                lede(season, taken, toBeLogged),
+                lede(season, taken, toBeLogged, closure),
                 chart.svg(
                         word("season.chart.title", stock.title(), String.valueOf(season)), word("season.chart.limit")),
                 chart.seasons(),
@@ -72,16 +84,22 @@ class StockSeasonPage {
                 "/landings/new?lake=" + Texts.encode(lake) + "&species=" + Texts.encode(speciesKey));
     }
 
-    private String lede(int season, double taken, @Nullable Double toBeLogged) {
+    private String lede(int season, double taken, @Nullable Double toBeLogged, Optional<LimitView> closure) {
+        if (closure.isPresent()) {
+            String from = Figures.dateTime(closure.get().effectiveAt());
+            return toBeLogged == null
+                    ? word("season.stock.lede.closed", Figures.tonnes(taken), from)
+                    : word("season.stock.lede.closed-after", Figures.tonnes(taken), Figures.decided(toBeLogged), from);
+        }
         if (toBeLogged == null) {
             return word("season.stock.lede.no-limit", Figures.tonnes(taken), String.valueOf(season));
         }
         return taken > toBeLogged
-                ? word("season.stock.lede.over", Figures.tonnes(taken), Figures.tonnes(toBeLogged))
+                ? word("season.stock.lede.over", Figures.tonnes(taken), Figures.decided(toBeLogged))
                 : word(
                         "season.stock.lede",
                         Figures.tonnes(taken),
-                        Figures.tonnes(toBeLogged),
+                        Figures.decided(toBeLogged),
                         Figures.tonnes(toBeLogged - taken));
     }
 

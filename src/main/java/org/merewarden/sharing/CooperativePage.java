@@ -9,6 +9,7 @@ import java.util.function.Function;
 import java.util.stream.Collectors;
 import org.jspecify.annotations.Nullable;
 import org.merewarden.advice.AllocationView;
+import org.merewarden.advice.ClosedLimits;
 import org.merewarden.advice.LimitView;
 import org.merewarden.advice.Limits;
 import org.merewarden.advice.PolicyInForce;
@@ -43,6 +44,7 @@ class CooperativePage {
 
     private final Register register;
     private final Limits limits;
+    private final ClosedLimits closed;
     private final Standings standings;
     private final Assessments assessments;
     private final Uptakes uptakes;
@@ -53,6 +55,7 @@ class CooperativePage {
     CooperativePage(
             Register register,
             Limits limits,
+            ClosedLimits closed,
             Standings standings,
             Assessments assessments,
             Uptakes uptakes,
@@ -61,6 +64,7 @@ class CooperativePage {
             MessageSource messages) {
         this.register = register;
         this.limits = limits;
+        this.closed = closed;
         this.standings = standings;
         this.assessments = assessments;
         this.uptakes = uptakes;
@@ -79,17 +83,24 @@ class CooperativePage {
     /**
      * What is known of one stock, for one cooperative. Tonnes.
      *
+     * @param limit in force; a closure, where the stock was closed
+     * @param beforeClosure what was allowed until then
      * @param limitFraction B lim / K of the policy in force
      */
     private record Known(
             StockView stock,
             @Nullable LimitView limit,
+            @Nullable LimitView beforeClosure,
             @Nullable AllocationView allocation,
             @Nullable AssessmentView assessment,
             @Nullable StandingView standing,
             double limitFraction,
             double ownTaken,
-            double allTaken) {}
+            double allTaken) {
+        boolean closed() {
+            return limit != null && limit.closure();
+        }
+    }
 
     Content of(long cooperativeId) {
         CooperativeView cooperative = register.cooperatives().stream()
@@ -107,6 +118,7 @@ class CooperativePage {
 
     private List<Known> known(long cooperativeId, int season, Map<Long, StockView> stocks) {
         var limitOf = byKey(limits.inForce(season), LimitView::stockId);
+        var beforeOf = closed.before(season);
         var allocationOf = byKey(
                 limits.allocations(season).stream()
                         .filter(a -> a.cooperativeId() == cooperativeId)
@@ -126,6 +138,7 @@ class CooperativePage {
                 all.add(new Known(
                         stock,
                         limitOf.get(id),
+                        beforeOf.get(id),
                         allocationOf.get(id),
                         assessmentOf.get(id),
                         standingOf.get(id),
@@ -144,13 +157,16 @@ class CooperativePage {
     private Block block(Known known, @Nullable LocalDate recorded) {
         LimitView limit = known.limit;
         Double toBeLogged = limit == null ? null : limit.toBeLoggedTonnes();
-        boolean usedUp = toBeLogged != null && known.allTaken >= toBeLogged;
+        boolean usedUp = !known.closed() && toBeLogged != null && known.allTaken >= toBeLogged;
         List<String> answer = new ArrayList<>();
+        if (limit != null && known.closed()) {
+            answer.add(word("sharing.closed", Figures.dateTime(limit.effectiveAt())));
+        }
         if (usedUp) {
             answer.add(word("sharing.all-used"));
         }
         answer.addAll(answer(known, recorded, usedUp));
-        return new Block(known.stock.title(), answer, usedUp, bar(known), why(known), terms(limit));
+        return new Block(known.stock.title(), answer, usedUp || known.closed(), bar(known), why(known), terms(limit));
     }
 
     private List<String> answer(Known known, @Nullable LocalDate recorded, boolean usedUp) {
@@ -159,12 +175,15 @@ class CooperativePage {
         if (known.limit == null) {
             return List.of(word("sharing.no-limit"), word("sharing.taken", taken, upTo));
         }
+        if (known.closed()) {
+            return List.of(word("sharing.taken", taken, upTo));
+        }
         if (known.allocation == null) {
             return List.of(word("sharing.taken", taken, upTo), word("sharing.not-allocated"));
         }
         double allocated = known.allocation.amountKg() / 1000.0;
         List<String> answer = new ArrayList<>();
-        answer.add(word("sharing.of-yours", taken, weight(allocated), upTo));
+        answer.add(word("sharing.of-yours", taken, allocated(known.allocation), upTo));
         double left = allocated - known.ownTaken;
         if (left <= 0) {
             answer.add(word("sharing.own-used"));
@@ -178,6 +197,12 @@ class CooperativePage {
     /** Kilograms below one tonne: that is what a scale at the landing place shows. */
     private static String weight(double tonnes) {
         return tonnes > 0 && tonnes < 1 ? Figures.withUnit(1000 * tonnes, "kg") : Figures.tonnes(tonnes);
+    }
+
+    /** A decided amount, in the unit of {@link #weight}. */
+    private static String allocated(AllocationView allocation) {
+        long kilograms = allocation.amountKg();
+        return kilograms < 1000 ? Figures.whole(kilograms, "kg") : Figures.decided(kilograms / 1000.0);
     }
 
     private String bar(Known known) {
@@ -231,8 +256,12 @@ class CooperativePage {
                     Figures.tonnes(levels.lessBelow)));
         }
         Double amount = known.limit == null ? null : known.limit.amountTonnes();
-        if (known.limit != null && amount != null) {
-            why.add(word("sharing.why.limit", Figures.tonnes(amount), Figures.tonnes(known.limit.setAsidesTonnes())));
+        if (known.limit != null && amount != null && !known.closed()) {
+            why.add(word("sharing.why.limit", Figures.decided(amount), Figures.decided(known.limit.setAsidesTonnes())));
+        }
+        LimitView before = known.beforeClosure;
+        if (known.closed() && before != null && before.amountTonnes() != null) {
+            why.add(word("sharing.why.before-closure", Figures.decided(before.amountTonnes())));
         }
         StandingView standing = known.standing;
         if (standing != null && amount != null && standing.removalsBasis().equals("limit")) {
@@ -254,8 +283,10 @@ class CooperativePage {
         List<String> terms = new ArrayList<>();
         terms.add(word("sharing.terms.valid", Figures.date(limit.validFrom()), Figures.date(limit.validTo())));
         Double amount = limit.amount();
-        if (amount != null) {
-            terms.add(word("sharing.terms.limit", Figures.withUnit(amount, limit.unit())));
+        if (limit.closure()) {
+            terms.add(word("sharing.terms.closed", Figures.dateTime(limit.effectiveAt())));
+        } else if (amount != null) {
+            terms.add(word("sharing.terms.limit", Figures.decided(amount, limit.unit())));
         }
         add(terms, "sharing.terms.measures", limit.measures());
         add(terms, "sharing.terms.basis", limit.legalBasis());

@@ -66,14 +66,25 @@ public final class Figures {
         return withUnit(tonnes, "t");
     }
 
-    /** A decided amount of tonnes, which is no estimate: to the kilogram, with its unit. */
+    /** A decided or recommended amount of tonnes, which is no estimate: to the kilogram, with its unit. */
     public static String decided(@Nullable Double tonnes) {
-        if (tonnes == null || !Double.isFinite(tonnes)) {
+        return decided(tonnes, "t");
+    }
+
+    /** A decided amount in any unit, to three decimals; {@link #decidedFigure} with the unit, kept on one line. */
+    public static String decided(@Nullable Double amount, String unit) {
+        String figure = decidedFigure(amount);
+        return figure.equals(UNKNOWN) ? UNKNOWN : figure + NO_BREAK_SPACE + unit;
+    }
+
+    /** A decided amount without its unit, for columns that name it. */
+    public static String decidedFigure(@Nullable Double amount) {
+        if (amount == null || !Double.isFinite(amount)) {
             return UNKNOWN;
         }
         NumberFormat format = NumberFormat.getNumberInstance(locale());
         format.setMaximumFractionDigits(3);
-        return format.format(tonnes) + NO_BREAK_SPACE + "t";
+        return format.format(amount);
     }
 
     /** All digits of a whole number with its unit: "12,345 kg". */
@@ -111,6 +122,35 @@ public final class Figures {
         }
         // no minus sign before a zero
         return format.format(share <= 0 && share > -0.005 ? 0.0 : share);
+    }
+
+    /** A share that was set and not estimated: per cent with up to two decimals, "7.5%", "10%". */
+    public static String setPercent(@Nullable Double share) {
+        return share == null || !Double.isFinite(share) ? UNKNOWN : percent(share, 2, RoundingMode.HALF_EVEN);
+    }
+
+    /**
+     * A chance beside a bound that was set: as {@link #percent}, but never rounded to the other side of the bound. What is
+     * above it then has one decimal, rounded up, and what is not has up to two.
+     *
+     * @param bound with at most two decimals of a per cent
+     */
+    public static String percentBeside(@Nullable Double chance, double bound) {
+        if (chance == null || !Double.isFinite(chance) || chance == bound) {
+            return chance == null ? UNKNOWN : setPercent(chance);
+        }
+        boolean above = chance > bound;
+        boolean roundedAbove = Math.rint(100 * chance) / 100 > bound + 1e-12;
+        if (above == roundedAbove) {
+            return percent(chance);
+        }
+        return above ? percent(chance, 1, RoundingMode.CEILING) : setPercent(chance);
+    }
+
+    private static String percent(double share, int decimals, RoundingMode rounding) {
+        NumberFormat format = NumberFormat.getPercentInstance(locale());
+        format.setMaximumFractionDigits(decimals);
+        return format.format(BigDecimal.valueOf(share).setScale(decimals + 2, rounding));
     }
 
     /** A probability in natural frequencies: "about 1 of 6 cases". */

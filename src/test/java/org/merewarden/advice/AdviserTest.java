@@ -45,6 +45,12 @@ class AdviserTest {
     private Adviser adviser;
 
     @Autowired
+    private StepWords words;
+
+    @Autowired
+    private OutlookDrawings drawings;
+
+    @Autowired
     private SeasonInProgress log;
 
     @Autowired
@@ -215,14 +221,18 @@ class AdviserTest {
         String page = page("");
         assertThat(page)
                 .contains("For season " + (current + 1) + " the rule recommends a limit of "
-                        + StepWords.exact(r.limitTonnes()))
+                        + Figures.decided(r.limitTonnes()))
                 .contains("the full limit of " + Figures.tonnes(16.0))
                 .contains(Figures.tonnes(r.ceilingTonnes()))
                 .contains(Figures.percent(r.risk()))
                 .contains("Risk curve of")
                 .contains("Biomass ahead of");
         for (Recommendation.Step step : r.steps()) {
-            assertThat(page).contains(StepWords.exact(step.tonnes()));
+            assertThat(page)
+                    .contains(
+                            step.rule() == Recommendation.Rule.ROUNDING
+                                    ? Figures.decided(step.tonnes())
+                                    : Figures.digits(step.tonnes(), 4) + "\u00a0t");
         }
     }
 
@@ -241,9 +251,70 @@ class AdviserTest {
     }
 
     @Test
-    void whatCannotBeAskedIsNotAsked() throws Exception {
+    void whatCannotBeAskedIsNamedAtItsField() throws Exception {
         assessed();
-        assertThat(page("?own=-5&weak=0")).doesNotContain("yours:").contains("halved at 10% of K");
+        assertThat(page("?own=-5&weak=0"))
+                .doesNotContain("yours:")
+                .contains("halved at 10% of K")
+                .contains("“-5” cannot be looked at: a catch is 0 to 10,000,000 t a year.")
+                .contains("“0” cannot be looked at: growth is halved at more than 0 and at most 100 % of K.")
+                .contains("value=\"-5\"", "value=\"0\"", "aria-describedby=\"own-error\"");
+        assertThat(page("?own=two&weak=101"))
+                .doesNotContain("yours:")
+                .contains("“two”", "value=\"two\"", "“101” cannot be looked at", "value=\"101\"");
+        assertThat(page("?own=2,5")).contains("yours: 2.5\u00a0t").doesNotContain("cannot be looked at");
+    }
+
+    /** Reported fraction of the last limit 0.8, nothing set aside by the policy. */
+    @Test
+    void theAmountToBeLoggedIsAlwaysShown() throws Exception {
+        assessed();
+        double limit =
+                adviser.work(stock, current).orElseThrow().recommendation().limitTonnes();
+        assertThat(page("?season=" + current))
+                .contains("left for commercial removals</dt><dd>" + Figures.decided(limit))
+                .contains("of them to be logged (100% are expected to be reported)</dt><dd>" + Figures.decided(limit));
+        long before = region.limit(stock, current - 1, 20);
+        jdbc.sql("update catch_limit set reported_fraction = 0.8 where id = ?")
+                .param(before)
+                .update();
+        limit = adviser.work(stock, current).orElseThrow().recommendation().limitTonnes();
+        assertThat(page("?season=" + current))
+                .contains("of them to be logged (80% are expected to be reported)</dt><dd>"
+                        + Figures.decided(0.8 * limit));
+    }
+
+    /** Constants of the policy with decimals, and what it sets aside in whole kilograms. */
+    @Test
+    void constantsKeepTheirDecimals() {
+        assessed();
+        Policy d = Policy.DEFAULT;
+        Policy policy = new Policy(
+                d.limitFraction(),
+                d.ramp(),
+                0.375,
+                d.horizonYears(),
+                0.075,
+                d.steadinessCap(),
+                d.lastSeason(),
+                new Policy.SetAsides(0.125, 0, 0, 0),
+                d.rounding(),
+                d.standing(),
+                d.pooled(),
+                d.intervalProbability());
+        AdviceWorking working = adviser.work(stock, current, policy, 1).orElseThrow();
+        assertThat(words.of(working))
+                .extracting(OutlookPage.Step::text)
+                .anyMatch(t -> t.contains("the 37.5% quantile"));
+        assertThat(words.of(working))
+                .extracting(OutlookPage.Step::text)
+                .anyMatch(t -> t.startsWith("Risk") && t.contains("7.5%"))
+                .noneMatch(t -> t.contains("8%"));
+        assertThat(drawings.draw(working, drawings.curve(working), "perch")).contains("tolerated: 7.5%");
+        for (OutlookPage.RiskRow row : drawings.rows(working, drawings.curve(working))) {
+            double shown = Double.parseDouble(row.chance().replaceAll("[%<>]", ""));
+            assertThat(shown > 7.5).as(row.chance()).isEqualTo(row.above());
+        }
     }
 
     @Test

@@ -6,6 +6,7 @@ import java.util.List;
 import java.util.Locale;
 import java.util.Map;
 import java.util.Random;
+import org.jspecify.annotations.Nullable;
 import org.merewarden.advice.LimitView;
 import org.merewarden.advice.StandingView;
 import org.merewarden.assessment.AssessmentView;
@@ -151,13 +152,42 @@ final class Made {
         return limit(stockId, "catch", tonnes, "t");
     }
 
+    /** The stock is closed from 5 June 2026, 14:00. */
+    static LimitView closure(long stockId) {
+        return new LimitView(
+                900 + stockId,
+                stockId,
+                2026,
+                "catch",
+                0.0,
+                "t",
+                0,
+                1,
+                0.0,
+                LocalDate.of(2026, 6, 5),
+                LocalDate.of(2026, 12, 31),
+                null,
+                null,
+                null,
+                "for a test",
+                Instant.EPOCH,
+                "anna",
+                "closure",
+                Instant.parse("2026-06-05T14:00:00Z"));
+    }
+
+    /** Closed after the limit was in force. */
+    static Entry closed(StockView stock, AssessmentView a, StandingView s, @Nullable LimitView before, UptakeView u) {
+        return new Entry(stock, List.of(), a, s, closure(stock.id()), before, u);
+    }
+
     static UptakeView uptake(long stockId, double kg, String upTo, String... silent) {
         return new UptakeView(stockId, kg, upTo == null ? null : LocalDate.parse(upTo), List.of(silent));
     }
 
     static Entry entry(StockView stock, AssessmentView a, StandingView s, LimitView l, UptakeView u) {
         return new Entry(
-                stock, List.of(new RightView(7, "north-coop", "North Cooperative", stock.id(), 100)), a, s, l, u);
+                stock, List.of(new RightView(7, "north-coop", "North Cooperative", stock.id(), 100)), a, s, l, null, u);
     }
 
     /** 200 draws about the given values over six seasons, biomass at BMSY, F at FMSY. */

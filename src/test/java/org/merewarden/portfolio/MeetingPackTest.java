@@ -19,6 +19,7 @@ import org.junit.jupiter.api.TestInstance;
 import org.merewarden.Demonstration;
 import org.merewarden.DemonstrationApplication;
 import org.merewarden.Paper;
+import org.merewarden.StatementCount;
 import org.merewarden.advice.Limits;
 import org.merewarden.assessment.AssessmentView;
 import org.merewarden.web.Figures;
@@ -33,6 +34,7 @@ import org.springframework.test.web.servlet.ResultActions;
 @TestInstance(TestInstance.Lifecycle.PER_CLASS)
 class MeetingPackTest {
     private static final Rectangle WITHIN = new Rectangle(14, 5, 182, 287);
+    private static final int EACH = 13;
     private static final String ADDRESS = "/portfolio/pack.pdf";
 
     @Autowired
@@ -157,6 +159,20 @@ class MeetingPackTest {
                         + " values (?, ?, current_timestamp, 'test', current_timestamp, 'for a test')")
                 .params(id, act)
                 .update();
+    }
+
+    @Test
+    void eachStockCostsTheSameFewStatements() throws Exception {
+        List<String> keys = portfolio.entries(limits.presentSeason()).stream()
+                .filter(e -> e.assessment() != null)
+                .map(e -> e.stock().key())
+                .limit(5)
+                .toList();
+        pack(keys).close();
+        int one = StatementCount.during(() -> pack(keys.subList(0, 1)).close());
+        int five = StatementCount.during(() -> pack(keys).close());
+        assertThat(five - one).isLessThanOrEqualTo(4 * EACH);
+        assertThat(one).isLessThanOrEqualTo(EACH + 30);
     }
 
     @Test

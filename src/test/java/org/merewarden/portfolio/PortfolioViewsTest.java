@@ -164,6 +164,18 @@ class PortfolioViewsTest {
         assertThat(view.csvAddress()).isEqualTo("/portfolio.csv?district=North");
     }
 
+    /** 12.5 t until the closure of one stock, 7 t of another. */
+    @Test
+    void whatWasAllowedUntilAClosureCounts() {
+        Entry closed = Made.closed(watched.stock(), null, null, Made.catchLimit(1, 12.5), null);
+        Entry open = Made.entry(watched.stock(), null, null, Made.catchLimit(1, 7), null);
+        assertThat(views.view(List.of(closed, open), PortfolioQuery.ALL).lede().get(1))
+                .isEqualTo("19.5\u00a0t are allowed this season;");
+        List<Object> cells =
+                new PortfolioSheet(texts, rows).rows(List.of(closed)).get(0);
+        assertThat(cells.subList(12, 15)).containsExactly(12.5, "t", "2026-06-05T14:00");
+    }
+
     @Test
     void theSheetHoldsTheSameAsNumbers() {
         List<Object> cells =
@@ -184,6 +196,7 @@ class PortfolioViewsTest {
                         1.5,
                         12.0,
                         "t",
+                        null,
                         3.4,
                         "strong",
                         "2026-02-03");

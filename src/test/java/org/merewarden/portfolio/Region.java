@@ -6,6 +6,7 @@ import static org.mockito.Mockito.when;
 import java.util.ArrayList;
 import java.util.List;
 import java.util.Optional;
+import org.merewarden.advice.ClosedLimits;
 import org.merewarden.advice.Limits;
 import org.merewarden.advice.Standings;
 import org.merewarden.assessment.AssessmentView;
@@ -84,7 +85,7 @@ final class Region {
     }
 
     Portfolio portfolio() {
-        return new Portfolio(register, assessments, standings, limits, uptakes);
+        return new Portfolio(register, assessments, standings, limits, mock(ClosedLimits.class), uptakes);
     }
 
     Comparison comparison() {

@@ -35,6 +35,7 @@ class ReturnPagesTest {
     private static final String WEST = "=West Return";
     private static final int OVER = 1901;
     private static final int RUNNING = 2199;
+    private static final int CLOSED = 1903;
 
     @Autowired
     private MockMvc mvc;
@@ -69,6 +70,9 @@ class ReturnPagesTest {
         landing("e", RUNNING, eastGrayling, "angling", 60, "seized");
         landing("f", RUNNING, null, "commercial", 33, "kept");
         region.limit(westGrayling, RUNNING, 5);
+        region.limit(eastGrayling, CLOSED, 9.125);
+        region.closure(eastGrayling, CLOSED, OffsetDateTime.parse("1903-06-05T14:00Z"));
+        region.limit(westGrayling, CLOSED, 3);
     }
 
     private long lake(String code, String district) {
@@ -187,6 +191,25 @@ class ReturnPagesTest {
                 .containsEntry(CORRECTED, "")
                 .containsEntry("limits", "1")
                 .containsEntry("stocks", "2");
+    }
+
+    /** The closure’s 0 t is not what was allowed: 9.125 t + 3 t. */
+    @Test
+    void aStockClosedEarlyCountsWithTheLimitThatHeldUntilThen() throws Exception {
+        List<Map<String, String>> rows = csv(CLOSED);
+        String remark = "closed on (the limit is the one until then)";
+        assertThat(row(rows, "limits", "East Return"))
+                .containsEntry("total removals allowed, t", "9.125")
+                .containsEntry("amount to be logged, t", "9.125")
+                .containsEntry(remark, "1903-06-05");
+        assertThat(row(rows, "limits", "'" + WEST))
+                .containsEntry("total removals allowed, t", "3.0")
+                .containsEntry(remark, "");
+        assertThat(row(rows, "total")).containsEntry("total removals allowed, t", "12.125");
+        assertThat(page("/returns/" + CLOSED))
+                .contains("2 limits are in force, of 12.125 t of total removals")
+                .contains("One stock was closed early; it counts with the limit that held until then.")
+                .contains(">closed on 5 Jun 1903<", ">1 of 2 stocks closed on 5 Jun 1903<");
     }
 
     @Test

@@ -78,6 +78,32 @@ class StockPagesTest {
     }
 
     @Test
+    void aClosedStockIsCalledClosedAndNotOver() {
+        Entry closed = Made.closed(
+                ALDER,
+                Made.assessment(1, 20, 0.9, "FAIR"),
+                Made.standing(1, "WATCH", 0.4),
+                Made.catchLimit(1, 12.346),
+                Made.uptake(1, 3400, "2026-06-01"));
+        StockWords words = new StockWords(Made.texts(), new RowBuilder(Made.texts()));
+        assertThat(words.lede(closed, 2026))
+                .contains("The stock is closed from 5 Jun 2026, 14:00: nothing may be taken until the season ends;"
+                        + " 12.346\u00a0t were allowed before.");
+        List<StockPage.Term> season = words.season(closed);
+        assertThat(text(season, "Limit, all removals"))
+                .isEqualTo("closed from 5 Jun 2026, 14:00; 12.346\u00a0t until then");
+        assertThat(season).extracting(StockPage.Term::name).doesNotContain("Left");
+        PortfolioView.Row row = new RowBuilder(Made.texts()).row(closed);
+        assertThat(row.limit()).isEqualTo("closed from 5 Jun 2026, 14:00");
+        // (12.346 − 1) · 0.9
+        assertThat(row.takenBar()).contains("3.4\u00a0t of 10.211\u00a0t to be logged");
+        assertThat(closed.limitTonnes()).isEqualTo(12.346);
+        StockPage.Term alone =
+                words.season(Made.closed(ALDER, null, null, null, null)).get(0);
+        assertThat(alone.text()).isEqualTo("closed from 5 Jun 2026, 14:00");
+    }
+
+    @Test
     void explainsFoldTippingBiomassAndReturnTime() {
         StockPage page = page(assessed(), SIX_SEASONS);
         assertThat(text(page.words(), "Fold")).startsWith("No more than about 20\u00a0t a year can last");

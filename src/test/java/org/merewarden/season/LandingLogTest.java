@@ -131,6 +131,19 @@ class LandingLogTest {
         assertThat(taken()).isCloseTo(2000.5, within(1e-9));
     }
 
+    /** 2,000 kg could be logged until the closure. */
+    @Test
+    void whatWasLandedBeforeTheClosureIsMeasuredByTheLimitUntilThen() {
+        java.time.OffsetDateTime tomorrow = today.plusDays(1).atTime(6, 0).atOffset(java.time.ZoneOffset.UTC);
+        long closure = new org.merewarden.TestRegion(jdbc).closure(at.perch, seasons.current(), tomorrow);
+        assertThat(stored("FPE", 1500).flags()).isEmpty();
+        assertThat(stored("FPE", 501).flags()).containsExactly(Flag.OVER_LIMIT);
+        jdbc.sql("update catch_limit set valid_from = ? where id = ?")
+                .params(today, closure)
+                .update();
+        assertThat(stored("FPE", 1).flags()).containsExactly(Flag.OVER_LIMIT);
+    }
+
     @Test
     void theUnlistedUnlimitedMixedAndSeizedAreStoredAndFlagged() {
         assertThat(stored("PLN", 5).flags()).containsExactly(Flag.NO_LIMIT, Flag.NO_RIGHT);

@@ -10,8 +10,11 @@ import static org.springframework.test.web.servlet.result.MockMvcResultMatchers.
 import static org.springframework.test.web.servlet.result.MockMvcResultMatchers.status;
 
 import java.time.LocalDate;
+import java.time.OffsetDateTime;
+import java.time.format.DateTimeFormatter;
 import java.util.HashMap;
 import java.util.List;
+import java.util.Locale;
 import java.util.Map;
 import org.junit.jupiter.api.BeforeEach;
 import org.junit.jupiter.api.Test;
@@ -161,6 +164,59 @@ class SeasonPagesTest {
                 .contains(",2400.0,")
                 .doesNotContain(",2500.0,");
         assertThat(page("/landings/" + id + "/correct")).contains("corrected or withdrawn already");
+    }
+
+    /** Of 2 t that could be logged 1.5 t were, then the stock was closed: nobody ran over anything. */
+    @Test
+    void aClosedStockIsCalledClosedAndNotOver() throws Exception {
+        String lede = page("/season/" + season);
+        String next = mvc.perform(slip(LogFixture.key(), "1500"))
+                .andReturn()
+                .getResponse()
+                .getRedirectedUrl();
+        new org.merewarden.TestRegion(jdbc)
+                .closure(at.perch, season, OffsetDateTime.parse(today.minusDays(1) + "T14:00Z"));
+        String day = today.minusDays(1).format(DateTimeFormatter.ofPattern("d MMM yyyy", Locale.UK));
+        String closed = "closed from " + day + ", 14:00";
+        assertThat(page(next)).contains(at.lake.replace("log-", "Log Water ") + ": " + closed + ".");
+        String row = row(page("/season/" + season));
+        assertThat(row)
+                .contains(
+                        ">3\u00a0t<", ">1\u00a0t<", ">2\u00a0t<", ">1.5\u00a0t<", "75%", ">" + closed + "<", ">closed<")
+                .doesNotContain("over by", "used up", "∞");
+        assertThat(page("/season/" + season)).contains("closed early; ");
+        assertThat(allowed(page("/season/" + season))).isEqualTo(allowed(lede));
+        assertThat(page("/season/" + season + "/stocks/" + at.lake + "/FPE"))
+                .contains(
+                        "1.5\u00a0t are logged of the 2\u00a0t that could be logged until the stock was closed; it is "
+                                + closed + ".");
+    }
+
+    /** 13.345 t, 1 t of it set aside, the rest split 60 : 40. */
+    @Test
+    void whatIsDecidedIsShownToTheKilogram() throws Exception {
+        at = new LogFixture(jdbc, season, 13.345);
+        assertThat(row(page("/season/" + season))).contains(">13.345\u00a0t<", ">1\u00a0t<", ">12.345\u00a0t<");
+        assertThat(page("/season/" + season)).contains(">7.407\u00a0t<", ">4.938\u00a0t<");
+        String reply = mvc.perform(slip(LogFixture.key(), "345"))
+                .andReturn()
+                .getResponse()
+                .getRedirectedUrl();
+        assertThat(page(reply)).contains("12\u00a0t are left of 12.345\u00a0t");
+        assertThat(page("/season/" + season + "/stocks/" + at.lake + "/FPE"))
+                .contains("0.345\u00a0t are logged of 12.345\u00a0t; 12\u00a0t are left");
+    }
+
+    private String row(String page) {
+        int at = page.indexOf("/stocks/" + this.at.lake + "/FPE");
+        return page.substring(at, page.indexOf("</tr>", at));
+    }
+
+    private static String allowed(String page) {
+        var found = java.util.regex.Pattern.compile("are logged of the ([0-9.,]+)\u00a0t to be logged")
+                .matcher(page);
+        assertThat(found.find()).isTrue();
+        return found.group(1);
     }
 
     @Test

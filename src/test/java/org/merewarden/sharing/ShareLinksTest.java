@@ -127,6 +127,33 @@ class ShareLinksTest {
     }
 
     @Test
+    void aClosedStockIsCalledClosedAndNotUsedUp() throws Exception {
+        int season = limits.presentSeason();
+        new TestRegion(jdbc).closure(perch, season, OffsetDateTime.parse(season + "-06-05T14:00Z"));
+        assertThat(open(make()).getContentAsString())
+                .contains("The stock is closed from 5 Jun " + season + ", 14:00: nothing may be taken")
+                .contains("18\u00a0t of your landings are recorded up to")
+                .contains("All together 50\u00a0t could be removed this season until the stock was closed.")
+                .contains("Closed from 5 Jun " + season + ", 14:00 for the whole water.")
+                .doesNotContain(">0\u00a0t", " 0\u00a0t", "used up");
+    }
+
+    @Test
+    void whatIsDecidedIsShownToTheKilogram() throws Exception {
+        jdbc.sql("update catch_limit set amount = 52.346, set_aside_research_t = 2.346 where stock_id = ?")
+                .param(perch)
+                .update();
+        jdbc.sql(
+                        "update allocation set amount_kg = 25125 where limit_id in (select id from catch_limit where stock_id = ?)")
+                .param(perch)
+                .update();
+        assertThat(open(make()).getContentAsString())
+                .contains("18\u00a0t of your 25.125\u00a0t are recorded")
+                .contains("52.346\u00a0t may be removed this season, of which 2.346\u00a0t are set aside")
+                .contains("Limit for the whole water: 52.346\u00a0t.");
+    }
+
+    @Test
     void theStoreKnowsOnlyTheHashAndThePageShowsTheLinkOnce() throws Exception {
         String token = make();
         assertThat(jdbc.sql("select count(*) from share_link where token_hash = ?")

@@ -68,6 +68,37 @@ class FiguresTest {
     }
 
     @Test
+    void whatIsDecidedIsToldToTheKilogram() {
+        assertThat(Figures.decided(12.345)).isEqualTo("12.345\u00a0t");
+        assertThat(Figures.decided(1200.0, "net-nights")).isEqualTo("1,200\u00a0net-nights");
+        assertThat(Figures.decidedFigure(0.5)).isEqualTo("0.5");
+        assertThat(Figures.decided(null)).isEqualTo("—");
+        assertThat(Figures.decided(Double.NaN, "t")).isEqualTo("—");
+    }
+
+    @Test
+    void whatIsSetKeepsItsDecimals() {
+        assertThat(Figures.setPercent(0.075)).isEqualTo("7.5%");
+        assertThat(Figures.setPercent(0.1)).isEqualTo("10%");
+        assertThat(Figures.setPercent(0.0725)).isEqualTo("7.25%");
+        assertThat(Figures.setPercent(null)).isEqualTo("—");
+    }
+
+    @Test
+    void aChanceIsNeverRoundedToTheOtherSideOfItsBound() {
+        assertThat(Figures.percentBeside(0.104, 0.1)).isEqualTo("10.4%");
+        assertThat(Figures.percentBeside(0.1001, 0.1)).isEqualTo("10.1%");
+        assertThat(Figures.percentBeside(0.1, 0.1)).isEqualTo("10%");
+        assertThat(Figures.percentBeside(0.096, 0.1)).isEqualTo("10%");
+        assertThat(Figures.percentBeside(0.13, 0.1)).isEqualTo("13%");
+        assertThat(Figures.percentBeside(0.0749, 0.075)).isEqualTo("7%");
+        assertThat(Figures.percentBeside(0.0751, 0.075)).isEqualTo("8%");
+        assertThat(Figures.percentBeside(0.0755, 0.0758)).isEqualTo("7.55%");
+        assertThat(Figures.percentBeside(0.0726, 0.0725)).isEqualTo("7.3%");
+        assertThat(Figures.percentBeside(Double.NaN, 0.1)).isEqualTo("—");
+    }
+
+    @Test
     void intervals() {
         assertThat(Figures.interval(12.4, 8.1, 19.0)).isEqualTo("12.4 (8.1–19)");
         assertThat(Figures.interval(12.4, null, 19.0)).isEqualTo("12.4");

@@ -29,6 +29,19 @@ public final class LimitArithmetic {
     }
 
     /**
+     * A set-aside as the policy's share of the limit, rounded down to whole kilograms, so that the parts are never more
+     * than the whole.
+     *
+     * @param share in [0, 1]
+     * @param limitTonnes total removals, t, >= 0
+     * @return t
+     */
+    public static double setAside(double share, double limitTonnes) {
+        // a hair is added before rounding down, so that a tenth of 12.3 t is 1.230 t and not 1.229 t
+        return Math.floor(share * limitTonnes * 1000 + 1e-6) / 1000;
+    }
+
+    /**
      * Splits an amount by shares that may leave a part unallocated. Whole kilograms by the method of the largest
      * remainder (Hamilton), ties to the earlier share: the parts add up to the rounded-down total of the shares.
      *

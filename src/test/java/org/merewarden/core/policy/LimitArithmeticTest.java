@@ -16,6 +16,16 @@ class LimitArithmeticTest {
         assertThat(LimitArithmetic.toBeLogged(0, 0, 1)).isZero();
     }
 
+    /** By hand: 12.345 t · 0.1 = 1.2345 t, rounded down to 1.234 t. */
+    @Test
+    void aSetAsideIsItsShareRoundedDownToTheKilogram() {
+        assertThat(LimitArithmetic.setAside(0.1, 12.345)).isEqualTo(1.234);
+        assertThat(LimitArithmetic.setAside(0.1, 12.3)).isEqualTo(1.23);
+        assertThat(LimitArithmetic.setAside(0.29, 100)).isEqualTo(29);
+        assertThat(LimitArithmetic.setAside(0.075, 0)).isZero();
+        assertThat(LimitArithmetic.setAside(1, 7.5)).isEqualTo(7.5);
+    }
+
     @Test
     void impossiblePartsAreRejectedWithTheRule() {
         assertThatThrownBy(() -> LimitArithmetic.toBeLogged(1, 1.5, 1)).hasMessageContaining("set-asides <= limit");
