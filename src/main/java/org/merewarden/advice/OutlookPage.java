@@ -10,8 +10,6 @@ import org.jspecify.annotations.Nullable;
  * @param season the one that is advised, as in addresses
  * @param policyNumber of the version that was used; 0 where none was
  * @param interval probability of the intervals
- * @param own the reader's own catch as they typed it
- * @param halfGrowth per cent of K
  */
 record OutlookPage(
         int season,
@@ -30,9 +28,7 @@ record OutlookPage(
         List<Row> rows,
         List<Row> bySeason,
         List<Row> biomass,
-        @Nullable String stress,
-        String own,
-        String halfGrowth) {
+        @Nullable String stress) {
 
     /** @param amount what stands after the step; empty where the step is no amount */
     record Step(String text, String amount) {}

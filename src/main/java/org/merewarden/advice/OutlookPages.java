@@ -5,15 +5,12 @@ import java.util.List;
 import java.util.Locale;
 import java.util.Map;
 import java.util.Optional;
-import org.jspecify.annotations.Nullable;
 import org.merewarden.advice.OutlookDrawings.RiskCurve;
 import org.merewarden.advice.OutlookPage.Part;
 import org.merewarden.assessment.AssessmentView;
 import org.merewarden.assessment.Assessments;
-import org.merewarden.core.evidence.EffortRecord;
 import org.merewarden.core.outlook.Course;
 import org.merewarden.core.policy.LimitArithmetic;
-import org.merewarden.core.policy.LimitRule;
 import org.merewarden.core.policy.Policy;
 import org.merewarden.core.policy.Recommendation;
 import org.merewarden.waterbody.StockView;
@@ -30,6 +27,7 @@ class OutlookPages {
     private final AlternativeRows rows;
     private final OutlookDrawings drawings;
     private final StepWords words;
+    private final EffortWords effort;
     private final Texts texts;
 
     OutlookPages(
@@ -39,6 +37,7 @@ class OutlookPages {
             AlternativeRows rows,
             OutlookDrawings drawings,
             StepWords words,
+            EffortWords effort,
             Texts texts) {
         this.adviser = adviser;
         this.assessments = assessments;
@@ -46,6 +45,7 @@ class OutlookPages {
         this.rows = rows;
         this.drawings = drawings;
         this.words = words;
+        this.effort = effort;
         this.texts = texts;
     }
 
@@ -68,7 +68,7 @@ class OutlookPages {
                 words.of(w),
                 words.earlier(w),
                 parts(w, reportedFraction),
-                effort(w),
+                effort.of(w),
                 drawings.draw(w, curve, stock.title()),
                 drawings.rows(w, curve),
                 drawings.biomass(w, all, stock.title()),
@@ -76,9 +76,7 @@ class OutlookPages {
                 rows.of(w, all),
                 rows.bySeason(w, all),
                 rows.biomass(w, all),
-                stress(w, ask),
-                typed(ask.ownTonnes()),
-                typed(100 * ask.halfGrowth()));
+                stress(w, ask));
     }
 
     /** Where the rule has nothing to work on: what is missing, in a sentence. */
@@ -102,9 +100,7 @@ class OutlookPages {
                 List.of(),
                 List.of(),
                 List.of(),
-                null,
-                typed(ask.ownTonnes()),
-                typed(100 * ask.halfGrowth()));
+                null);
     }
 
     private static String why(AssessmentView latest, int season) {
@@ -112,12 +108,6 @@ class OutlookPages {
             return "past";
         }
         return Adviser.tooFar(latest, season) ? "old" : "no-draws";
-    }
-
-    private static String typed(@Nullable Double value) {
-        return value == null
-                ? ""
-                : java.math.BigDecimal.valueOf(value).stripTrailingZeros().toPlainString();
     }
 
     /** The recommendation and its risk, in a sentence or two. */
@@ -191,34 +181,6 @@ class OutlookPages {
 
     private Part part(String name, double tonnes) {
         return new Part(texts.of("outlook.part." + name), Figures.decided(tonnes));
-    }
-
-    /** For each series of effort whose catchability the assessment knows. */
-    private List<String> effort(AdviceWorking w) {
-        var parameters = w.outlook().posterior().parameters();
-        List<EffortRecord> effort = assessments.evidence(w.assessment().id()).effort();
-        List<String> sentences = new ArrayList<>();
-        for (String series :
-                effort.stream().map(EffortRecord::series).distinct().sorted().toList()) {
-            double[] q = parameters.getOrDefault(
-                    "catchability:" + series + " (effort)", parameters.get("catchability:" + series));
-            if (q != null) {
-                sentences.add(texts.of(
-                        "outlook.effort",
-                        series,
-                        Figures.withUnit(new LimitRule(w.policy()).effort(w.outlook(), q), unit(effort, series))));
-            }
-        }
-        return sentences;
-    }
-
-    private String unit(List<EffortRecord> effort, String series) {
-        return effort.stream()
-                .filter(e -> e.series().equals(series))
-                .map(EffortRecord::unit)
-                .filter(unit -> unit != null && !unit.isBlank())
-                .findFirst()
-                .orElseGet(() -> texts.of("outlook.effort.unit"));
     }
 
     private String stress(AdviceWorking w, WhatIf ask) {

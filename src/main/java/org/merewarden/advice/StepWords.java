@@ -120,7 +120,8 @@ class StepWords {
             return texts.of("outlook.step.steady.first", season);
         }
         if (before == 0) {
-            return texts.of("outlook.step.steady.closed", season);
+            return texts.of(
+                    before(w, Basis.CLOSED) ? "outlook.step.steady.closedEarly" : "outlook.step.steady.closed", season);
         }
         double cap = w.policy().steadinessCap();
         double change = r.after(Rule.STEADINESS) - r.after(Rule.RISK);
@@ -146,11 +147,12 @@ class StepWords {
         Recommendation r = w.recommendation();
         boolean lowered = r.after(Rule.RISK_AGAIN) < r.after(Rule.LAST_SEASON);
         String again = lowered ? " " + texts.of("outlook.step.again") : "";
+        String sure = before(w, Basis.LANDINGS) ? ".expected" : "";
         if (carried > 0) {
-            return texts.of("outlook.step.carried", Figures.tonnes(carried)) + again;
+            return texts.of("outlook.step.carried" + sure, Figures.tonnes(carried)) + again;
         }
         return back > 0
-                ? texts.of("outlook.step.back", Figures.tonnes(back)) + again
+                ? texts.of("outlook.step.back" + sure, Figures.tonnes(back)) + again
                 : texts.of("outlook.step.nothing");
     }
 
@@ -166,6 +168,9 @@ class StepWords {
         if (Double.isNaN(limit)) {
             return texts.of("outlook.earlier.other", season);
         }
+        if (before(w, Basis.CLOSED)) {
+            return texts.of("outlook.earlier.closed", season);
+        }
         return Double.isNaN(taken)
                 ? texts.of("outlook.earlier.unknown", season, Figures.decided(limit))
                 : texts.of(
@@ -173,5 +178,10 @@ class StepWords {
                         season,
                         Figures.decided(limit),
                         Figures.tonnes(taken));
+    }
+
+    /** Whether the season before is known in this way. */
+    private static boolean before(AdviceWorking w, Basis basis) {
+        return w.between().stream().anyMatch(b -> b.season() == w.season() - 1 && b.basis() == basis);
     }
 }

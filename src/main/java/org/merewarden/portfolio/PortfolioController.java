@@ -15,18 +15,22 @@ class PortfolioController {
     private final Portfolio portfolio;
     private final PortfolioViews views;
     private final PortfolioSheet sheet;
+    private final WaitingRows waiting;
 
-    PortfolioController(Portfolio portfolio, PortfolioViews views, PortfolioSheet sheet) {
+    PortfolioController(Portfolio portfolio, PortfolioViews views, PortfolioSheet sheet, WaitingRows waiting) {
         this.portfolio = portfolio;
         this.views = views;
         this.sheet = sheet;
+        this.waiting = waiting;
     }
 
     @GetMapping("/portfolio")
     String page(@ModelAttribute PortfolioQuery query, Model model) {
         int season = season(query);
         model.addAttribute("season", Integer.toString(season));
-        model.addAttribute("view", views.view(portfolio.entries(season), query));
+        List<Entry> entries = portfolio.entries(season);
+        model.addAttribute("view", views.view(entries, query));
+        model.addAttribute("waiting", waiting.of(entries));
         return "portfolio/portfolio";
     }
 

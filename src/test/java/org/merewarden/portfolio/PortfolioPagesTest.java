@@ -71,6 +71,32 @@ class PortfolioPagesTest {
     }
 
     @Test
+    void aProposalThatWaitsLeadsToItsDecision() throws Exception {
+        long stock = jdbc.sql("select s.id from stock s join water_body w on w.id = s.water_body_id where w.code = ?")
+                .param("pf-amber")
+                .query(Long.class)
+                .single();
+        jdbc.sql(
+                        "insert into catch_limit (stock_id, season_year, amount, unit, valid_from, valid_to, origin, created_at,"
+                                + " created_by) values (?, 2149, 7.125, 't', date '2149-01-01', date '2149-12-31', 'decided',"
+                                + " current_timestamp, 'test')")
+                .param(stock)
+                .update();
+        jdbc.sql(
+                        "insert into limit_decision (limit_id, act, decided_at, decided_by, effective_at, reason)"
+                                + " select max(id), 'PROPOSED', current_timestamp, 'test', current_timestamp, 'why' from catch_limit")
+                .update();
+        assertThat(page("/portfolio"))
+                .contains("7.125\u00a0t for season 2149")
+                .contains("href=\"/stocks/pf-amber/FPE/advice?season=2149#open\"");
+        jdbc.sql(
+                        "insert into limit_decision (limit_id, act, decided_at, decided_by, effective_at, reason)"
+                                + " select max(id), 'REFUSED', current_timestamp, 'test', current_timestamp, 'no' from catch_limit")
+                .update();
+        assertThat(page("/portfolio")).doesNotContain("for season 2149");
+    }
+
+    @Test
     void theTableSortsByItsHeadersLinksAndKeepsTheFilter() throws Exception {
         String up = page("/portfolio?q=portfoliomere&sort=water&dir=asc");
         assertThat(lakes(up)).startsWith("pf-amber", "pf-basalt", "pf-chalk");
