@@ -1,5 +1,6 @@
 package org.merewarden.advice;
 
+import java.time.LocalDate;
 import java.util.List;
 import java.util.Optional;
 import org.merewarden.advice.AdviceWorking.Basis;
@@ -159,8 +160,9 @@ class Adviser {
      * or is in its last quarter.
      */
     int season(long stockId) {
-        int current = seasons.current();
-        boolean late = seasons.today().isAfter(seasons.end(current).minusMonths(LAST_QUARTER_MONTHS));
+        LocalDate today = seasons.today();
+        int current = seasons.of(today);
+        boolean late = today.isAfter(seasons.end(current).minusMonths(LAST_QUARTER_MONTHS));
         return late || limits.inForce(stockId, current).isPresent() ? current + 1 : current;
     }
 }

@@ -16,7 +16,7 @@ public interface SeasonInProgress {
      * @param loggedTonnes so far, t, > 0
      * @param finalTonnes expected at the season's end, t, >= loggedTonnes; NaN where too few days have passed to tell a pace
      * @param cv of finalTonnes, >= 0
-     * @param over whether the season's last day has passed
+     * @param over whether the season's last day has come
      * @param recordedUpTo day of the last record
      */
     record Logged(double loggedTonnes, double finalTonnes, double cv, boolean over, LocalDate recordedUpTo) {

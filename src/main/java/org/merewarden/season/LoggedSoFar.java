@@ -8,7 +8,6 @@ import java.util.Map;
 import java.util.Optional;
 import org.jspecify.annotations.Nullable;
 import org.merewarden.records.SeasonInProgress;
-import org.merewarden.web.Seasons;
 import org.springframework.stereotype.Service;
 
 /**
@@ -30,12 +29,10 @@ class LoggedSoFar implements SeasonInProgress {
 
     private final Takings takings;
     private final Completeness completeness;
-    private final Seasons seasons;
 
-    LoggedSoFar(Takings takings, Completeness completeness, Seasons seasons) {
+    LoggedSoFar(Takings takings, Completeness completeness) {
         this.takings = takings;
         this.completeness = completeness;
-        this.seasons = seasons;
     }
 
     @Override
@@ -47,20 +44,21 @@ class LoggedSoFar implements SeasonInProgress {
     }
 
     private Logged logged(List<Takings.ByCooperative> taken, int season) {
-        LocalDate start = seasons.start(season);
-        long days = days(start, seasons.end(season));
         Completeness.Records records = completeness.of(season);
+        LocalDate start = records.start();
+        LocalDate end = start.plusYears(1).minusDays(1);
+        long days = days(start, end);
         double tonnes = 0;
         double extrapolated = 0;
         LocalDate last = start;
         for (Takings.ByCooperative each : taken) {
-            LocalDate end = end(each, records);
-            long passed = Math.min(days, Math.max(StraightLinePace.FEWEST_DAYS, days(start, end)));
+            LocalDate own = end(each, records);
+            long passed = Math.min(days, Math.max(StraightLinePace.FEWEST_DAYS, days(start, own)));
             tonnes += each.takenKg() / 1000;
             extrapolated += each.takenKg() / 1000 * days / passed;
-            last = end.isAfter(last) ? end : last;
+            last = own.isAfter(last) ? own : last;
         }
-        if (seasons.end(season).isBefore(seasons.today())) {
+        if (!records.asOf().isBefore(end)) {
             return new Logged(tonnes, tonnes, LATE_SLIPS, true, last);
         }
         long passed = Math.min(days, days(start, last));

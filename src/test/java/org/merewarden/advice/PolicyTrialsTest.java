@@ -265,10 +265,13 @@ class PolicyTrialsTest {
                         .orElseThrow()
                         .recommendation()
                         .limitTonnes());
-        assertThat(tried.here().limitTonnes())
-                .isPositive()
-                .isLessThan(tried.against().limitTonnes());
-        assertThat(tried.here().risk()).isBetween(0.0, 0.08);
+        assertThat(tried.here().limitTonnes()).isLessThan(tried.against().limitTonnes());
+        if (tried.here().limitTonnes() > 0) {
+            assertThat(tried.here().risk()).isBetween(0.0, 0.08);
+        } else {
+            // late in a year the next season is advised, and then even no catch may be too risky
+            assertThat(tried.here().risk()).isGreaterThan(0);
+        }
         assertThat(tried.here().decidedBy()).isEqualTo("RISK");
         assertThat(page()).contains("Asked for by pol-ines", "Unknown Trial Lake", "not advised");
         mvc.perform(get("/policy/" + version).with(BIOLOGIST))
