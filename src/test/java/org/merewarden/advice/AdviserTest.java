@@ -140,7 +140,7 @@ class AdviserTest {
     void aClosedSeasonEndsWithWhatWasTaken() {
         assessed();
         long limit = region.limit(stock, current, 0);
-        jdbc.sql("update catch_limit set purpose = 'closure', effective_at = ? where id = ?")
+        jdbc.sql("update catch_limit set purpose = 'closure', origin = 'decided', effective_at = ? where id = ?")
                 .params(OffsetDateTime.now(), limit)
                 .update();
         landed(LocalDate.of(current, 3, 31), 4000);
@@ -166,7 +166,7 @@ class AdviserTest {
                 .params(before, OffsetDateTime.now(), OffsetDateTime.now())
                 .update();
         long closure = region.limit(stock, current, 0);
-        jdbc.sql("update catch_limit set purpose = 'closure', effective_at = ? where id = ?")
+        jdbc.sql("update catch_limit set purpose = 'closure', origin = 'decided', effective_at = ? where id = ?")
                 .params(OffsetDateTime.now(), closure)
                 .update();
         landed(LocalDate.of(current, 1, 10), 8000);
