@@ -95,7 +95,7 @@ class DecisionsView {
                 files.stream().filter(LimitFile::draft).map(this::draft).toList(),
                 standing.stream().filter(Standing::revisable).toList(),
                 standing,
-                past(files, inForce),
+                past(files, inForce, current),
                 Who.has("APPROVER") && decisions.ownProposals());
     }
 
@@ -143,17 +143,21 @@ class DecisionsView {
                         file.first().when()));
     }
 
-    private List<Past> past(List<LimitFile> files, Set<Long> inForce) {
+    private List<Past> past(List<LimitFile> files, Set<Long> inForce, int current) {
         Map<Long, NewLimit> byId = new HashMap<>();
         files.forEach(f -> byId.put(f.id(), f.limit()));
         return files.stream()
                 .flatMap(f -> f.newestFirst().stream())
                 .sorted(Comparator.comparing(LimitHistory.Decision::at).reversed())
-                .map(act -> past(act, Objects.requireNonNull(byId.get(act.limitId())), inForce))
+                .map(act -> {
+                    NewLimit limit = Objects.requireNonNull(byId.get(act.limitId()));
+                    return past(act, limit, limit.season() == current && inForce.contains(act.limitId()));
+                })
                 .toList();
     }
 
-    private Past past(LimitHistory.Decision act, NewLimit limit, Set<Long> inForce) {
+    /** @param now whether the limit is in force in the current season */
+    private Past past(LimitHistory.Decision act, NewLimit limit, boolean now) {
         return new Past(
                 Long.toString(act.limitId()),
                 texts.of("advice.act." + act.act()),
@@ -162,7 +166,7 @@ class DecisionsView {
                 act.decidedBy(),
                 words.reason(act),
                 act.act().equals(LimitWriter.ISSUED),
-                act.act().equals(LimitWriter.ISSUED) && inForce.contains(act.limitId()),
+                now && act.act().equals(LimitWriter.ISSUED),
                 act.laterEffect() ? texts.of("advice.past.from", Figures.dateTime(act.effectiveAt())) : null);
     }
 }

@@ -26,7 +26,7 @@ class MarginalTest {
                 new double[] {25, 0.1, 0.1, 0.5});
     }
 
-    /** checks.md of the design: within 0.05 of a fine-grid filter, exact up to the grid. */
+    /** Within 0.05 of a fine-grid filter, exact up to the grid. */
     @ParameterizedTest
     @MethodSource("parameters")
     void theLaplaceSumIsTheIntegralOverTheStates(double[] p) {
