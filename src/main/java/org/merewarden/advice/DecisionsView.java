@@ -151,12 +151,12 @@ class DecisionsView {
                 .sorted(Comparator.comparing(LimitHistory.Decision::at).reversed())
                 .map(act -> {
                     NewLimit limit = Objects.requireNonNull(byId.get(act.limitId()));
-                    return past(act, limit, limit.season() == current && inForce.contains(act.limitId()));
+                    return past(act, limit, limit.season() >= current && inForce.contains(act.limitId()));
                 })
                 .toList();
     }
 
-    /** @param now whether the limit is in force in the current season */
+    /** @param now whether the limit is in force for the current season or a coming one */
     private Past past(LimitHistory.Decision act, NewLimit limit, boolean now) {
         return new Past(
                 Long.toString(act.limitId()),
