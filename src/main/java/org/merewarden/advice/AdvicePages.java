@@ -96,15 +96,7 @@ class AdvicePages {
         model.addAttribute("inForce", advice.lede(stock));
         int looked =
                 recommendations.advisable(sources.season()) ? sources.season() : recommendations.season(stock.id());
-        model.addAttribute(
-                "outlook",
-                outlook.page(
-                        stock,
-                        looked,
-                        ask,
-                        sources.last()
-                                .map(file -> file.limit().reportedFraction())
-                                .orElse(1.0)));
+        model.addAttribute("outlook", outlook.page(stock, looked, ask, prefill.season(sources)));
         model.addAttribute("deciding", decisions.page(stock.id(), files));
         model.addAttribute("proposing", proposals.page(stock.id(), form, sources));
         model.addAttribute("form", form);

@@ -1,14 +1,12 @@
 package org.merewarden.advice;
 
 import java.util.Optional;
-import org.jspecify.annotations.Nullable;
 import org.merewarden.assessment.AssessmentView;
 import org.merewarden.assessment.Assessments;
 import org.merewarden.core.policy.LimitArithmetic;
 import org.merewarden.waterbody.StockView;
 import org.merewarden.web.Figures;
-import org.springframework.context.MessageSource;
-import org.springframework.context.i18n.LocaleContextHolder;
+import org.merewarden.web.Texts;
 import org.springframework.stereotype.Component;
 
 /** What is in force, in finished strings. */
@@ -17,13 +15,13 @@ class AdviceView {
     private final Assessments assessments;
     private final Limits limits;
     private final Standings standings;
-    private final MessageSource messages;
+    private final Texts texts;
 
-    AdviceView(Assessments assessments, Limits limits, Standings standings, MessageSource messages) {
+    AdviceView(Assessments assessments, Limits limits, Standings standings, Texts texts) {
         this.assessments = assessments;
         this.limits = limits;
         this.standings = standings;
-        this.messages = messages;
+        this.texts = texts;
     }
 
     /** What is allowed now, and what that would do. */
@@ -34,25 +32,25 @@ class AdviceView {
 
     private String lede(StockView stock, Optional<AssessmentView> assessment, Optional<LimitView> limit, int season) {
         String allowed =
-                limit.map(l -> inForce(l, season)).orElseGet(() -> text("advice.lede.noLimit", season(season)));
+                limit.map(l -> inForce(l, season)).orElseGet(() -> texts.of("advice.lede.noLimit", season(season)));
         Optional<StandingView> standing = standings.of(stock.id());
         if (assessment.isEmpty()) {
-            return allowed + " " + text("advice.lede.unassessed");
+            return allowed + " " + texts.of("advice.lede.unassessed");
         }
         return standing.map(s -> allowed + " "
-                        + text(
+                        + texts.of(
                                 "advice.lede.standing",
-                                text("standing." + s.standing().toLowerCase(java.util.Locale.ROOT)),
-                                Figures.tonnes(s.removalsTonnes()),
-                                text("advice.basis." + s.removalsBasis().replace(' ', '-')),
+                                texts.of("standing." + s.standing().toLowerCase(java.util.Locale.ROOT)),
+                                s.limit() ? Figures.decided(s.removalsTonnes()) : Figures.tonnes(s.removalsTonnes()),
+                                texts.of("advice.basis." + s.removalsBasis().replace(' ', '-')),
                                 Figures.chances(s.collapseProbability())))
-                .orElse(allowed + " " + text("advice.lede.noDraws"));
+                .orElse(allowed + " " + texts.of("advice.lede.noDraws"));
     }
 
     private String inForce(LimitView limit, int season) {
         return limit.closure()
-                ? text("advice.lede.closed", season(season), Figures.dateTime(limit.effectiveAt()))
-                : text("advice.lede.limit", season(season), amount(limit));
+                ? texts.of("advice.lede.closed", season(season), Figures.dateTime(limit.effectiveAt()))
+                : texts.of("advice.lede.limit", season(season), amount(limit));
     }
 
     static String toBeLogged(NewLimit limit) {
@@ -68,9 +66,5 @@ class AdviceView {
 
     static String season(int season) {
         return Integer.toString(season);
-    }
-
-    private String text(String key, @Nullable Object... values) {
-        return messages.getMessage(key, values, LocaleContextHolder.getLocale());
     }
 }

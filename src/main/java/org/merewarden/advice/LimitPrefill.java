@@ -20,15 +20,14 @@ import org.springframework.stereotype.Component;
 @Component
 class LimitPrefill {
 
-    private final Recommendations recommendations;
+    private final PolicyStore policies;
     private final LimitStore limits;
     private final Seasons seasons;
     private final OfficeSettings settings;
     private final Clock clock;
 
-    LimitPrefill(
-            Recommendations recommendations, LimitStore limits, Seasons seasons, OfficeSettings settings, Clock clock) {
-        this.recommendations = recommendations;
+    LimitPrefill(PolicyStore policies, LimitStore limits, Seasons seasons, OfficeSettings settings, Clock clock) {
+        this.policies = policies;
         this.limits = limits;
         this.seasons = seasons;
         this.settings = settings;
@@ -65,7 +64,8 @@ class LimitPrefill {
                 .filter(file -> !effective(file).isAfter(now))
                 .max(Comparator.comparing((LimitFile file) -> file.limit().season())
                         .thenComparing(file -> effective(file)));
-        Optional<Policy.SetAsides> shares = advice.map(a -> recommendations.setAsides(a.policyNumber()))
+        Optional<Policy.SetAsides> shares = advice.map(a ->
+                        Policies.find(policies.all(), a.policyNumber()).policy().setAsides())
                 .filter(s -> s.subsistence() + s.angling() + s.research() + s.other() > 0);
         return new Sources(season, advice, last, shares);
     }

@@ -73,7 +73,7 @@ class Notices {
                 limit.terms().closure() ? Terms.CLOSURE : limit.kind().replace(' ', '-'),
                 amount(limit),
                 setAsides(limit),
-                Figures.percent(limit.reportedFraction()),
+                Figures.setPercent(limit.reportedFraction()),
                 AdviceView.toBeLogged(limit),
                 Figures.date(closed.map(ClosureWords.Said::day).orElse(limit.validFrom())) + " – "
                         + Figures.date(limit.validTo()),

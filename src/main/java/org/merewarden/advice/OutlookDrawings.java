@@ -1,7 +1,6 @@
 package org.merewarden.advice;
 
 import java.util.ArrayList;
-import java.util.Arrays;
 import java.util.Collections;
 import java.util.List;
 import java.util.stream.DoubleStream;
@@ -108,8 +107,11 @@ class OutlookDrawings {
         Alternative banded = drawn.get(working.recommendation().limitTonnes() > 0 ? 1 : 0);
         Policy policy = working.policy();
         double tail = (1 - policy.intervalProbability()) / 2;
-        double limit =
-                median(IntStream.range(0, working.outlook().draws()).mapToDouble(working.outlook()::limitBiomass));
+        double limit = Quantiles.of(
+                IntStream.range(0, working.outlook().draws())
+                        .mapToDouble(working.outlook()::limitBiomass)
+                        .toArray(),
+                0.5);
         List<Point> outline = new ArrayList<>(path(working, banded, 1 - tail));
         List<Point> low = path(working, banded, tail);
         Collections.reverse(low);
@@ -150,11 +152,5 @@ class OutlookDrawings {
         return IntStream.rangeClosed(0, a.projection().seasons())
                 .mapToObj(t -> new Point(working.season() + t, a.projection().biomassQuantiles(t, p)[0]))
                 .collect(java.util.stream.Collectors.toCollection(ArrayList::new));
-    }
-
-    private static double median(DoubleStream values) {
-        double[] sorted = values.toArray();
-        Arrays.sort(sorted);
-        return Quantiles.ofSorted(sorted, 0.5);
     }
 }

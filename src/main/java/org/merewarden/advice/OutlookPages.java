@@ -3,8 +3,8 @@ package org.merewarden.advice;
 import java.util.ArrayList;
 import java.util.List;
 import java.util.Locale;
-import java.util.Map;
 import java.util.Optional;
+import org.jspecify.annotations.Nullable;
 import org.merewarden.advice.OutlookDrawings.RiskCurve;
 import org.merewarden.advice.OutlookPage.Part;
 import org.merewarden.assessment.AssessmentView;
@@ -49,14 +49,14 @@ class OutlookPages {
         this.texts = texts;
     }
 
-    /** @param reportedFraction of the commercial removals that the logbook will show, in (0, 1] */
-    OutlookPage page(StockView stock, int season, WhatIf ask, double reportedFraction) {
+    /** @param usual the form of the next limit as it is filled in, whose set-asides and reported fraction are shown */
+    OutlookPage page(StockView stock, int season, WhatIf ask, LimitForm usual) {
         return adviser.work(stock.id(), season)
-                .map(working -> worked(stock, working, ask, reportedFraction))
+                .map(working -> worked(stock, working, ask, usual))
                 .orElseGet(() -> nothing(stock, season, ask));
     }
 
-    private OutlookPage worked(StockView stock, AdviceWorking w, WhatIf ask, double reportedFraction) {
+    private OutlookPage worked(StockView stock, AdviceWorking w, WhatIf ask, LimitForm usual) {
         List<Alternative> all = alternatives.of(w, ask);
         RiskCurve curve = drawings.curve(w);
         return new OutlookPage(
@@ -67,7 +67,7 @@ class OutlookPages {
                 cautions(w.assessment()),
                 words.of(w),
                 words.earlier(w),
-                parts(w, reportedFraction),
+                parts(w, usual),
                 effort.of(w),
                 drawings.draw(w, curve, stock.title()),
                 drawings.rows(w, curve),
@@ -152,31 +152,27 @@ class OutlookPages {
         return cautions;
     }
 
-    /** From the limit to the logbook, as it would stand on the notice. */
-    private List<Part> parts(AdviceWorking w, double reportedFraction) {
+    /** From the limit to the logbook, as the form is filled in and the notice will say it. */
+    private List<Part> parts(AdviceWorking w, LimitForm usual) {
         double limit = w.recommendation().limitTonnes();
-        Policy.SetAsides set = w.policy().setAsides();
+        // a sum of kilograms in tonnes may pass the limit by a rounding error
+        double setAsides = Math.min(limit, usual.setAsides());
+        double reported = usual.reportedFraction == null ? 1 : usual.reportedFraction;
         List<Part> parts = new ArrayList<>();
         parts.add(part("limit", limit));
-        double aside = 0;
-        for (var named : List.of(
-                Map.entry("subsistence", set.subsistence()),
-                Map.entry("angling", set.angling()),
-                Map.entry("research", set.research()),
-                Map.entry("other", set.other()))) {
-            double tonnes = LimitArithmetic.setAside(named.getValue(), limit);
-            aside += tonnes;
-            if (named.getValue() > 0) {
-                parts.add(part(named.getKey(), tonnes));
-            }
-        }
-        // a sum of kilograms in tonnes may pass the limit by a rounding error
-        double setAsides = Math.min(limit, aside);
+        setAside("subsistence", usual.subsistence).ifPresent(parts::add);
+        setAside("angling", usual.angling).ifPresent(parts::add);
+        setAside("research", usual.research).ifPresent(parts::add);
+        setAside("other", usual.other).ifPresent(parts::add);
         parts.add(part("commercial", limit - setAsides));
         parts.add(new Part(
-                texts.of("outlook.part.logged", Figures.setPercent(reportedFraction)),
-                Figures.decided(LimitArithmetic.toBeLogged(limit, setAsides, reportedFraction))));
+                texts.of("outlook.part.logged", Figures.setPercent(reported)),
+                Figures.decided(LimitArithmetic.toBeLogged(limit, setAsides, reported))));
         return parts;
+    }
+
+    private Optional<Part> setAside(String name, @Nullable Double tonnes) {
+        return tonnes == null || tonnes == 0 ? Optional.empty() : Optional.of(part(name, tonnes));
     }
 
     private Part part(String name, double tonnes) {

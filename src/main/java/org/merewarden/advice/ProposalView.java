@@ -59,7 +59,7 @@ class ProposalView {
                                 texts.of(
                                         "advice.form.hand.of",
                                         r.cooperativeName(),
-                                        Figures.percent(r.sharePercent() / 100))))
+                                        Figures.setPercent(r.sharePercent() / 100))))
                         .toList());
     }
 

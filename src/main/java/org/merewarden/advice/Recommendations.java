@@ -9,7 +9,6 @@ import java.util.Objects;
 import java.util.Optional;
 import java.util.function.Function;
 import java.util.stream.Collectors;
-import org.merewarden.core.policy.Policy;
 import org.merewarden.web.Seasons;
 import org.merewarden.web.Who;
 import org.springframework.jdbc.core.simple.JdbcClient;
@@ -86,17 +85,6 @@ class Recommendations {
 
     private static Kept kept(ResultSet row, int n) throws SQLException {
         return new Kept(row.getLong(1), row.getInt(2), row.getDouble(3), row.getBoolean(4));
-    }
-
-    /** The parts of a limit that a version of the rule sets aside. */
-    Policy.SetAsides setAsides(int policyNumber) {
-        return jdbc.sql("""
-                        select set_aside_subsistence, set_aside_angling, set_aside_research, set_aside_other
-                        from policy_version where number = ?""")
-                .param(policyNumber)
-                .query((row, n) ->
-                        new Policy.SetAsides(row.getDouble(1), row.getDouble(2), row.getDouble(3), row.getDouble(4)))
-                .single();
     }
 
     static boolean differs(double amount, double recommended) {

@@ -29,4 +29,10 @@ public record StandingView(
         double marginNegativeProbability,
         @Nullable Double tippingBiomassTonnes,
         @Nullable Double returnTimeYears,
-        Instant computedAt) {}
+        Instant computedAt) {
+
+    /** Whether the removals are the limit in force, a decided amount, and no estimate. */
+    boolean limit() {
+        return removalsBasis.equals("limit");
+    }
+}

@@ -236,6 +236,28 @@ class AdviserTest {
         }
     }
 
+    /** The last limit kept 2 t for anglers and expected 80 % to be reported; the policy sets nothing aside. */
+    @Test
+    void theWayToTheLogbookIsTheFormsOwn() throws Exception {
+        assessed();
+        long limit = region.limit(stock, current, 16);
+        jdbc.sql("update catch_limit set reported_fraction = 0.8, set_aside_angling_t = 2 where id = ?")
+                .param(limit)
+                .update();
+        double recommended = adviser.advise(stock, current + 1).orElseThrow().limitTonnes();
+        assertThat(recommended).isGreaterThan(2);
+        assertThat(page(""))
+                .containsSubsequence(
+                        "Limit (total removals)",
+                        Figures.decided(recommended),
+                        "kept for angling",
+                        Figures.decided(2.0),
+                        "left for commercial removals",
+                        Figures.decided(recommended - 2),
+                        "80% are expected to be reported",
+                        Figures.decided(0.8 * (recommended - 2)));
+    }
+
     @Test
     void aReadersOwnCatchStandsBesideTheOthersAndInTheAddress() throws Exception {
         assessed();
